@@ -1,0 +1,91 @@
+import type { FieldReading, PlanOutcome, Quality } from "../../shared-types/plan";
+import type { Setup } from "../../shared-types/setup";
+import type { WorkerAnswer, WorkerRequest } from "../../shared-types/worker-messages";
+
+/** What the window knows of the field worker. */
+export interface FieldClient {
+  /** @returns the plan's outcome, or null when a newer request overtook this one. Rejects on a fault of ours. */
+  readonly plan: (setup: Setup, quality: Quality, onProgress?: (fraction: number) => void) => Promise<PlanOutcome | null>;
+  /** @returns readings at places (mm) from the newest field planned for this geometry, or null when there is none. */
+  readonly sample: (setup: Setup, placesMm: readonly (readonly [number, number])[]) => Promise<readonly FieldReading[] | null>;
+  readonly close: () => void;
+}
+
+interface Waiting {
+  readonly request: WorkerRequest;
+  readonly settle: (answer: WorkerAnswer) => void;
+  readonly refuse: (reason: Error) => void;
+  readonly onProgress: ((fraction: number) => void) | undefined;
+  repeated: boolean;
+}
+
+/**
+ * Starts a field worker and speaks with it. A worker that dies or faults is started again and asked once more;
+ * a second fault of the same request rejects its promise.
+ * @param startWorker makes a fresh worker.
+ */
+export function createFieldClient(startWorker: () => Worker): FieldClient {
+  const waiting = new Map<number, Waiting>();
+  let nextId = 1;
+  let worker = open();
+
+  function open(): Worker {
+    const fresh = startWorker();
+    fresh.onmessage = (event: MessageEvent<WorkerAnswer>) => take(event.data);
+    fresh.onerror = (event) => {
+      event.preventDefault();
+      restart(event.message || "the field worker stopped");
+    };
+    return fresh;
+  }
+
+  function take(answer: WorkerAnswer): void {
+    const entry = waiting.get(answer.requestId);
+    if (entry === undefined) return;
+    if (answer.kind === "progress") {
+      entry.onProgress?.(answer.fraction);
+    } else if (answer.kind === "fault") {
+      restart(answer.message);
+    } else {
+      waiting.delete(answer.requestId);
+      entry.settle(answer);
+    }
+  }
+
+  function restart(reason: string): void {
+    worker.terminate();
+    worker = open();
+    for (const [id, entry] of waiting) {
+      if (entry.repeated) {
+        waiting.delete(id);
+        entry.refuse(new Error(reason));
+      } else {
+        entry.repeated = true;
+        worker.postMessage(entry.request);
+      }
+    }
+  }
+
+  function ask(request: WorkerRequest, onProgress?: (fraction: number) => void): Promise<WorkerAnswer> {
+    return new Promise((settle, refuse) => {
+      waiting.set(request.requestId, { request, settle, refuse, onProgress, repeated: false });
+      worker.postMessage(request);
+    });
+  }
+
+  return {
+    plan: async (setup, quality, onProgress) => {
+      const answer = await ask({ kind: "plan", requestId: nextId++, setup, quality }, onProgress);
+      return answer.kind === "planned" ? answer.outcome : null;
+    },
+    sample: async (setup, placesMm) => {
+      const answer = await ask({ kind: "sample", requestId: nextId++, setup, placesMm });
+      return answer.kind === "sampled" ? answer.readings : null;
+    },
+    close: () => {
+      worker.terminate();
+      for (const entry of waiting.values()) entry.refuse(new Error("the field worker was closed"));
+      waiting.clear();
+    },
+  };
+}

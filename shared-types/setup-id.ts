@@ -1,0 +1,29 @@
+import { sha256 } from "@noble/hashes/sha2.js";
+import { utf8ToBytes } from "@noble/hashes/utils.js";
+import type { Setup } from "./setup";
+
+/** Digits without I, L, O and U, which a hand confuses on paper (Crockford's base 32, a published alphabet). */
+const DIGITS = "0123456789ABCDEFGHJKMNPQRSTVWXYZ";
+
+function canonical(value: unknown): string {
+  if (Array.isArray(value)) return `[${value.map(canonical).join(",")}]`;
+  if (typeof value === "object" && value !== null) {
+    const entries = Object.entries(value).filter(([, item]) => item !== undefined);
+    entries.sort(([a], [b]) => (a < b ? -1 : 1));
+    return `{${entries.map(([key, item]) => `${JSON.stringify(key)}:${canonical(item)}`).join(",")}}`;
+  }
+  return JSON.stringify(value);
+}
+
+/**
+ * A short name for exactly this content: the first 40 bits of SHA-256 over the setup with its keys sorted.
+ * @returns eight digits with a dash, such as `K7Q2-9F3A`; equal for equal setups whatever the order of their keys.
+ */
+export function setupId(setup: Setup): string {
+  const hash = sha256(utf8ToBytes(canonical(setup)));
+  let bits = 0n;
+  for (const byte of hash.subarray(0, 5)) bits = (bits << 8n) | BigInt(byte);
+  let text = "";
+  for (let shift = 35n; shift >= 0n; shift -= 5n) text += DIGITS[Number((bits >> shift) & 31n)];
+  return `${text.slice(0, 4)}-${text.slice(4)}`;
+}

@@ -1,0 +1,174 @@
+import { z } from "zod";
+import { polygonFault } from "./polygon-fault";
+
+/**
+ * The setup file, version 1: everything that is known about a tray before water is poured.
+ * Lengths in mm, angles in degrees counter-clockwise, potentials in V, conductivity in µS/cm referred to 25 °C.
+ * Origin: the lower-left inner corner of the tray (of a round tray: of its bounding square), y away from the reader.
+ */
+
+const lengthMm = (low: number, high: number) => z.number().min(low).max(high);
+const coordinateMm = z.number().min(-10_000).max(10_000);
+const pairMm = z.tuple([coordinateMm, coordinateMm]);
+const identifier = z.string().min(1).max(40);
+/** A word from an open list: materials, salts and sources that we do not know are kept, and treated with caution. */
+const openWord = z.string().min(1).max(60);
+
+const barSchema = z.strictObject({ kind: z.literal("bar"), lengthMm: lengthMm(0.1, 4000), widthMm: lengthMm(0.1, 4000) });
+const discSchema = z.strictObject({ kind: z.literal("disc"), diameterMm: lengthMm(0.1, 4000) });
+const ringSchema = z.strictObject({ kind: z.literal("ring"), outerMm: lengthMm(0.2, 4000), innerMm: lengthMm(0.1, 4000) });
+const arcSchema = z.strictObject({
+  kind: z.literal("arc"),
+  outerMm: lengthMm(0.2, 4000),
+  innerMm: lengthMm(0.1, 4000),
+  sweepDeg: z.number().min(1).max(359),
+});
+const frameSchema = z.strictObject({
+  kind: z.literal("frame"),
+  lengthMm: lengthMm(0.3, 4000),
+  widthMm: lengthMm(0.3, 4000),
+  wallMm: lengthMm(0.1, 2000),
+});
+const polygonSchema = z.strictObject({ kind: z.literal("polygon"), pointsMm: z.array(pairMm).min(3).max(500) });
+
+const shapeSchema = z
+  .discriminatedUnion("kind", [barSchema, discSchema, ringSchema, arcSchema, frameSchema, polygonSchema])
+  .superRefine((shape, context) => {
+    if ((shape.kind === "ring" || shape.kind === "arc") && shape.innerMm >= shape.outerMm) {
+      context.addIssue({
+        code: "custom",
+        path: ["innerMm"],
+        message: `is ${shape.innerMm}, allowed: less than outerMm (${shape.outerMm})`,
+      });
+    }
+    if (shape.kind === "frame" && 2 * shape.wallMm >= Math.min(shape.lengthMm, shape.widthMm)) {
+      context.addIssue({
+        code: "custom",
+        path: ["wallMm"],
+        message: `is ${shape.wallMm}, allowed: less than half of the shorter side (${Math.min(shape.lengthMm, shape.widthMm) / 2})`,
+      });
+    }
+    if (shape.kind === "polygon") {
+      const fault = polygonFault(shape.pointsMm);
+      if (fault !== null) context.addIssue({ code: "custom", path: ["pointsMm"], message: fault });
+    }
+  });
+
+const placement = { id: identifier, xMm: coordinateMm, yMm: coordinateMm, turnDeg: z.number().min(-3600).max(3600).default(0) };
+const partCommon = {
+  ...placement,
+  name: z.string().max(80).default(""),
+  heightMm: lengthMm(0.1, 500).default(24),
+  material: openWord.default("brass"),
+  shape: shapeSchema,
+};
+const partSchema = z.discriminatedUnion("role", [
+  z.strictObject({ ...partCommon, role: z.literal("electrode"), tap: z.number().min(0).max(1) }),
+  z.strictObject({ ...partCommon, role: z.literal("floating") }),
+  z.strictObject({ ...partCommon, role: z.literal("insulator") }),
+]);
+const slabSchema = z.strictObject({ ...placement, thicknessMm: lengthMm(0.01, 200), shape: shapeSchema });
+
+const trayCommon = {
+  wallHeightMm: lengthMm(1, 500).default(40),
+  baseMm: lengthMm(0, 100).default(3),
+  baseMaterial: openWord.default("acrylic"),
+};
+const traySchema = z.discriminatedUnion("shape", [
+  z.strictObject({ shape: z.literal("rectangle"), lengthMm: lengthMm(20, 2000), widthMm: lengthMm(20, 2000), ...trayCommon }),
+  z.strictObject({ shape: z.literal("circle"), diameterMm: lengthMm(20, 2000), ...trayCommon }),
+]);
+
+const waterSchema = z.strictObject({
+  depthMm: lengthMm(0.5, 200),
+  tiltXDeg: z.number().min(-45).max(45).default(0),
+  tiltYDeg: z.number().min(-45).max(45).default(0),
+  conductivityUsPerCm: z.number().min(0.01).max(300_000),
+  temperatureC: z.number().min(0).max(95).default(25),
+  salt: openWord.default("none"),
+  slabs: z.array(slabSchema).max(64).default([]),
+});
+const supplySchema = z.strictObject({
+  waveform: z.enum(["ac", "dc"]),
+  frequencyHz: z.number().min(0).max(1_000_000).default(50),
+  volts: z.number().min(0.001).max(1000),
+  currentLimitA: z.number().min(0.0001).max(1000).default(1),
+  source: openWord.default("safety-isolated"),
+});
+const meterSchema = z.strictObject({
+  inputMegohm: z.number().min(0.0001).max(1_000_000).default(10),
+  counts: z.number().int().min(100).max(100_000_000).default(2000),
+  accuracyPercent: z.number().min(0).max(100).default(1),
+  accuracyDigits: z.number().min(0).max(1000).default(3),
+});
+const probingSchema = z.strictObject({
+  levels: z.number().int().min(1).max(99).default(7),
+  pointsPerLevel: z.number().int().min(1).max(200).default(7),
+  probeTipMm: lengthMm(0.01, 50).default(1),
+  wallClearanceMm: lengthMm(0, 500).default(5),
+  partClearanceMm: lengthMm(0, 500).default(5),
+  placementMm: lengthMm(0, 50).default(0.5),
+});
+const sessionSchema = z.strictObject({
+  minutes: z.number().min(0.1).max(10_000).default(40),
+  trays: z.number().int().min(1).max(1000).default(1),
+});
+
+export const setupSchema = z
+  .strictObject({
+    format: z.literal("fieldtray.setup"),
+    version: z.literal(1),
+    title: z.string().max(200).default(""),
+    notes: z.string().max(20_000).default(""),
+    tray: traySchema,
+    water: waterSchema,
+    supply: supplySchema,
+    meter: meterSchema.prefault({}),
+    parts: z.array(partSchema).max(64),
+    probing: probingSchema.prefault({}),
+    session: sessionSchema.prefault({}),
+  })
+  .superRefine((setup, context) => {
+    const seen = new Set<string>();
+    const things = [
+      ...setup.parts.map((part, index) => ({ id: part.id, path: ["parts", index, "id"] })),
+      ...setup.water.slabs.map((slab, index) => ({ id: slab.id, path: ["water", "slabs", index, "id"] })),
+    ];
+    for (const { id, path } of things) {
+      if (seen.has(id)) context.addIssue({ code: "custom", path, message: `is "${id}", allowed: an id that no other part or slab has` });
+      seen.add(id);
+    }
+    if (setup.supply.waveform === "ac" && setup.supply.frequencyHz <= 0) {
+      context.addIssue({ code: "custom", path: ["supply", "frequencyHz"], message: "is 0, allowed: above 0 with waveform ac" });
+    }
+  });
+
+type DeepReadonly<T> = T extends readonly (infer Item)[]
+  ? readonly DeepReadonly<Item>[]
+  : T extends object
+    ? { readonly [Key in keyof T]: DeepReadonly<T[Key]> }
+    : T;
+
+/** A whole, validated setup; immutable. Every edit makes a new one. */
+export type Setup = DeepReadonly<z.output<typeof setupSchema>>;
+export type Tray = Setup["tray"];
+export type Water = Setup["water"];
+export type Supply = Setup["supply"];
+export type Meter = Setup["meter"];
+export type Part = Setup["parts"][number];
+export type PartRole = Part["role"];
+export type Electrode = Extract<Part, { role: "electrode" }>;
+export type Slab = Water["slabs"][number];
+export type Shape = Part["shape"];
+export type ShapeKind = Shape["kind"];
+export type Probing = Setup["probing"];
+export type Session = Setup["session"];
+
+/** A shape and where it lies: what parts and slabs have in common. */
+export interface PlacedShape {
+  readonly id: string;
+  readonly xMm: number;
+  readonly yMm: number;
+  readonly turnDeg: number;
+  readonly shape: Shape;
+}
