@@ -143,11 +143,7 @@ export const setupSchema = z
     }
   });
 
-type DeepReadonly<T> = T extends readonly (infer Item)[]
-  ? readonly DeepReadonly<Item>[]
-  : T extends object
-    ? { readonly [Key in keyof T]: DeepReadonly<T[Key]> }
-    : T;
+type DeepReadonly<T> = T extends object ? { readonly [Key in keyof T]: DeepReadonly<T[Key]> } : T;
 
 /** A whole, validated setup; immutable. Every edit makes a new one. */
 export type Setup = DeepReadonly<z.output<typeof setupSchema>>;
