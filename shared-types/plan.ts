@@ -1,3 +1,4 @@
+import type { BenchNumbers } from "./bench";
 import type { PartRole } from "./setup";
 
 /** How carefully a field is solved: while dragging, on release and for paper, and for checking the program itself. */
@@ -146,6 +147,7 @@ export interface Plan {
   readonly equipotentials: readonly Equipotential[];
   readonly fieldLines: readonly FieldLine[];
   readonly probing: ProbePlan;
+  readonly bench: BenchNumbers;
   readonly findings: readonly Finding[];
 }
 

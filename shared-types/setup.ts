@@ -86,6 +86,8 @@ const waterSchema = z.strictObject({
   conductivityUsPerCm: z.number().min(0.01).max(300_000),
   temperatureC: z.number().min(0).max(95).default(25),
   salt: openWord.default("none"),
+  /** The conductivity that salt is to bring the water to, µS/cm at 25 °C; absent: no salt is to be added. */
+  targetConductivityUsPerCm: z.number().min(0.01).max(300_000).optional(),
   slabs: z.array(slabSchema).max(64).default([]),
 });
 const supplySchema = z.strictObject({
@@ -94,12 +96,28 @@ const supplySchema = z.strictObject({
   volts: z.number().min(0.001).max(1000),
   currentLimitA: z.number().min(0.0001).max(1000).default(1),
   source: openWord.default("safety-isolated"),
+  /** What the supply gives with nothing connected, V (a loaded 12 V transformer can stand at 16 V unloaded); absent: `volts`. */
+  openCircuitVolts: z.number().min(0.001).max(1000).optional(),
+});
+/** The surfaces where metal meets water. Absent keys are estimated from the material; a reading of the user's own replaces them. */
+const interfaceSchema = z.strictObject({
+  /** Double-layer capacitance of the electrodes, µF/cm². */
+  doubleLayerUfPerCm2: z.number().min(0.1).max(1000).optional(),
+  /** DC only: volts lost at both electrodes together, measured by the user beside the electrodes. */
+  electrodeDropVolts: z.number().min(0).max(50).optional(),
+  /** Whether the predicted readings allow for the volts lost at the surfaces. */
+  inReadings: z.boolean().default(false),
 });
 const meterSchema = z.strictObject({
   inputMegohm: z.number().min(0.0001).max(1_000_000).default(10),
   counts: z.number().int().min(100).max(100_000_000).default(2000),
   accuracyPercent: z.number().min(0).max(100).default(1),
   accuracyDigits: z.number().min(0).max(1000).default(3),
+  /** Capacitance across the input, pF: beside the megohms it loads the probe on AC. */
+  inputPicofarad: z.number().min(0).max(100_000).default(100),
+  /** The frequencies at which the AC ranges keep their accuracy, Hz. */
+  acLowHz: z.number().min(0).max(10_000_000).default(40),
+  acHighHz: z.number().min(0.1).max(10_000_000).default(400),
 });
 const probingSchema = z.strictObject({
   levels: z.number().int().min(1).max(99).default(7),
@@ -112,6 +130,9 @@ const probingSchema = z.strictObject({
 const sessionSchema = z.strictObject({
   minutes: z.number().min(0.1).max(10_000).default(40),
   trays: z.number().int().min(1).max(1000).default(1),
+  /** Air that a cover or a hood with its fan off encloses over one tray, litres; and the room that all trays share, m³. */
+  hoodLitres: z.number().min(0.1).max(1_000_000).default(100),
+  roomCubicMetres: z.number().min(1).max(1_000_000).default(100),
 });
 
 export const setupSchema = z
@@ -123,6 +144,7 @@ export const setupSchema = z
     tray: traySchema,
     water: waterSchema,
     supply: supplySchema,
+    interface: interfaceSchema.prefault({}),
     meter: meterSchema.prefault({}),
     parts: z.array(partSchema).max(64),
     probing: probingSchema.prefault({}),
@@ -141,6 +163,10 @@ export const setupSchema = z
     if (setup.supply.waveform === "ac" && setup.supply.frequencyHz <= 0) {
       context.addIssue({ code: "custom", path: ["supply", "frequencyHz"], message: "is 0, allowed: above 0 with waveform ac" });
     }
+    if (setup.meter.acLowHz >= setup.meter.acHighHz) {
+      const message = `is ${setup.meter.acLowHz}, allowed: less than acHighHz (${setup.meter.acHighHz})`;
+      context.addIssue({ code: "custom", path: ["meter", "acLowHz"], message });
+    }
   });
 
 type DeepReadonly<T> = T extends object ? { readonly [Key in keyof T]: DeepReadonly<T[Key]> } : T;
@@ -150,6 +176,7 @@ export type Setup = DeepReadonly<z.output<typeof setupSchema>>;
 export type Tray = Setup["tray"];
 export type Water = Setup["water"];
 export type Supply = Setup["supply"];
+export type Interface = Setup["interface"];
 export type Meter = Setup["meter"];
 export type Part = Setup["parts"][number];
 export type PartRole = Part["role"];

@@ -1,0 +1,34 @@
+import type { BenchNumbers } from "../../../shared-types/bench";
+import type { Finding, ProbePlan, Severity } from "../../../shared-types/plan";
+import type { Setup } from "../../../shared-types/setup";
+import type { FieldFacts } from "../bench/field-facts";
+import type { PlanRule, SetupRule } from "./rule";
+
+const SETUP_RULES: readonly SetupRule[] = [];
+const PLAN_RULES: readonly PlanRule[] = [];
+
+const ORDER: Record<Severity, number> = { stop: 0, caution: 1, note: 2 };
+
+const gravestFirst = (findings: readonly Finding[]): readonly Finding[] =>
+  [...findings].sort((a, b) => ORDER[a.severity] - ORDER[b.severity]);
+
+/** @returns what the rules that need no field find, gravest first. Never throws. */
+export function geometryFindings(setup: Setup): readonly Finding[] {
+  return gravestFirst(SETUP_RULES.flatMap((rule) => rule(setup)));
+}
+
+/**
+ * Everything that the rules find: those that need no field, and those that read it.
+ * @returns one list for screen, `check` and paper, gravest first.
+ */
+export function findingsOf(setup: Setup, bench: BenchNumbers, field: FieldFacts, probing: ProbePlan): readonly Finding[] {
+  const found = { setup, bench, field, probing };
+  return gravestFirst([...SETUP_RULES.flatMap((rule) => rule(setup)), ...PLAN_RULES.flatMap((rule) => rule(found))]);
+}
+
+/** @returns how many findings there are of each severity. */
+export function countBySeverity(findings: readonly Finding[]): Readonly<Record<Severity, number>> {
+  const counts: Record<Severity, number> = { stop: 0, caution: 0, note: 0 };
+  for (const finding of findings) counts[finding.severity] += 1;
+  return counts;
+}
