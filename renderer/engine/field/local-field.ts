@@ -1,0 +1,196 @@
+import type { Setup } from "../../../shared-types/setup";
+import { radians } from "../../../shared-types/units";
+import { type Bow, type Edge, lengthOf, type Loop, type Piece, pointAlong } from "../geometry/outline";
+import { distanceToPiece } from "../geometry/signed-distance";
+import { depthFromWallMm } from "../geometry/tray-outline";
+import type { Solid } from "./layout";
+import { stripEndPotential } from "./strip-end";
+
+/**
+ * A positive function that is harmonic in the water next to one place of a conductor and zero on its surface: the form
+ * that every potential difference to the conductor takes there, whatever stands farther away.
+ */
+export type LocalPotential = (x: number, y: number) => number;
+
+/** A corner or a strip's end with the circle in which its local potential rules. */
+interface Feature {
+  readonly x: number;
+  readonly y: number;
+  readonly reachMm: number;
+  /** The potential, 0 where the point lies in the metal's sector. */
+  readonly potential: LocalPotential;
+}
+
+/** Every place of a conductor with its local potential. */
+export interface LocalField {
+  /**
+   * @returns the local potential that rules at a point in the water, or null where none is sure (near a corner too small
+   * for the grid, or past the end of an edge).
+   */
+  readonly at: (x: number, y: number) => LocalPotential | null;
+  /** @returns the potential of the corner or strip end in whose circle a point lies, else null. */
+  readonly featureAt: (x: number, y: number) => LocalPotential | null;
+  /** Radius of the widest such circle, mm. */
+  readonly widestReachMm: number;
+}
+
+/** Directions (unit vectors) in which a piece leaves its start and arrives at its end. */
+function tangents(piece: Piece): { leaving: readonly [number, number]; arriving: readonly [number, number] } {
+  if (piece.kind === "edge") {
+    const length = lengthOf(piece);
+    const d = [(piece.x1 - piece.x0) / length, (piece.y1 - piece.y0) / length] as const;
+    return { leaving: d, arriving: d };
+  }
+  const sense = Math.sign(piece.sweepRad);
+  const at = (angle: number): readonly [number, number] => [-sense * Math.sin(angle), sense * Math.cos(angle)];
+  return { leaving: at(piece.startRad), arriving: at(piece.startRad + piece.sweepRad) };
+}
+
+/** r^(π/α)·sin(πθ/α) in the water of opening α at a corner (Jackson, Classical Electrodynamics, sect. 2.11). */
+function cornerPotential(x0: number, y0: number, along: number, waterAngle: number): LocalPotential {
+  const exponent = Math.PI / waterAngle;
+  return (x, y) => {
+    const dx = x - x0;
+    const dy = y - y0;
+    // θ runs clockwise from the leaving edge into the water, because the solid is on the left of the outline.
+    let theta = along - Math.atan2(dy, dx);
+    theta -= 2 * Math.PI * Math.floor((theta + 1e-9) / (2 * Math.PI));
+    if (theta >= waterAngle) return 0;
+    return Math.hypot(dx, dy) ** exponent * Math.sin(exponent * Math.max(0, theta));
+  };
+}
+
+function cornersOf(loop: Loop): Feature[] {
+  return loop.flatMap((piece, index): Feature[] => {
+    const before = loop[(index + loop.length - 1) % loop.length];
+    const arriving = tangents(before).arriving;
+    const leaving = tangents(piece).leaving;
+    const turn = Math.atan2(arriving[0] * leaving[1] - arriving[1] * leaving[0], arriving[0] * leaving[0] + arriving[1] * leaving[1]);
+    if (Math.abs(turn) < 1e-3) return [];
+    const [x, y] = pointAlong(piece, 0);
+    const bent = [before, piece].some((one) => one.kind === "bow");
+    const reachMm = Math.min(lengthOf(before), lengthOf(piece)) * (bent ? 0.25 : 0.45);
+    // The outline turns left by `turn` at the corner, so the water opens by π + turn.
+    return [{ x, y, reachMm, potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn) }];
+  });
+}
+
+function barEnds(placed: Solid["placed"], lengthMm: number, thicknessMm: number, turnDeg: number): Feature[] {
+  const c = Math.cos(radians(turnDeg));
+  const s = Math.sin(radians(turnDeg));
+  return [1, -1].map((side): Feature => {
+    const x0 = placed.xMm + (side * c * lengthMm) / 2;
+    const y0 = placed.yMm + (side * s * lengthMm) / 2;
+    const potential: LocalPotential = (x, y) =>
+      stripEndPotential(side * (c * (x - x0) + s * (y - y0)), c * (y - y0) - s * (x - x0), thicknessMm);
+    return { x: x0, y: y0, reachMm: lengthMm / 4, potential };
+  });
+}
+
+/** An arc's end is a strip's end in the logarithmic plane, where rings are straight; harmonic functions stay harmonic. */
+function arcEnds(placed: Solid["placed"], outerMm: number, innerMm: number, sweepDeg: number): Feature[] {
+  const middle = Math.sqrt(outerMm * innerMm) / 2;
+  const thickness = Math.log(outerMm / innerMm);
+  return [1, -1].map((side): Feature => {
+    const end = radians(placed.turnDeg) + (side * radians(sweepDeg)) / 2;
+    const potential: LocalPotential = (x, y) => {
+      const dx = x - placed.xMm;
+      const dy = y - placed.yMm;
+      let beyond = side * (Math.atan2(dy, dx) - end);
+      beyond -= 2 * Math.PI * Math.round(beyond / (2 * Math.PI));
+      return stripEndPotential(beyond, Math.log(Math.hypot(dx, dy) / middle), thickness);
+    };
+    const x0 = placed.xMm + middle * Math.cos(end);
+    const y0 = placed.yMm + middle * Math.sin(end);
+    return { x: x0, y: y0, reachMm: Math.min((middle * radians(sweepDeg)) / 4, middle / 2), potential };
+  });
+}
+
+/** How much longer than thick a strip must be for its ends not to feel each other. */
+const SLENDER = 2.5;
+
+function featuresOf(solid: Solid): Feature[] {
+  const { placed } = solid;
+  const { shape } = placed;
+  if (shape.kind === "bar") {
+    const long = Math.max(shape.lengthMm, shape.widthMm);
+    const thick = Math.min(shape.lengthMm, shape.widthMm);
+    if (long >= SLENDER * thick) return barEnds(placed, long, thick, placed.turnDeg + (shape.lengthMm >= shape.widthMm ? 0 : 90));
+  }
+  if (shape.kind === "arc" && ((shape.outerMm + shape.innerMm) / 4) * radians(shape.sweepDeg) >= SLENDER * ((shape.outerMm - shape.innerMm) / 2)) {
+    return arcEnds(placed, shape.outerMm, shape.innerMm, shape.sweepDeg);
+  }
+  return solid.loops.flatMap(cornersOf);
+}
+
+function edgePotential(edge: Edge): LocalPotential {
+  const length = lengthOf(edge);
+  const nx = (edge.y1 - edge.y0) / length;
+  const ny = -(edge.x1 - edge.x0) / length;
+  return (x, y) => nx * (x - edge.x0) + ny * (y - edge.y0);
+}
+
+function bowPotential(bow: Bow): LocalPotential {
+  const sense = Math.sign(bow.sweepRad);
+  return (x, y) => sense * bow.radius * Math.log(Math.hypot(x - bow.cx, y - bow.cy) / bow.radius);
+}
+
+function piecePotential(piece: Piece): LocalPotential {
+  return piece.kind === "edge" ? edgePotential(piece) : bowPotential(piece);
+}
+
+/** Whether the point of a piece nearest to (x, y) lies within the piece and not at one of its ends. */
+function facesPiece(piece: Piece, x: number, y: number): boolean {
+  const distance = distanceToPiece(piece, x, y);
+  const [x0, y0] = pointAlong(piece, 0);
+  const [x1, y1] = pointAlong(piece, 1);
+  if (piece.kind === "bow" && Math.abs(piece.sweepRad) > 6.28) return true;
+  return Math.min(Math.hypot(x - x0, y - y0), Math.hypot(x - x1, y - y1)) > distance * (1 + 1e-9);
+}
+
+/**
+ * Prepares the local potentials of a conductor.
+ * @param smallestReachMm corners whose circle would be smaller than this are left to the plain scheme.
+ * @param clearanceMm distance from a point to the nearest other part (mm): a corner's circle stays well inside it.
+ */
+export function localFieldOf(solid: Solid, setup: Setup, smallestReachMm: number, clearanceMm: (x: number, y: number) => number): LocalField {
+  const wallMm = (x: number, y: number): number => Math.max(0, depthFromWallMm(setup.tray, x, y));
+  const all = featuresOf(solid).map((feature) => {
+    const roomMm = Math.min(wallMm(feature.x, feature.y), clearanceMm(feature.x, feature.y));
+    return { ...feature, reachMm: Math.min(feature.reachMm, 0.6 * roomMm) };
+  });
+  const features = all.filter((feature) => feature.reachMm >= smallestReachMm);
+  const pieces = solid.loops.flat().map((piece) => ({ piece, potential: piecePotential(piece) }));
+
+  function featureAt(x: number, y: number): Feature | null {
+    let best: Feature | null = null;
+    let nearest = Infinity;
+    for (const feature of features) {
+      const distance = Math.hypot(x - feature.x, y - feature.y);
+      if (distance < feature.reachMm && distance < nearest && feature.potential(x, y) > 0) {
+        best = feature;
+        nearest = distance;
+      }
+    }
+    return best;
+  }
+
+  return {
+    featureAt: (x, y) => featureAt(x, y)?.potential ?? null,
+    widestReachMm: Math.max(0, ...features.map((feature) => feature.reachMm)),
+    at: (x, y) => {
+      const feature = featureAt(x, y);
+      if (feature !== null) return feature.potential;
+      let nearest = Infinity;
+      let ruling: { piece: Piece; potential: LocalPotential } | null = null;
+      for (const entry of pieces) {
+        const distance = distanceToPiece(entry.piece, x, y);
+        if (distance < nearest) {
+          nearest = distance;
+          ruling = entry;
+        }
+      }
+      return ruling !== null && facesPiece(ruling.piece, x, y) ? ruling.potential : null;
+    },
+  };
+}

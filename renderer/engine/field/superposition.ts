@@ -1,0 +1,160 @@
+import { type ConductorReading, type FieldPicture, type FieldReading, OWNER_NOTHING, OWNER_WATER } from "../../../shared-types/plan";
+import type { Setup } from "../../../shared-types/setup";
+import { degrees, MM_PER_M } from "../../../shared-types/units";
+import { covers, distanceToOutline } from "../geometry/signed-distance";
+import { depthFromWallMm } from "../geometry/tray-outline";
+import { waterDepthMm } from "../geometry/water-depth";
+import type { PotentialField } from "./potential-field";
+import { type Reader, readerOf } from "./reading";
+import type { FieldSolution, SolvedGrid } from "./solve-field";
+
+/** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
+const FLOOR_SHARE = 1e-6;
+
+/** One solved grid at given electrode potentials. */
+interface Superposed {
+  readonly potentials: Float64Array;
+  readonly bodyVolts: readonly number[];
+  /** Current of each electrode per σ, V·mm (flux per volt times volts). */
+  readonly fluxes: readonly number[];
+  readonly reader: Reader;
+}
+
+function superpose({ network, units, map }: SolvedGrid, electrodeVolts: readonly number[]): Superposed {
+  const { grid, layout } = network;
+  const count = electrodeVolts.length;
+  const potentials = new Float64Array(grid.columns * grid.rows);
+  units.potentials.forEach((unit, electrode) => {
+    const volts = electrodeVolts[electrode];
+    if (volts !== 0) for (let node = 0; node < potentials.length; node++) potentials[node] += volts * unit[node];
+  });
+  const floatingVolts = layout.conductors.slice(count).map((_, f) => {
+    if (!network.determined[count + f]) return Number.NaN;
+    return units.floating.reduce((sum, shares, electrode) => sum + shares[f] * electrodeVolts[electrode], 0);
+  });
+  const bodyVolts = [...electrodeVolts, ...floatingVolts];
+  const fluxes = electrodeVolts.map((_, e) => electrodeVolts.reduce((sum, volts, f) => sum + units.conductanceMm[e * count + f] * volts, 0));
+  return { potentials, bodyVolts, fluxes, reader: readerOf(network, map, potentials, bodyVolts) };
+}
+
+/** Largest field at each conductor's wetted face, V/mm: the mean over about one pitch next to the metal. */
+function largestSurfaceFields({ network }: SolvedGrid, { potentials, bodyVolts }: Superposed): number[] {
+  const { columns, pitchXMm, pitchYMm } = network.grid;
+  const pitch = Math.max(pitchXMm, pitchYMm);
+  return network.contacts.map((contact, body) => {
+    let largest = 0;
+    for (const node of contact.nodes) {
+      const distance = distanceToOutline(network.layout.conductors[body].loops, (node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm);
+      if (distance > 0.3 * pitch && distance < 1.5 * pitch) largest = Math.max(largest, Math.abs(bodyVolts[body] - potentials[node]) / distance);
+    }
+    return largest;
+  });
+}
+
+function pictureOf({ network }: SolvedGrid, { potentials, bodyVolts }: Superposed): FieldPicture {
+  const { owner, body } = network.ownership;
+  const { columns, rows, pitchXMm, pitchYMm } = network.grid;
+  const volts = new Float32Array(columns * rows);
+  for (let node = 0; node < volts.length; node++) {
+    volts[node] = body[node] >= 0 ? bodyVolts[body[node]] : owner[node] === OWNER_WATER ? potentials[node] : Number.NaN;
+  }
+  return { columns, rows, pitchXMm, pitchYMm, volts, owner };
+}
+
+/** A field with the electrical totals that need the conductivity. */
+export interface SuperposedField extends PotentialField {
+  /** Current leaving the higher electrodes over σ, with its numerical bound: V·mm. */
+  readonly totalFlux: { readonly value: number; readonly error: number };
+}
+
+/**
+ * Adds the unit potentials up for the volts and taps of a setup whose geometry is that of the solution. No solve is needed.
+ * @param conductivitySPerM of the water at its temperature.
+ */
+export function superposedField(solution: FieldSolution, setup: Setup, conductivitySPerM: number): SuperposedField {
+  const { fine, coarse, layout } = solution;
+  const electrodeVolts = layout.conductors.slice(0, layout.electrodeCount).map(({ index }) => {
+    const part = setup.parts[index];
+    return part.role === "electrode" ? part.tap * setup.supply.volts : 0;
+  });
+  const spanV = [Math.min(...electrodeVolts), Math.max(...electrodeVolts)] as const;
+  const span = spanV[1] - spanV[0];
+  const near = superpose(fine, electrodeVolts);
+  const far = superpose(coarse, electrodeVolts);
+  const floorV = FLOOR_SHARE * span;
+  const amperes = (flux: number): number => (flux * conductivitySPerM) / MM_PER_M;
+  const surfaceFields = largestSurfaceFields(fine, near);
+  const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
+    const part = setup.parts[index];
+    const electrode = body < layout.electrodeCount;
+    const flux = electrode ? near.fluxes[body] : 0;
+    const fluxError = electrode ? Math.abs(flux - far.fluxes[body]) + FLOOR_SHARE * Math.abs(flux) : 0;
+    return {
+      id: part.id,
+      role: electrode ? "electrode" : "floating",
+      volts: near.bodyVolts[body],
+      voltsError: electrode ? 0 : Math.abs(near.bodyVolts[body] - far.bodyVolts[body]) + floorV,
+      currentA: amperes(flux),
+      currentErrorA: amperes(fluxError),
+      largestCurrentDensityAPerM2: conductivitySPerM * surfaceFields[body] * MM_PER_M,
+    };
+  });
+  const totalOf = (superposed: Superposed): number => superposed.fluxes.reduce((sum, flux) => sum + Math.max(0, flux), 0);
+  const total = totalOf(near);
+  const { network, units } = fine;
+  const nothing = (xMm: number, yMm: number, inside: string | null): FieldReading => ({
+    xMm,
+    yMm,
+    inside,
+    volts: null,
+    voltsError: 0,
+    fieldVPerM: 0,
+    directionDeg: 0,
+  });
+  const read = (xMm: number, yMm: number): FieldReading => {
+    if (!(depthFromWallMm(setup.tray, xMm, yMm) >= -1e-9)) return nothing(xMm, yMm, null);
+    const index = setup.parts.findIndex((part) => covers(part, xMm, yMm));
+    if (index >= 0) {
+      const conductor = conductors.find(({ id }) => id === setup.parts[index].id);
+      if (conductor === undefined || Number.isNaN(conductor.volts)) return nothing(xMm, yMm, setup.parts[index].id);
+      const { volts, voltsError } = conductor;
+      return { xMm, yMm, inside: conductor.id, volts, voltsError, fieldVPerM: 0, directionDeg: 0 };
+    }
+    if (waterDepthMm(setup, xMm, yMm) <= 0 || nearestIsLost(fine, xMm, yMm)) return nothing(xMm, yMm, null);
+    const here = near.reader.at(xMm, yMm);
+    if (here === null) return nothing(xMm, yMm, null);
+    const coarser = far.reader.at(xMm, yMm);
+    const fieldVPerM = Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
+    return {
+      xMm,
+      yMm,
+      inside: null,
+      volts: here.volts,
+      voltsError: (coarser === null ? 0.01 * span : Math.abs(here.volts - coarser.volts)) + floorV,
+      fieldVPerM,
+      directionDeg: fieldVPerM === 0 ? 0 : degrees(Math.atan2(-here.slopeY, -here.slopeX)),
+    };
+  };
+  return {
+    numerics: {
+      pitchMm: Math.max(network.grid.pitchXMm, network.grid.pitchYMm),
+      unknowns: units.unknowns,
+      iterations: units.record.iterations,
+      relativeResidual: units.record.relativeResidual,
+      elapsedMs: 0,
+    },
+    spanV,
+    picture: pictureOf(fine, near),
+    conductors,
+    totalFlux: { value: total, error: Math.abs(total - totalOf(far)) + FLOOR_SHARE * total },
+    read,
+  };
+}
+
+/** Whether all nodes round a place lie where no electrode's potential reaches. */
+function nearestIsLost({ network }: SolvedGrid, xMm: number, yMm: number): boolean {
+  const { columns, rows, pitchXMm, pitchYMm } = network.grid;
+  const column = Math.min(columns - 2, Math.max(0, Math.floor(xMm / pitchXMm)));
+  const row = Math.min(rows - 2, Math.max(0, Math.floor(yMm / pitchYMm)));
+  return [0, 1, columns, columns + 1].every((step) => network.ownership.owner[row * columns + column + step] === OWNER_NOTHING);
+}
