@@ -1,34 +1,126 @@
-import type { FieldReading, PlanOutcome, Quality } from "../../shared-types/plan";
+import type { Bounded, FieldReading, Finding, Plan, PlanOutcome, PlanRefusal, Quality } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import { setupId } from "../../shared-types/setup-id";
+import { MM_PER_M } from "../../shared-types/units";
+import { benchOf } from "./bench/bench";
+import { conductivityAtTemperatureSPerM } from "./bench/water-conductivity";
+import { drive, type Pace } from "./field/drive";
+import { fieldLayout, geometryKey } from "./field/layout";
+import { type FieldSolution, solveField } from "./field/solve-field";
+import { type SuperposedField, superposedField } from "./field/superposition";
+import { findingsOf, geometryFindings } from "./findings/all-findings";
 
 /** How a caller watches a plan being made and stops it. */
-export interface PlanOptions {
-  readonly onProgress?: (fraction: number) => void;
-  readonly signal?: AbortSignal;
-  /** Lets the caller's other work run; awaited every few milliseconds of computing. Absent: the plan is made in one go. */
-  readonly breathe?: () => Promise<void>;
-  /** A clock in ms for `numerics.elapsedMs`; absent: 0 is reported. */
-  readonly now?: () => number;
+export interface PlanOptions extends Pace {
+  readonly onProgress?: (share: number) => void;
 }
 
 /** Makes plans and keeps the newest solved fields, so that volts, taps and probing settings start no solve. */
 export interface Planner {
   readonly plan: (setup: Setup, quality: Quality, options?: PlanOptions) => Promise<PlanOutcome>;
-  /** Readings from the newest field of this setup's geometry; null when none was planned. */
+  /** Readings from the best field solved for this setup's geometry; null when there is none. */
   readonly sample: (setup: Setup, placesMm: readonly (readonly [number, number])[]) => readonly FieldReading[] | null;
+}
+
+/** Findings that leave no field to speak of. */
+const REFUSING_CODES: ReadonlySet<string> = new Set(["overlap", "short-circuit"]);
+/** Solved geometries kept: enough for undo and redo to be instant. */
+const KEPT_SOLUTIONS = 4;
+
+function refusalOf(setup: Setup, findings: readonly Finding[]): PlanRefusal | null {
+  const blocking = findings.find(({ code }) => REFUSING_CODES.has(code));
+  if (blocking !== undefined) return { code: blocking.code, message: blocking.message, partIds: blocking.partIds, findings };
+  const taps = new Set(setup.parts.flatMap((part) => (part.role === "electrode" ? [part.tap] : [])));
+  if (taps.size >= 2) return null;
+  const electrodes = setup.parts.filter(({ role }) => role === "electrode");
+  const message =
+    electrodes.length === 0
+      ? "no part is an electrode; wire at least two parts to different taps"
+      : electrodes.length === 1
+        ? `only ${electrodes[0].id} is an electrode; wire a second part to another tap`
+        : "all electrodes sit at the same tap, so no current flows; give one of them another tap";
+  return { code: "no-potential-difference", message, partIds: electrodes.map(({ id }) => id), findings };
+}
+
+/** Resistance and shape factor between the two potentials in use; null where there are more than two. */
+function twoPoleOf(setup: Setup, field: SuperposedField, conductivitySPerM: number): { resistanceOhm: Bounded; shapeFactor: Bounded } | null {
+  const potentials = new Set(setup.parts.flatMap((part) => (part.role === "electrode" ? [part.tap] : [])));
+  if (potentials.size !== 2) return null;
+  const volts = field.spanV[1] - field.spanV[0];
+  const { value: flux, error } = field.totalFlux;
+  const resistance = (volts * MM_PER_M) / (conductivitySPerM * flux);
+  const shape = flux / (volts * setup.water.depthMm);
+  const share = error / flux;
+  return { resistanceOhm: { value: resistance, error: resistance * share }, shapeFactor: { value: shape, error: shape * share } };
+}
+
+function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan {
+  const conductivitySPerM = conductivityAtTemperatureSPerM(setup);
+  const field = superposedField(solution, setup, conductivitySPerM);
+  const twoPole = twoPoleOf(setup, field, conductivitySPerM);
+  const amperesPerFlux = conductivitySPerM / MM_PER_M;
+  const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
+  const equipotentials: Plan["equipotentials"] = [];
+  const probing: Plan["probing"] = { spanV: field.spanV, levels: [], checks: [] };
+  const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
+  const bench = benchOf(setup, facts);
+  return {
+    setupId: setupId(setup),
+    quality: solution.quality,
+    numerics: { ...field.numerics, elapsedMs },
+    spanV: field.spanV,
+    resistanceOhm: facts.resistanceOhm,
+    shapeFactor: facts.shapeFactor,
+    currentA,
+    powerW: field.conductors.reduce((sum, { volts, currentA: amperes }) => sum + volts * amperes, 0),
+    conductors: field.conductors,
+    picture: field.picture,
+    equipotentials,
+    fieldLines: [],
+    probing,
+    bench,
+    findings: findingsOf(setup, bench, facts, probing),
+  };
 }
 
 /** @returns a planner with an empty memory. */
 export function createPlanner(): Planner {
-  return {
-    plan: async () => ({ ok: false, refusal: { code: "not-built", message: "the field engine is not built yet", partIds: [], findings: [] } }),
-    sample: () => null,
-  };
+  const kept = new Map<string, FieldSolution>();
+
+  function keep(key: string, solution: FieldSolution): void {
+    kept.delete(key);
+    kept.set(key, solution);
+    for (const oldest of kept.keys()) {
+      if (kept.size <= KEPT_SOLUTIONS) break;
+      kept.delete(oldest);
+    }
+  }
+
+  async function plan(setup: Setup, quality: Quality, options: PlanOptions = {}): Promise<PlanOutcome> {
+    const refusal = refusalOf(setup, geometryFindings(setup));
+    if (refusal !== null) return { ok: false, refusal };
+    const key = `${quality} ${geometryKey(setup)}`;
+    const started = options.now?.() ?? 0;
+    let solution = kept.get(key);
+    if (solution === undefined) solution = await drive(solveField(fieldLayout(setup), quality, options.onProgress), options);
+    keep(key, solution);
+    return { ok: true, plan: planOf(setup, solution, (options.now?.() ?? 0) - started) };
+  }
+
+  function sample(setup: Setup, placesMm: readonly (readonly [number, number])[]): readonly FieldReading[] | null {
+    const geometry = geometryKey(setup);
+    const solution = (["reference", "print", "live"] as const).map((quality) => kept.get(`${quality} ${geometry}`)).find((one) => one !== undefined);
+    if (solution === undefined) return null;
+    const field = superposedField(solution, setup, conductivityAtTemperatureSPerM(setup));
+    return placesMm.map(([xMm, yMm]) => field.read(xMm, yMm));
+  }
+
+  return { plan, sample };
 }
 
 /**
  * The only door of the engine: everything that follows from a setup.
- * @returns the plan, or why a valid setup has none. Rejects with an `AbortError` when `signal` is aborted.
+ * @returns the plan, or why a valid setup has none. Rejects with the signal's reason when `signal` is aborted.
  */
 export function planSetup(setup: Setup, quality: Quality, options: PlanOptions = {}): Promise<PlanOutcome> {
   return createPlanner().plan(setup, quality, options);
