@@ -2,10 +2,60 @@ import type { BenchNumbers } from "../../../shared-types/bench";
 import type { Finding, ProbePlan, Severity } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import type { FieldFacts } from "../bench/field-facts";
+import { chlorideWithDirectCurrent, directCurrentPolarises } from "./direct-current";
+import { electrodeMetal, solubleAnode } from "./electrode-metal";
+import { chlorineInRoom, gasVolume } from "./gas-volume";
+import { meterFrequency, meterLoading, readableGradient } from "./meter-fit";
+import { partOutside } from "./part-outside";
+import { partsAboveWater } from "./parts-above-water";
+import { partsMeet } from "./parts-meet";
+import { probeReach } from "./probe-reach";
 import type { PlanRule, SetupRule } from "./rule";
+import { sourceIsolation } from "./source-isolation";
+import { supplyCurrent } from "./supply-current";
+import { alternatingGas, directDrop, interfaceShare } from "./surface-losses";
+import { tapsInUse } from "./taps-in-use";
+import { templateTiles } from "./template-tiles";
+import { touchVoltage } from "./touch-voltage";
+import { trayMaterial } from "./tray-material";
+import { warming } from "./warming";
+import { bedRunsDry, depthStep, freeboard, tooShallowForTilt } from "./water-in-tray";
+import { saltBeyondData, waterKindFits, waterTemperature } from "./water-kind";
 
-const SETUP_RULES: readonly SetupRule[] = [];
-const PLAN_RULES: readonly PlanRule[] = [];
+const SETUP_RULES: readonly SetupRule[] = [
+  partsMeet,
+  partOutside,
+  tapsInUse,
+  trayMaterial,
+  partsAboveWater,
+  freeboard,
+  tooShallowForTilt,
+  bedRunsDry,
+  depthStep,
+  touchVoltage,
+  sourceIsolation,
+  chlorideWithDirectCurrent,
+  directCurrentPolarises,
+  electrodeMetal,
+  meterFrequency,
+  waterKindFits,
+  waterTemperature,
+  saltBeyondData,
+  templateTiles,
+];
+const PLAN_RULES: readonly PlanRule[] = [
+  supplyCurrent,
+  warming,
+  gasVolume,
+  chlorineInRoom,
+  solubleAnode,
+  interfaceShare,
+  directDrop,
+  alternatingGas,
+  meterLoading,
+  readableGradient,
+  probeReach,
+];
 
 const ORDER: Record<Severity, number> = { stop: 0, caution: 1, note: 2 };
 
