@@ -12,8 +12,9 @@ import { type LocalField, type LocalPotential, localFieldOf } from "./local-fiel
 /** Fitted conductances beyond these multiples of the plain one mean that the local potential does not apply. */
 const LEAST_OF_PLAIN = 0.05;
 const MOST_OF_PLAIN = 20;
-/** Largest share of a node's links that a corner may add to a node that its conductor does not touch. */
-const MOST_OF_LINKS = 0.4;
+/** What a corner may take from or add to a node that its conductor does not touch, as a share of the node's links. */
+const LEAST_OF_LINKS = -0.6;
+const MOST_OF_LINKS = 3;
 
 function fittedConductance(network: Network, node: number, potential: LocalPotential): number | null {
   const { grid, east, north, active, conduction } = network;
@@ -72,7 +73,9 @@ function fitBody(network: Network, body: number, field: LocalField, shared: Read
       if (active[node] === 0 || ties.has(node) || shared.has(node) || !isPlain(node)) continue;
       const potential = field.featureAt(column * pitchXMm, row * pitchYMm);
       const fitted = potential === null ? null : fittedConductance(network, node, potential);
-      if (fitted !== null && Math.abs(fitted) < MOST_OF_LINKS * linkSum(network, node)) ties.set(node, fitted);
+      if (fitted === null) continue;
+      const share = fitted / linkSum(network, node);
+      if (share > LEAST_OF_LINKS && share < MOST_OF_LINKS) ties.set(node, fitted);
     }
   }
   const nodes = [...ties.keys()].sort((a, b) => a - b);

@@ -12,10 +12,10 @@ import { stripEndPotential } from "./strip-end";
  */
 export type LocalPotential = (x: number, y: number) => number;
 
-/** A corner or a strip's end with the circle in which its local potential rules. */
+/** A corner or a strip's end with the neighbourhood in which its local potential rules. */
 interface Feature {
-  readonly x: number;
-  readonly y: number;
+  /** The corner itself, or the end face of a strip: the neighbourhood is what lies within reach of it. */
+  readonly core: Edge;
   readonly reachMm: number;
   /** The potential, 0 where the point lies in the metal's sector. */
   readonly potential: LocalPotential;
@@ -71,7 +71,7 @@ function cornersOf(loop: Loop): Feature[] {
     const bent = [before, piece].some((one) => one.kind === "bow");
     const reachMm = Math.min(lengthOf(before), lengthOf(piece)) * (bent ? 0.25 : 0.45);
     // The outline turns left by `turn` at the corner, so the water opens by π + turn.
-    return [{ x, y, reachMm, potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn) }];
+    return [{ core: { kind: "edge", x0: x, y0: y, x1: x, y1: y }, reachMm, potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn) }];
   });
 }
 
@@ -83,7 +83,9 @@ function barEnds(placed: Solid["placed"], lengthMm: number, thicknessMm: number,
     const y0 = placed.yMm + (side * s * lengthMm) / 2;
     const potential: LocalPotential = (x, y) =>
       stripEndPotential(side * (c * (x - x0) + s * (y - y0)), c * (y - y0) - s * (x - x0), thicknessMm);
-    return { x: x0, y: y0, reachMm: lengthMm / 4, potential };
+    const [halfX, halfY] = [(-s * thicknessMm) / 2, (c * thicknessMm) / 2];
+    const core: Edge = { kind: "edge", x0: x0 - halfX, y0: y0 - halfY, x1: x0 + halfX, y1: y0 + halfY };
+    return { core, reachMm: lengthMm / 4, potential };
   });
 }
 
@@ -100,9 +102,9 @@ function arcEnds(placed: Solid["placed"], outerMm: number, innerMm: number, swee
       beyond -= 2 * Math.PI * Math.round(beyond / (2 * Math.PI));
       return stripEndPotential(beyond, Math.log(Math.hypot(dx, dy) / middle), thickness);
     };
-    const x0 = placed.xMm + middle * Math.cos(end);
-    const y0 = placed.yMm + middle * Math.sin(end);
-    return { x: x0, y: y0, reachMm: Math.min((middle * radians(sweepDeg)) / 4, middle / 2), potential };
+    const at = (radius: number): readonly [number, number] => [placed.xMm + radius * Math.cos(end), placed.yMm + radius * Math.sin(end)];
+    const [[x0, y0], [x1, y1]] = [at(innerMm / 2), at(outerMm / 2)];
+    return { core: { kind: "edge", x0, y0, x1, y1 }, reachMm: Math.min((middle * radians(sweepDeg)) / 4, middle / 2), potential };
   });
 }
 
@@ -121,6 +123,10 @@ function featuresOf(solid: Solid): Feature[] {
     return arcEnds(placed, shape.outerMm, shape.innerMm, shape.sweepDeg);
   }
   return solid.loops.flatMap(cornersOf);
+}
+
+function distanceToCore(core: Edge, x: number, y: number): number {
+  return core.x0 === core.x1 && core.y0 === core.y1 ? Math.hypot(x - core.x0, y - core.y0) : distanceToPiece(core, x, y);
 }
 
 function edgePotential(edge: Edge): LocalPotential {
@@ -159,7 +165,8 @@ const MOST_REACH_IN_LEAST = 12;
 export function localFieldOf(solid: Solid, setup: Setup, smallestReachMm: number, clearanceMm: (x: number, y: number) => number): LocalField {
   const wallMm = (x: number, y: number): number => Math.max(0, depthFromWallMm(setup.tray, x, y));
   const all = featuresOf(solid).map((feature) => {
-    const roomMm = Math.min(wallMm(feature.x, feature.y), clearanceMm(feature.x, feature.y));
+    const { x0, y0, x1, y1 } = feature.core;
+    const roomMm = Math.min(wallMm(x0, y0), wallMm(x1, y1), clearanceMm(x0, y0), clearanceMm(x1, y1));
     return { ...feature, reachMm: Math.min(feature.reachMm, 0.6 * roomMm, MOST_REACH_IN_LEAST * smallestReachMm) };
   });
   const features = all.filter((feature) => feature.reachMm >= smallestReachMm);
@@ -169,7 +176,7 @@ export function localFieldOf(solid: Solid, setup: Setup, smallestReachMm: number
     let best: Feature | null = null;
     let nearest = Infinity;
     for (const feature of features) {
-      const distance = Math.hypot(x - feature.x, y - feature.y);
+      const distance = distanceToCore(feature.core, x, y);
       if (distance < feature.reachMm && distance < nearest && feature.potential(x, y) > 0) {
         best = feature;
         nearest = distance;
