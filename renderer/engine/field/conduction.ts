@@ -38,6 +38,8 @@ export interface Conduction {
   readonly isLevel: boolean;
   /** Whether a depth step lies within two cells of the node. */
   readonly nearStep: (node: number) => boolean;
+  /** Whether a depth step runs between the node and its eight neighbours. */
+  readonly stepAround: (node: number) => boolean;
   /** Whether an insulator's outline or a round tray's wall lies within two cells of the node. */
   readonly nearInsulator: (node: number) => boolean;
 }
@@ -185,6 +187,13 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     slabThicknessAt,
     isLevel: plane.slopeX === 0 && plane.slopeY === 0,
     nearStep: (node) => (flags[node] & NEAR_STEP) !== 0,
+    stepAround: (node) => {
+      if ((flags[node] & NEAR_STEP) === 0) return false;
+      const x = (node % columns) * pitchXMm;
+      const y = Math.floor(node / columns) * pitchYMm;
+      const here = slabThicknessAt(x, y);
+      return [-1, 0, 1].some((b) => [-1, 0, 1].some((a) => slabThicknessAt(x + a * pitchXMm, y + b * pitchYMm) !== here));
+    },
     nearInsulator: (node) => (flags[node] & NEAR_INSULATOR) !== 0,
   };
 }

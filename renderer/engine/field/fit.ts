@@ -49,7 +49,8 @@ function linkSum(network: Network, node: number): number {
 function plainNodesOf(network: Network): (node: number) => boolean {
   const { conduction, grid } = network;
   return (node) =>
-    [node, node + 1, node - 1, node + grid.columns, node - grid.columns].every((one) => !conduction.nearStep(one) && !conduction.nearInsulator(one));
+    !conduction.stepAround(node) &&
+    [node, node + 1, node - 1, node + grid.columns, node - grid.columns].every((one) => !conduction.nearInsulator(one));
 }
 
 function fitBody(network: Network, body: number, field: LocalField, shared: ReadonlySet<number>, isPlain: (node: number) => boolean): Contact {
@@ -101,7 +102,7 @@ export function fitContacts(network: Network): FittedNetwork {
   const smallestReachMm = 2 * Math.max(grid.pitchXMm, grid.pitchYMm);
   const isPlain = plainNodesOf(network);
   const localFields = layout.conductors.map((conductor) => {
-    const others = [...layout.conductors, ...layout.insulators, ...layout.slabs].filter((other) => other !== conductor);
+    const others = [...layout.conductors, ...layout.insulators].filter((other) => other !== conductor);
     const clearanceMm = (x: number, y: number): number => Math.min(Infinity, ...others.map((other) => distanceToOutline(other.loops, x, y)));
     return localFieldOf(conductor, layout.setup, smallestReachMm, clearanceMm);
   });
