@@ -13,7 +13,7 @@ function ranksOf(volts: Float32Array, levels: Float64Array): Uint8Array {
   let rank = 0;
   for (let node = 0; node < volts.length; node++) {
     const value = volts[node];
-    if (value !== value) {
+    if (Number.isNaN(value)) {
       ranks[node] = NOTHING;
       continue;
     }

@@ -1,0 +1,146 @@
+import type { Setup } from "../../../shared-types/setup";
+import { radians } from "../../../shared-types/units";
+import type { PotentialField } from "../field/potential-field";
+import type { HoldsWater } from "../geometry/open-water";
+import { lengthOf, outlineOf, type Piece, pointAlong } from "../geometry/outline";
+import { waterDepthMm } from "../geometry/water-depth";
+
+/** Where a field line leaves metal: a place on the surface and one just off it, mm. */
+export interface LineSeed {
+  readonly onX: number;
+  readonly onY: number;
+  readonly offX: number;
+  readonly offY: number;
+}
+
+/** A short stretch of a conductor's outline and the current that leaves it. */
+interface Outflow {
+  readonly piece: Piece;
+  readonly fromShare: number;
+  readonly toShare: number;
+  /** Depth × field × length; what enters the metal counts as 0. */
+  readonly flux: number;
+}
+
+/** A loop's weakest stretch below this share of the mean is where the count of lines begins; else its first stretch is. */
+const CLEARLY_WEAK = 0.8;
+
+/** A place on a piece, and one `offMm` off it in the water (the solid lies on the left). */
+function seedOn(piece: Piece, share: number, offMm: number): LineSeed {
+  const [onX, onY] = pointAlong(piece, share);
+  let rightX: number;
+  let rightY: number;
+  if (piece.kind === "edge") {
+    const length = lengthOf(piece);
+    rightX = (piece.y1 - piece.y0) / length;
+    rightY = (piece.x0 - piece.x1) / length;
+  } else {
+    const outward = Math.sign(piece.sweepRad) / piece.radius;
+    rightX = outward * (onX - piece.cx);
+    rightY = outward * (onY - piece.cy);
+  }
+  return { onX, onY, offX: onX + offMm * rightX, offY: onY + offMm * rightY };
+}
+
+function outflowsOf(
+  loop: readonly Piece[],
+  field: PotentialField,
+  setup: Setup,
+  holdsWater: HoldsWater,
+  stepMm: number,
+  offMm: number,
+): Outflow[] {
+  return loop.flatMap((piece) => {
+    const count = Math.max(2, Math.ceil(lengthOf(piece) / stepMm));
+    return Array.from({ length: count }, (_, index): Outflow => {
+      const { onX, onY, offX, offY } = seedOn(piece, (index + 0.5) / count, offMm);
+      const stretch = { piece, fromShare: index / count, toShare: (index + 1) / count };
+      if (!holdsWater(offX, offY)) return { ...stretch, flux: 0 };
+      const { volts, fieldVPerM, directionDeg } = field.read(offX, offY);
+      if (volts === null) return { ...stretch, flux: 0 };
+      const angle = radians(directionDeg);
+      const outward = (fieldVPerM * (Math.cos(angle) * (offX - onX) + Math.sin(angle) * (offY - onY))) / offMm;
+      return { ...stretch, flux: (Math.max(0, outward) * waterDepthMm(setup, offX, offY) * lengthOf(piece)) / count };
+    });
+  });
+}
+
+/**
+ * The stretches of a loop, beginning where the least current leaves: a mirror axis of the layout, if there is one, runs
+ * through that place, so that the lines come out mirrored as well.
+ */
+function fromWeakest(outflows: readonly Outflow[]): Outflow[] {
+  const mean = outflows.reduce((sum, { flux }) => sum + flux, 0) / outflows.length;
+  let weakest = 0;
+  outflows.forEach(({ flux }, index) => {
+    if (flux < outflows[weakest].flux) weakest = index;
+  });
+  const least = outflows[weakest];
+  if (least.flux > CLEARLY_WEAK * mean) return [...outflows];
+  const before = outflows[(weakest + outflows.length - 1) % outflows.length].flux;
+  const after = outflows[(weakest + 1) % outflows.length].flux;
+  const bend = before - 2 * least.flux + after;
+  // The lowest point of the parabola through the three stretches.
+  const split = bend > 0 ? 0.5 + (before - after) / (2 * bend) : 0.5;
+  const splitShare = least.fromShare + split * (least.toShare - least.fromShare);
+  return [
+    { ...least, fromShare: splitShare, flux: (1 - split) * least.flux },
+    ...outflows.slice(weakest + 1),
+    ...outflows.slice(0, weakest),
+    { ...least, toShare: splitShare, flux: split * least.flux },
+  ];
+}
+
+/** The unbroken runs of a loop from which current leaves. */
+function runsOf(outflows: readonly Outflow[]): Outflow[][] {
+  const runs: Outflow[][] = [];
+  let run: Outflow[] = [];
+  for (const outflow of fromWeakest(outflows)) {
+    if (outflow.flux > 0) {
+      run.push(outflow);
+    } else if (run.length > 0) {
+      runs.push(run);
+      run = [];
+    }
+  }
+  return run.length > 0 ? [...runs, run] : runs;
+}
+
+function seedsOf(run: readonly Outflow[], count: number, offMm: number): LineSeed[] {
+  const total = run.reduce((sum, { flux }) => sum + flux, 0);
+  const seeds: LineSeed[] = [];
+  let passed = 0;
+  for (const { piece, fromShare, toShare, flux } of run) {
+    // A line in the middle of each equal portion of the current.
+    while (seeds.length < count && ((seeds.length + 0.5) / count) * total <= passed + flux) {
+      const within = (((seeds.length + 0.5) / count) * total - passed) / flux;
+      seeds.push(seedOn(piece, fromShare + within * (toShare - fromShare), offMm));
+    }
+    passed += flux;
+  }
+  return seeds;
+}
+
+/**
+ * Where field lines leave electrodes and loose conductors, so that neighbours on a surface have equal currents between them.
+ * @param lines how many lines the electrodes send out together, nearly.
+ * @param stepMm length of the stretches in which the current is summed.
+ * @param offMm how far off the metal its field is read.
+ */
+export function lineSeeds(
+  field: PotentialField,
+  setup: Setup,
+  lines: number,
+  holdsWater: HoldsWater,
+  stepMm: number,
+  offMm: number,
+): readonly LineSeed[] {
+  const surfaces = setup.parts.flatMap((part) => {
+    if (part.role === "insulator") return [];
+    const runs = outlineOf(part).flatMap((loop) => runsOf(outflowsOf(loop, field, setup, holdsWater, stepMm, offMm)));
+    return runs.map((run) => ({ role: part.role, run, flux: run.reduce((sum, { flux }) => sum + flux, 0) }));
+  });
+  const sent = surfaces.reduce((sum, { role, flux }) => sum + (role === "electrode" ? flux : 0), 0);
+  if (!(sent > 0)) return [];
+  return surfaces.flatMap(({ run, flux }) => seedsOf(run, Math.round((lines * flux) / sent), offMm));
+}
