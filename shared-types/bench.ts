@@ -243,6 +243,8 @@ export interface OperatingRegion {
   readonly depthRangeMm: readonly [number, number];
   readonly voltsRange: readonly [number, number];
   readonly boundaries: readonly RegionBoundary[];
+  /** Volts at which a millimetre does not move the last digit, as runs from low to high: just above each change of the meter's range. */
+  readonly unreadableVolts: readonly (readonly [number, number])[];
   readonly columns: readonly RegionColumn[];
   readonly present: readonly [number, number];
   readonly presentAllowed: boolean;

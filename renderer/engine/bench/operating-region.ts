@@ -163,6 +163,18 @@ function clashOf(rules: Rules): RegionClash {
   };
 }
 
+/** @returns what the runs leave out of 0 … `end`. */
+function between(runs: readonly (readonly [number, number])[], end: number): readonly (readonly [number, number])[] {
+  const gaps: (readonly [number, number])[] = [];
+  let from = 0;
+  for (const [low, high] of runs) {
+    if (low > from) gaps.push([from, Math.min(low, end)]);
+    from = high;
+  }
+  if (from < end) gaps.push([from, end]);
+  return gaps.filter(([low, high]) => high > low);
+}
+
 /**
  * The plane of depth and volts for the layout on the tray: what every rule allows, from one solved field and without another solve.
  * @returns boundaries, the allowed volts depth by depth, the middle of the region, or which two rules leave nothing between them.
@@ -182,6 +194,7 @@ export function operatingRegion(setup: Setup, bench: SolvedBench): OperatingRegi
     depthRangeMm: [0, depthEnd],
     voltsRange: [0, voltsEnd],
     boundaries: boundariesOf(rules, depthEnd, voltsEnd),
+    unreadableVolts: between(rules.readable?.runs ?? [[0, voltsEnd]], voltsEnd),
     columns,
     present: [depthMm, volts],
     presentAllowed: allowed(rules, depthMm, volts),

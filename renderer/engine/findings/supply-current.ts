@@ -1,5 +1,5 @@
 import type { PlanRule } from "./rule";
-import { finding, roundedDown, shown } from "./wording";
+import { current, finding, roundedDown, shown } from "./wording";
 
 /** The tray asks for more current than the supply gives: its volts would sag and every expected reading with them. */
 export const supplyCurrent: PlanRule = ({ setup, bench }) => {
@@ -11,9 +11,9 @@ export const supplyCurrent: PlanRule = ({ setup, bench }) => {
       code: "current-above-limit",
       severity: "stop",
       about: "supply.currentLimitA",
-      message: `The water would draw ${shown(currentA.value)} A, the supply gives ${shown(currentLimitA)} A: its volts sag and no reading holds.`,
-      measured: `${shown(currentA.value)} A`,
-      limit: { text: `${shown(currentLimitA)} A`, source: "the supply's own current limit" },
+      message: `The water would draw ${current(currentA.value)}, the supply gives ${current(currentLimitA)}: its volts sag and no reading holds.`,
+      measured: `${current(currentA.value)}`,
+      limit: { text: `${current(currentLimitA)}`, source: "the supply's own current limit" },
       remedy: `Set ${shown(volts)} V or less, use thinner water or less of it, or a stronger supply.`,
       edit: volts >= 0.001 ? { path: "supply.volts", value: volts } : null,
     }),

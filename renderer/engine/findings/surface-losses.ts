@@ -13,7 +13,7 @@ export const interfaceShare: PlanRule = ({ setup, bench }) => {
       code: "interface-loss",
       severity: "caution",
       about: "supply.frequencyHz",
-      message: `At ${shown(surface.frequencyHz)} Hz the electrodes' surfaces take about ${percent(surface.shareLost.typical)} of the volts (${percent(surface.shareLost.low)} to ${percent(surface.shareLost.high)}, an estimate).`,
+      message: `At ${shown(surface.frequencyHz)} Hz the electrodes' surfaces take about ${percent(surface.shareLost.typical)} of the volts (${percent(surface.shareLost.low)} to ${percent(surface.shareLost.high)}, an estimate); out of step with the water, which keeps ${shown(surface.waterVolts.typical)} V.`,
       measured: percent(surface.shareLost.typical),
       limit: { text: percent(INTERFACE_SHARE.value), source: "electrode double layers, published 5 to 50 µF/cm² (a margin of ours)" },
       remedy:

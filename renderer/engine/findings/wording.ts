@@ -10,6 +10,9 @@ export function shown(value: number, digits = 3): string {
   return String(Number(value.toFixed(Math.min(12, places))));
 }
 
+/** @returns a current for a sentence: in mA below 1 A. */
+export const current = (amperes: number): string => (Math.abs(amperes) < 1 ? `${shown(amperes * 1000)} mA` : `${shown(amperes)} A`);
+
 /** @returns a share as a percentage for a sentence. */
 export const percent = (share: number, digits = 2): string => `${shown(share * 100, digits)} %`;
 
