@@ -10,6 +10,14 @@ import type { FieldSolution, SolvedGrid } from "./solve-field";
 
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
 const FLOOR_SHARE = 1e-6;
+/** The bound (share of the span) where the coarser grid has no value to compare with, such as in a gap that it cannot see. */
+const UNSEEN_SHARE = 0.02;
+
+/** Bound of a potential from the same potential on the coarser grid: their whole difference, never less than the floor. */
+function voltsBound(near: number, far: number | undefined, span: number): number {
+  const difference = far === undefined || Number.isNaN(far) ? UNSEEN_SHARE * span : Math.abs(near - far);
+  return difference + FLOOR_SHARE * span;
+}
 
 /** One solved grid at given electrode potentials. */
 interface Superposed {
@@ -81,7 +89,6 @@ export function superposedField(solution: FieldSolution, setup: Setup, conductiv
   const span = spanV[1] - spanV[0];
   const near = superpose(fine, electrodeVolts);
   const far = superpose(coarse, electrodeVolts);
-  const floorV = FLOOR_SHARE * span;
   const amperes = (flux: number): number => (flux * conductivitySPerM) / MM_PER_M;
   const surfaceFields = largestSurfaceFields(fine, near);
   const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
@@ -93,7 +100,7 @@ export function superposedField(solution: FieldSolution, setup: Setup, conductiv
       id: part.id,
       role: electrode ? "electrode" : "floating",
       volts: near.bodyVolts[body],
-      voltsError: electrode ? 0 : Math.abs(near.bodyVolts[body] - far.bodyVolts[body]) + floorV,
+      voltsError: electrode ? 0 : voltsBound(near.bodyVolts[body], far.bodyVolts[body], span),
       currentA: amperes(flux),
       currentErrorA: amperes(fluxError),
       largestCurrentDensityAPerM2: conductivitySPerM * surfaceFields[body] * MM_PER_M,
@@ -123,14 +130,13 @@ export function superposedField(solution: FieldSolution, setup: Setup, conductiv
     if (waterDepthMm(setup, xMm, yMm) <= 0 || nearestIsLost(fine, xMm, yMm)) return nothing(xMm, yMm, null);
     const here = near.reader.at(xMm, yMm);
     if (here === null) return nothing(xMm, yMm, null);
-    const coarser = far.reader.at(xMm, yMm);
     const fieldVPerM = Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
     return {
       xMm,
       yMm,
       inside: null,
       volts: here.volts,
-      voltsError: (coarser === null ? 0.01 * span : Math.abs(here.volts - coarser.volts)) + floorV,
+      voltsError: voltsBound(here.volts, far.reader.at(xMm, yMm)?.volts, span),
       fieldVPerM,
       directionDeg: fieldVPerM === 0 ? 0 : degrees(Math.atan2(-here.slopeY, -here.slopeX)),
     };
