@@ -9,6 +9,8 @@ import { fieldLayout, geometryKey } from "./field/layout";
 import { type FieldSolution, solveField } from "./field/solve-field";
 import { type SuperposedField, superposedField } from "./field/superposition";
 import { findingsOf, geometryFindings } from "./findings/all-findings";
+import { equipotentialsOf } from "./lines/equipotentials";
+import { fieldLinesOf } from "./lines/field-lines";
 
 /** How a caller watches a plan being made and stops it. */
 export interface PlanOptions extends Pace {
@@ -23,23 +25,16 @@ export interface Planner {
 }
 
 /** Findings that leave no field to speak of. */
-const REFUSING_CODES: ReadonlySet<string> = new Set(["overlap", "short-circuit"]);
+const REFUSING_CODES: ReadonlySet<string> = new Set(["overlap", "short-circuit", "no-potential-difference"]);
+/** Field lines that the electrodes send out together. */
+const FIELD_LINES = 24;
 /** Solved geometries kept: enough for undo and redo to be instant. */
 const KEPT_SOLUTIONS = 4;
 
-function refusalOf(setup: Setup, findings: readonly Finding[]): PlanRefusal | null {
+function refusalOf(findings: readonly Finding[]): PlanRefusal | null {
   const blocking = findings.find(({ code }) => REFUSING_CODES.has(code));
-  if (blocking !== undefined) return { code: blocking.code, message: blocking.message, partIds: blocking.partIds, findings };
-  const taps = new Set(setup.parts.flatMap((part) => (part.role === "electrode" ? [part.tap] : [])));
-  if (taps.size >= 2) return null;
-  const electrodes = setup.parts.filter(({ role }) => role === "electrode");
-  const message =
-    electrodes.length === 0
-      ? "no part is an electrode; wire at least two parts to different taps"
-      : electrodes.length === 1
-        ? `only ${electrodes[0].id} is an electrode; wire a second part to another tap`
-        : "all electrodes sit at the same tap, so no current flows; give one of them another tap";
-  return { code: "no-potential-difference", message, partIds: electrodes.map(({ id }) => id), findings };
+  if (blocking === undefined) return null;
+  return { code: blocking.code, message: blocking.message, partIds: blocking.partIds, findings };
 }
 
 /** Resistance and shape factor between the two potentials in use; null where there are more than two. */
@@ -60,7 +55,10 @@ function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan 
   const twoPole = twoPoleOf(setup, field, conductivitySPerM);
   const amperesPerFlux = conductivitySPerM / MM_PER_M;
   const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
-  const equipotentials: Plan["equipotentials"] = [];
+  const { quality } = solution;
+  const [lowest, highest] = field.spanV;
+  const levels = Array.from({ length: setup.probing.levels }, (_, k) => lowest + ((k + 1) * (highest - lowest)) / (setup.probing.levels + 1));
+  const equipotentials = equipotentialsOf(field, setup, levels, quality);
   const probing: Plan["probing"] = { spanV: field.spanV, levels: [], checks: [] };
   const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
   const bench = benchOf(setup, facts);
@@ -76,7 +74,7 @@ function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan 
     conductors: field.conductors,
     picture: field.picture,
     equipotentials,
-    fieldLines: [],
+    fieldLines: fieldLinesOf(field, setup, FIELD_LINES, quality),
     probing,
     bench,
     findings: findingsOf(setup, bench, facts, probing),
@@ -97,7 +95,7 @@ export function createPlanner(): Planner {
   }
 
   async function plan(setup: Setup, quality: Quality, options: PlanOptions = {}): Promise<PlanOutcome> {
-    const refusal = refusalOf(setup, geometryFindings(setup));
+    const refusal = refusalOf(geometryFindings(setup));
     if (refusal !== null) return { ok: false, refusal };
     const key = `${quality} ${geometryKey(setup)}`;
     const started = options.now?.() ?? 0;
