@@ -1,4 +1,4 @@
-import type { Bounded, FieldReading, Finding, Plan, PlanOutcome, PlanRefusal, Quality } from "../../shared-types/plan";
+import type { Bounded, Equipotential, FieldLine, FieldReading, Finding, Plan, PlanOutcome, PlanRefusal, Quality } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { setupId } from "../../shared-types/setup-id";
 import { MM_PER_M } from "../../shared-types/units";
@@ -6,8 +6,8 @@ import { benchOf } from "./bench/bench";
 import { conductivityAtTemperatureSPerM } from "./bench/water-conductivity";
 import { drive, type Pace } from "./field/drive";
 import { fieldLayout, geometryKey } from "./field/layout";
-import { type FieldSolution, solveField } from "./field/solve-field";
-import { type SuperposedField, superposedField } from "./field/superposition";
+import { solveField } from "./field/solve-field";
+import { type SuperposedField, type Superposer, superposerOf } from "./field/superposition";
 import { findingsOf, geometryFindings } from "./findings/all-findings";
 import { equipotentialsOf } from "./lines/equipotentials";
 import { fieldLinesOf } from "./lines/field-lines";
@@ -49,22 +49,46 @@ function twoPoleOf(setup: Setup, field: SuperposedField, conductivitySPerM: numb
   return { resistanceOhm: { value: resistance, error: resistance * share }, shapeFactor: { value: shape, error: shape * share } };
 }
 
-function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan {
+/** A solved geometry with the lines drawn last: their places depend on taps and levels, not on volts. */
+interface Solved {
+  readonly superposed: Superposer;
+  lines: { readonly key: string; readonly volts: number; readonly equipotentials: readonly Equipotential[]; readonly fieldLines: readonly FieldLine[] } | null;
+}
+
+function linesOf(solved: Solved, setup: Setup, field: SuperposedField, quality: Quality): Pick<Plan, "equipotentials" | "fieldLines"> {
+  const { volts } = setup.supply;
+  const { levels: count } = setup.probing;
+  const key = `${count} ${setup.parts.map((part) => (part.role === "electrode" ? part.tap : "")).join(" ")}`;
+  if (solved.lines?.key !== key) {
+    const [lowest, highest] = field.spanV;
+    const levels = Array.from({ length: count }, (_, k) => lowest + ((k + 1) * (highest - lowest)) / (count + 1));
+    solved.lines = {
+      key,
+      volts,
+      equipotentials: equipotentialsOf(field, setup, levels, quality),
+      fieldLines,
+    };
+  }
+  const scale = volts / solved.lines.volts;
+  return {
+    equipotentials: solved.lines.equipotentials.map((line) => ({ ...line, volts: scale * line.volts })),
+    fieldLines: solved.lines.fieldLines,
+  };
+}
+
+function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: number): Plan {
   const conductivitySPerM = conductivityAtTemperatureSPerM(setup);
-  const field = superposedField(solution, setup, conductivitySPerM);
+  const field = solved.superposed(setup, conductivitySPerM);
   const twoPole = twoPoleOf(setup, field, conductivitySPerM);
   const amperesPerFlux = conductivitySPerM / MM_PER_M;
   const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
-  const { quality } = solution;
-  const [lowest, highest] = field.spanV;
-  const levels = Array.from({ length: setup.probing.levels }, (_, k) => lowest + ((k + 1) * (highest - lowest)) / (setup.probing.levels + 1));
-  const equipotentials = equipotentialsOf(field, setup, levels, quality);
+  const { equipotentials, fieldLines } = linesOf(solved, setup, field, quality);
   const probing: Plan["probing"] = { spanV: field.spanV, levels: [], checks: [] };
   const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
   const bench = benchOf(setup, facts);
   return {
     setupId: setupId(setup),
-    quality: solution.quality,
+    quality,
     numerics: { ...field.numerics, elapsedMs },
     spanV: field.spanV,
     resistanceOhm: facts.resistanceOhm,
@@ -74,7 +98,7 @@ function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan 
     conductors: field.conductors,
     picture: field.picture,
     equipotentials,
-    fieldLines: fieldLinesOf(field, setup, FIELD_LINES, quality),
+    fieldLines,
     probing,
     bench,
     findings: findingsOf(setup, bench, facts, probing),
@@ -83,11 +107,11 @@ function planOf(setup: Setup, solution: FieldSolution, elapsedMs: number): Plan 
 
 /** @returns a planner with an empty memory. */
 export function createPlanner(): Planner {
-  const kept = new Map<string, FieldSolution>();
+  const kept = new Map<string, Solved>();
 
-  function keep(key: string, solution: FieldSolution): void {
+  function keep(key: string, solved: Solved): void {
     kept.delete(key);
-    kept.set(key, solution);
+    kept.set(key, solved);
     for (const oldest of kept.keys()) {
       if (kept.size <= KEPT_SOLUTIONS) break;
       kept.delete(oldest);
@@ -99,17 +123,19 @@ export function createPlanner(): Planner {
     if (refusal !== null) return { ok: false, refusal };
     const key = `${quality} ${geometryKey(setup)}`;
     const started = options.now?.() ?? 0;
-    let solution = kept.get(key);
-    if (solution === undefined) solution = await drive(solveField(fieldLayout(setup), quality, options.onProgress), options);
-    keep(key, solution);
-    return { ok: true, plan: planOf(setup, solution, (options.now?.() ?? 0) - started) };
+    const solved = kept.get(key) ?? {
+      superposed: superposerOf(await drive(solveField(fieldLayout(setup), quality, options.onProgress), options)),
+      lines: null,
+    };
+    keep(key, solved);
+    return { ok: true, plan: planOf(setup, solved, quality, (options.now?.() ?? 0) - started) };
   }
 
   function sample(setup: Setup, placesMm: readonly (readonly [number, number])[]): readonly FieldReading[] | null {
     const geometry = geometryKey(setup);
-    const solution = (["reference", "print", "live"] as const).map((quality) => kept.get(`${quality} ${geometry}`)).find((one) => one !== undefined);
-    if (solution === undefined) return null;
-    const field = superposedField(solution, setup, conductivityAtTemperatureSPerM(setup));
+    const solved = (["reference", "print", "live"] as const).map((quality) => kept.get(`${quality} ${geometry}`)).find((one) => one !== undefined);
+    if (solved === undefined) return null;
+    const field = solved.superposed(setup, conductivityAtTemperatureSPerM(setup));
     return placesMm.map(([xMm, yMm]) => field.read(xMm, yMm));
   }
 

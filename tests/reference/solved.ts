@@ -1,6 +1,6 @@
 import { fieldLayout } from "../../renderer/engine/field/layout";
 import { solveField } from "../../renderer/engine/field/solve-field";
-import { type SuperposedField, superposedField } from "../../renderer/engine/field/superposition";
+import { type SuperposedField, superposerOf } from "../../renderer/engine/field/superposition";
 import { conductivityAtTemperatureSPerM } from "../../renderer/engine/bench/water-conductivity";
 import type { Quality } from "../../shared-types/plan";
 import { parseSetup } from "../../shared-types/parse-setup";
@@ -23,7 +23,7 @@ export function soundSetup(data: unknown): Setup {
 
 /** @returns the field of a setup at a quality. */
 export function solved(setup: Setup, quality: Quality): SuperposedField {
-  return superposedField(finished(solveField(fieldLayout(setup), quality)), setup, conductivityAtTemperatureSPerM(setup));
+  return superposerOf(finished(solveField(fieldLayout(setup), quality)))(setup, conductivityAtTemperatureSPerM(setup));
 }
 
 /** @returns the shape factor of a field between two potentials: flux over volts and depth at the tray's centre. */

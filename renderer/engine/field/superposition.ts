@@ -6,6 +6,7 @@ import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
 import type { PotentialField } from "./potential-field";
 import { type Reader, readerOf } from "./reading";
+import type { FieldLayout } from "./layout";
 import type { FieldSolution, SolvedGrid } from "./solve-field";
 
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
@@ -75,40 +76,29 @@ export interface SuperposedField extends PotentialField {
   readonly totalFlux: { readonly value: number; readonly error: number };
 }
 
-/**
- * Adds the unit potentials up for the volts and taps of a setup whose geometry is that of the solution. No solve is needed.
- * @param conductivitySPerM of the water at its temperature.
- */
-export function superposedField(solution: FieldSolution, setup: Setup, conductivitySPerM: number): SuperposedField {
-  const { fine, coarse, layout } = solution;
-  const electrodeVolts = layout.conductors.slice(0, layout.electrodeCount).map(({ index }) => {
+/** The field of a solution at a supply of 1 V and given taps; any volts are a multiple of it. */
+interface PerVolt {
+  readonly near: Superposed;
+  readonly far: Superposed;
+  readonly picture: FieldPicture;
+  readonly surfaceFields: readonly number[];
+}
+
+/** Gives the fields of one solution; the newest taps are remembered, so that other volts cost a multiplication. */
+export type Superposer = (setup: Setup, conductivitySPerM: number) => SuperposedField;
+
+const tapsOf = (layout: FieldLayout, setup: Setup): number[] =>
+  layout.conductors.slice(0, layout.electrodeCount).map(({ index }) => {
     const part = setup.parts[index];
-    return part.role === "electrode" ? part.tap * setup.supply.volts : 0;
+    return part.role === "electrode" ? part.tap : 0;
   });
-  const spanV = [Math.min(...electrodeVolts), Math.max(...electrodeVolts)] as const;
-  const span = spanV[1] - spanV[0];
-  const near = superpose(fine, electrodeVolts);
-  const far = superpose(coarse, electrodeVolts);
-  const amperes = (flux: number): number => (flux * conductivitySPerM) / MM_PER_M;
-  const surfaceFields = largestSurfaceFields(fine, near);
-  const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
-    const part = setup.parts[index];
-    const electrode = body < layout.electrodeCount;
-    const flux = electrode ? near.fluxes[body] : 0;
-    const fluxError = electrode ? Math.abs(flux - far.fluxes[body]) + FLOOR_SHARE * Math.abs(flux) : 0;
-    return {
-      id: part.id,
-      role: electrode ? "electrode" : "floating",
-      volts: near.bodyVolts[body],
-      voltsError: electrode ? 0 : voltsBound(near.bodyVolts[body], far.bodyVolts[body], span),
-      currentA: amperes(flux),
-      currentErrorA: amperes(fluxError),
-      largestCurrentDensityAPerM2: conductivitySPerM * surfaceFields[body] * MM_PER_M,
-    };
-  });
-  const totalOf = (superposed: Superposed): number => superposed.fluxes.reduce((sum, flux) => sum + Math.max(0, flux), 0);
-  const total = totalOf(near);
-  const { network, units } = fine;
+
+const sumOfPositive = (fluxes: readonly number[]): number => fluxes.reduce((sum, flux) => sum + Math.max(0, flux), 0);
+
+/** @returns readings of the field at `volts` times the potentials per volt. */
+function readingsOf(solution: FieldSolution, setup: Setup, perVolt: PerVolt, conductors: readonly ConductorReading[]): PotentialField["read"] {
+  const { volts } = setup.supply;
+  const span = volts * tapSpan(perVolt);
   const nothing = (xMm: number, yMm: number, inside: string | null): FieldReading => ({
     xMm,
     yMm,
@@ -118,45 +108,92 @@ export function superposedField(solution: FieldSolution, setup: Setup, conductiv
     fieldVPerM: 0,
     directionDeg: 0,
   });
-  const read = (xMm: number, yMm: number): FieldReading => {
+  return (xMm, yMm) => {
     if (!(depthFromWallMm(setup.tray, xMm, yMm) >= -1e-9)) return nothing(xMm, yMm, null);
     const index = setup.parts.findIndex((part) => covers(part, xMm, yMm));
     if (index >= 0) {
       const conductor = conductors.find(({ id }) => id === setup.parts[index].id);
       if (conductor === undefined || Number.isNaN(conductor.volts)) return nothing(xMm, yMm, setup.parts[index].id);
-      const { volts, voltsError } = conductor;
-      return { xMm, yMm, inside: conductor.id, volts, voltsError, fieldVPerM: 0, directionDeg: 0 };
+      const { id, volts: bodyVolts, voltsError } = conductor;
+      return { xMm, yMm, inside: id, volts: bodyVolts, voltsError, fieldVPerM: 0, directionDeg: 0 };
     }
-    if (waterDepthMm(setup, xMm, yMm) <= 0 || nearestIsLost(fine, xMm, yMm)) return nothing(xMm, yMm, null);
-    const here = near.reader.at(xMm, yMm);
+    if (waterDepthMm(setup, xMm, yMm) <= 0 || nearestIsLost(solution.fine, xMm, yMm)) return nothing(xMm, yMm, null);
+    const here = perVolt.near.reader.at(xMm, yMm);
     if (here === null) return nothing(xMm, yMm, null);
-    const fieldVPerM = Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
+    const coarser = perVolt.far.reader.at(xMm, yMm);
+    const fieldVPerM = volts * Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
     return {
       xMm,
       yMm,
       inside: null,
-      volts: here.volts,
-      voltsError: voltsBound(here.volts, far.reader.at(xMm, yMm)?.volts, span),
+      volts: volts * here.volts,
+      voltsError: voltsBound(volts * here.volts, coarser === null ? undefined : volts * coarser.volts, span),
       fieldVPerM,
       directionDeg: fieldVPerM === 0 ? 0 : degrees(Math.atan2(-here.slopeY, -here.slopeX)),
     };
   };
-  return {
-    numerics: {
-      pitchMm: Math.max(network.grid.pitchXMm, network.grid.pitchYMm),
-      unknowns: units.unknowns,
-      iterations: units.record.iterations,
-      relativeResidual: units.record.relativeResidual,
-      elapsedMs: 0,
-    },
-    spanV,
-    picture: pictureOf(fine, near),
-    conductors,
-    totalFlux: { value: total, error: Math.abs(total - totalOf(far)) + FLOOR_SHARE * total },
-    read,
-  };
 }
 
+function tapSpan({ near }: PerVolt): number {
+  const taps = near.bodyVolts.slice(0, near.fluxes.length);
+  return Math.max(...taps) - Math.min(...taps);
+}
+
+/**
+ * Prepares the fields of a solution at any volts, taps and conductivity: the unit potentials are added up. No solve is needed.
+ * The setups given to it must have the geometry of the solution.
+ */
+export function superposerOf(solution: FieldSolution): Superposer {
+  const { fine, coarse, layout } = solution;
+  let remembered: { readonly key: string; readonly perVolt: PerVolt } | null = null;
+
+  function perVoltFor(taps: readonly number[]): PerVolt {
+    const key = taps.join(" ");
+    if (remembered?.key === key) return remembered.perVolt;
+    const near = superpose(fine, taps);
+    const perVolt = { near, far: superpose(coarse, taps), picture: pictureOf(fine, near), surfaceFields: largestSurfaceFields(fine, near) };
+    remembered = { key, perVolt };
+    return perVolt;
+  }
+
+  return (setup, conductivitySPerM) => {
+    const taps = tapsOf(layout, setup);
+    const perVolt = perVoltFor(taps);
+    const { near, far, picture, surfaceFields } = perVolt;
+    const { volts } = setup.supply;
+    const span = volts * tapSpan(perVolt);
+    const amperes = (flux: number): number => (volts * flux * conductivitySPerM) / MM_PER_M;
+    const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
+      const electrode = body < layout.electrodeCount;
+      const flux = electrode ? near.fluxes[body] : 0;
+      return {
+        id: setup.parts[index].id,
+        role: electrode ? "electrode" : "floating",
+        volts: volts * near.bodyVolts[body],
+        voltsError: electrode ? 0 : voltsBound(volts * near.bodyVolts[body], volts * far.bodyVolts[body], span),
+        currentA: amperes(flux),
+        currentErrorA: electrode ? amperes(Math.abs(flux - far.fluxes[body]) + FLOOR_SHARE * Math.abs(flux)) : 0,
+        largestCurrentDensityAPerM2: volts * conductivitySPerM * surfaceFields[body] * MM_PER_M,
+      };
+    });
+    const total = sumOfPositive(near.fluxes);
+    const { network, units } = fine;
+    return {
+      numerics: {
+        pitchMm: Math.max(network.grid.pitchXMm, network.grid.pitchYMm),
+        unknowns: units.unknowns,
+        iterations: units.record.iterations,
+        relativeResidual: units.record.relativeResidual,
+        elapsedMs: 0,
+      },
+      spanV: [volts * Math.min(...taps), volts * Math.max(...taps)],
+      picture: { ...picture, volts: picture.volts.map((value) => volts * value) },
+      conductors,
+      totalFlux: { value: volts * total, error: volts * (Math.abs(total - sumOfPositive(far.fluxes)) + FLOOR_SHARE * total) },
+      read: readingsOf(solution, setup, perVolt, conductors),
+    };
+  };
+}
 /** Whether all nodes round a place lie where no electrode's potential reaches. */
 function nearestIsLost({ network }: SolvedGrid, xMm: number, yMm: number): boolean {
   const { columns, rows, pitchXMm, pitchYMm } = network.grid;
