@@ -11,6 +11,8 @@ import { type SuperposedField, type Superposer, superposerOf } from "./field/sup
 import { findingsOf, geometryFindings } from "./findings/all-findings";
 import { equipotentialsOf } from "./lines/equipotentials";
 import { fieldLinesOf } from "./lines/field-lines";
+import { evenLevels } from "./probing/levels";
+import { planProbes } from "./probing/plan-probes";
 
 /** How a caller watches a plan being made and stops it. */
 export interface PlanOptions extends Pace {
@@ -60,13 +62,11 @@ function linesOf(solved: Solved, setup: Setup, field: SuperposedField, quality: 
   const { levels: count } = setup.probing;
   const key = `${count} ${setup.parts.map((part) => (part.role === "electrode" ? part.tap : "")).join(" ")}`;
   if (solved.lines?.key !== key) {
-    const [lowest, highest] = field.spanV;
-    const levels = Array.from({ length: count }, (_, k) => lowest + ((k + 1) * (highest - lowest)) / (count + 1));
     solved.lines = {
       key,
       volts,
-      equipotentials: equipotentialsOf(field, setup, levels, quality),
-      fieldLines,
+      equipotentials: equipotentialsOf(field, setup, evenLevels(field.spanV, count), quality),
+      fieldLines: fieldLinesOf(field, setup, FIELD_LINES, quality),
     };
   }
   const scale = volts / solved.lines.volts;
@@ -83,7 +83,7 @@ function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: numbe
   const amperesPerFlux = conductivitySPerM / MM_PER_M;
   const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
   const { equipotentials, fieldLines } = linesOf(solved, setup, field, quality);
-  const probing: Plan["probing"] = { spanV: field.spanV, levels: [], checks: [] };
+  const probing = planProbes(setup, field, equipotentials);
   const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
   const bench = benchOf(setup, facts);
   return {
