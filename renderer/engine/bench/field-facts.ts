@@ -2,7 +2,7 @@ import type { Bounded } from "../../../shared-types/plan";
 import type { PotentialField } from "../field/potential-field";
 
 /** What the bench needs to know of a solved field; a `PotentialField` with its resistance and shape factor fits. */
-export interface FieldFacts extends Pick<PotentialField, "spanV" | "conductors" | "read"> {
+export interface FieldFacts extends Pick<PotentialField, "spanV" | "conductors" | "picture"> {
   /** Between the lowest and the highest tap; null where the electrodes sit at more than two potentials. */
   readonly resistanceOhm: Bounded | null;
   readonly shapeFactor: Bounded | null;

@@ -1,4 +1,5 @@
 import type { CircuitNumbers, MeterNumbers } from "../../../shared-types/bench";
+import { type FieldPicture, OWNER_WATER } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import { metres } from "../../../shared-types/units";
 import type { FieldFacts } from "./field-facts";
@@ -59,6 +60,22 @@ export function loadingShare(sourceOhm: number, inputMegohm: number, inputPicofa
   return 1 - 1 / Math.hypot(real, imaginary);
 }
 
+/**
+ * The field at the picture's node nearest to a place, mV/mm, by central differences: good enough for a median and far quicker
+ * than a careful reading. Null next to parts, walls and dry bed.
+ */
+function pictureFieldMvPerMm(picture: FieldPicture, xMm: number, yMm: number): number | null {
+  const { columns, rows, pitchXMm, pitchYMm, volts, owner } = picture;
+  const column = Math.round(xMm / pitchXMm);
+  const row = Math.round(yMm / pitchYMm);
+  if (column < 1 || row < 1 || column > columns - 2 || row > rows - 2) return null;
+  const node = row * columns + column;
+  if ([node, node - 1, node + 1, node - columns, node + columns].some((one) => owner[one] !== OWNER_WATER)) return null;
+  const alongX = (volts[node + 1] - volts[node - 1]) / (2 * pitchXMm);
+  const alongY = (volts[node + columns] - volts[node - columns]) / (2 * pitchYMm);
+  return Math.hypot(alongX, alongY) * 1000;
+}
+
 /** The value below which the given share of a sorted list lies. */
 const quantile = (sorted: readonly number[], share: number): number | null =>
   sorted.length === 0 ? null : sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))];
@@ -73,10 +90,8 @@ export function meterNumbers(setup: Setup, facts: FieldFacts, circuit: CircuitNu
   const highest = Math.max(Math.abs(facts.spanV[0]), Math.abs(facts.spanV[1]));
   const digit = digitVolts(meter.counts, supply.waveform, highest);
   const fields = reachablePlacesMm(setup)
-    .map(([x, y]) => facts.read(x, y))
-    .filter((reading) => reading.volts !== null && reading.inside === null)
-    // V/m and mV/mm are the same unit.
-    .map((reading) => reading.fieldVPerM)
+    .map(([x, y]) => pictureFieldMvPerMm(facts.picture, x, y))
+    .filter((field) => field !== null)
     .sort((a, b) => a - b);
   const median = quantile(fields, 0.5);
   return {

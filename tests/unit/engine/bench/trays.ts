@@ -1,4 +1,4 @@
-import type { ConductorReading, FieldReading } from "../../../../shared-types/plan";
+import { type ConductorReading, type FieldPicture, OWNER_WATER } from "../../../../shared-types/plan";
 import { parseSetup } from "../../../../shared-types/parse-setup";
 import type { Setup } from "../../../../shared-types/setup";
 import { conductivityAtTemperatureSPerM } from "../../../../renderer/engine/bench/water-conductivity";
@@ -56,6 +56,22 @@ export function channel(change: Json = {}): Setup {
   return parsed.value;
 }
 
+/** A picture of the uniform field, 2 mm apart. */
+function channelPicture(volts: number): FieldPicture {
+  const [columns, rows, pitch] = [131, 101, 2];
+  const share = (x: number): number => Math.min(1, Math.max(0, (x - 50) / CHANNEL_LENGTH_MM));
+  const at = (index: number): number => (index % columns) * pitch;
+  const inBar = (x: number): boolean => (x >= 40 && x <= 50) || (x >= 210 && x <= 220);
+  return {
+    columns,
+    rows,
+    pitchXMm: pitch,
+    pitchYMm: pitch,
+    volts: Float32Array.from({ length: columns * rows }, (_, index) => share(at(index)) * volts),
+    owner: Int16Array.from({ length: columns * rows }, (_, index) => (inBar(at(index)) ? (at(index) < 100 ? 0 : 1) : OWNER_WATER)),
+  };
+}
+
 /** @returns the exact field of the channel: uniform between the bars, all at one potential behind them. */
 export function channelFacts(setup: Setup): FieldFacts {
   const volts = setup.supply.volts;
@@ -71,16 +87,10 @@ export function channelFacts(setup: Setup): FieldFacts {
     currentErrorA: 0,
     largestCurrentDensityAPerM2: current / crossSectionM2,
   });
-  const read = (xMm: number, yMm: number): FieldReading => {
-    const share = Math.min(1, Math.max(0, (xMm - 50) / CHANNEL_LENGTH_MM));
-    const between = xMm > 50 && xMm < 210;
-    const fieldVPerM = between ? (volts / CHANNEL_LENGTH_MM) * 1000 : 0;
-    return { xMm, yMm, inside: null, volts: share * volts, voltsError: 0, fieldVPerM, directionDeg: 180 };
-  };
   return {
     spanV: [0, volts],
     conductors: [reading("A", 0, -1), reading("B", volts, 1)],
-    read,
+    picture: channelPicture(volts),
     resistanceOhm: { value: resistance, error: 0 },
     shapeFactor: { value: CHANNEL_WIDTH_MM / CHANNEL_LENGTH_MM, error: 0 },
   };
