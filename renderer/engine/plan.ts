@@ -3,6 +3,7 @@ import type { Setup } from "../../shared-types/setup";
 import { setupId } from "../../shared-types/setup-id";
 import { MM_PER_M } from "../../shared-types/units";
 import { benchOf } from "./bench/bench";
+import { probingWithInterface } from "./bench/probing-with-interface";
 import { conductivityAtTemperatureSPerM } from "./bench/water-conductivity";
 import { drive, type Pace } from "./field/drive";
 import { fieldLayout, geometryKey } from "./field/layout";
@@ -83,9 +84,10 @@ function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: numbe
   const amperesPerFlux = conductivitySPerM / MM_PER_M;
   const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
   const { equipotentials, fieldLines } = linesOf(solved, setup, field, quality);
-  const probing = planProbes(setup, field, equipotentials);
+  const fieldProbing = planProbes(setup, field, equipotentials);
   const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
   const bench = benchOf(setup, facts);
+  const probing = probingWithInterface(setup, fieldProbing, bench);
   return {
     setupId: setupId(setup),
     quality,
