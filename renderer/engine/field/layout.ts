@@ -69,6 +69,9 @@ export function wallThicknessMm(shape: Shape): number {
   }
 }
 
+/** @returns whether the water is equally deep everywhere: another depth then scales the currents and leaves the potentials. */
+export const isEvenlyDeep = ({ water }: Setup): boolean => water.tiltXDeg === 0 && water.tiltYDeg === 0 && water.slabs.length === 0;
+
 /**
  * A text that is equal for setups with the same field per volt: whatever changes it needs a new solve, nothing else does.
  * Volts, taps, conductivity, heights, names, supply, meter and probing are left out.
@@ -78,7 +81,7 @@ export function geometryKey(setup: Setup): string {
   const size = tray.shape === "rectangle" ? [tray.lengthMm, tray.widthMm] : [tray.diameterMm];
   return JSON.stringify([
     size,
-    water.depthMm,
+    isEvenlyDeep(setup) ? "even depth" : water.depthMm,
     water.tiltXDeg,
     water.tiltYDeg,
     water.slabs.map(({ xMm, yMm, turnDeg, thicknessMm, shape }) => [xMm, yMm, turnDeg, thicknessMm, shape]),

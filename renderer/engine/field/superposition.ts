@@ -6,7 +6,7 @@ import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
 import type { PotentialField } from "./potential-field";
 import { type Reader, readerOf } from "./reading";
-import type { FieldLayout } from "./layout";
+import { type FieldLayout, isEvenlyDeep } from "./layout";
 import type { FieldSolution, SolvedGrid } from "./solve-field";
 
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
@@ -162,7 +162,9 @@ export function superposerOf(solution: FieldSolution): Superposer {
     const { near, far, picture, surfaceFields } = perVolt;
     const { volts } = setup.supply;
     const span = volts * tapSpan(perVolt);
-    const amperes = (flux: number): number => (volts * flux * conductivitySPerM) / MM_PER_M;
+    // In evenly deep water the currents grow as the depth: div(σ h grad φ) = 0 with one h.
+    const deeper = isEvenlyDeep(setup) ? setup.water.depthMm / layout.setup.water.depthMm : 1;
+    const amperes = (flux: number): number => (volts * deeper * flux * conductivitySPerM) / MM_PER_M;
     const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
       const electrode = body < layout.electrodeCount;
       const flux = electrode ? near.fluxes[body] : 0;
@@ -189,7 +191,7 @@ export function superposerOf(solution: FieldSolution): Superposer {
       spanV: [volts * Math.min(...taps), volts * Math.max(...taps)],
       picture: { ...picture, volts: picture.volts.map((value) => volts * value) },
       conductors,
-      totalFlux: { value: volts * total, error: volts * (Math.abs(total - sumOfPositive(far.fluxes)) + FLOOR_SHARE * total) },
+      totalFlux: { value: volts * deeper * total, error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + FLOOR_SHARE * total) },
       read: readingsOf(solution, setup, perVolt, conductors),
     };
   };
