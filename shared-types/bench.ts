@@ -5,7 +5,7 @@ import type { Bounded } from "./plan";
  * `Bounded` is used where the program's own numerical error enters; estimates from handbook values say so in their description.
  */
 
-export type WaterKind = "distilled" | "thin" | "tap" | "salty" | "brine";
+export type WaterKind = "distilled" | "low" | "tap" | "salty" | "brine";
 
 /** Salt (NaCl) that brings water from one conductivity to another; both at 25 °C. */
 export interface SaltDose {

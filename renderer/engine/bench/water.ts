@@ -24,7 +24,7 @@ export const BRINE_ABOVE_US_PER_CM = 20_000;
 /** @returns what sort of water a conductivity (µS/cm at 25 °C) speaks of. */
 export function waterKind(conductivityUsPerCm: number): WaterKind {
   if (conductivityUsPerCm < DISTILLED_BELOW_US_PER_CM) return "distilled";
-  if (conductivityUsPerCm < TAP_ABOVE_US_PER_CM) return "thin";
+  if (conductivityUsPerCm < TAP_ABOVE_US_PER_CM) return "low";
   if (conductivityUsPerCm <= DRINKING_LIMIT_US_PER_CM) return "tap";
   return conductivityUsPerCm <= BRINE_ABOVE_US_PER_CM ? "salty" : "brine";
 }

@@ -82,3 +82,10 @@ export function countBySeverity(findings: readonly Finding[]): Readonly<Record<S
   for (const finding of findings) counts[finding.severity] += 1;
   return counts;
 }
+
+/** @returns the count by severity as one line of plain words: "1 stop, 2 cautions, 3 notes". */
+export function countSentence(findings: readonly Finding[]): string {
+  const counts = countBySeverity(findings);
+  const plural = (count: number, word: string): string => `${count} ${word}${count === 1 ? "" : "s"}`;
+  return `${plural(counts.stop, "stop")}, ${plural(counts.caution, "caution")}, ${plural(counts.note, "note")}`;
+}

@@ -19,7 +19,7 @@ export const electrodeMetal: SetupRule = (setup) => {
           code: "metal-unsuitable",
           severity: "caution",
           partIds,
-          message: `${listed(parts.map(partLabel))} of ${word}: ${material.unsuitable}.`,
+          message: `${listed(parts.map(partLabel))} ${parts.length === 1 ? "is" : "are"} of ${word}: ${material.unsuitable}.`,
           measured: word,
           limit: { text: "brass, copper, stainless steel or graphite", source: CORROSION },
           remedy: "Use brass, copper, stainless steel or graphite.",
@@ -48,7 +48,7 @@ export const solubleAnode: PlanRule = ({ setup, bench }) => {
   if (dissolving.length === 0) return [];
   const grams = dissolving.reduce((sum, anode) => sum + (anode.lostG ?? 0), 0);
   const parts = setup.parts.filter((part) => dissolving.some((anode) => anode.id === part.id));
-  const measured = `up to ${shown(grams, 2)} g over the session`;
+  const measured = `up to ${grams < 0.1 ? `${shown(grams * 1000, 2)} mg` : `${shown(grams, 2)} g`} over the session`;
   return [
     finding({
       code: "anode-dissolves",

@@ -7,7 +7,7 @@ export const gasVolume: PlanRule = ({ bench }) => {
   const { gas } = bench;
   if (gas === null || gas.hydrogenVolPercent <= HYDROGEN_CAUTION.value) return [];
   const flammable = gas.hydrogenVolPercent >= HYDROGEN_FLAMMABLE.value;
-  const measured = `${shown(gas.hydrogenVolPercent, 2)} vol % in ${shown(gas.hoodLitres)} L`;
+  const measured = `${shown(gas.hydrogenVolPercent)} vol % in ${shown(gas.hoodLitres)} L`;
   return [
     finding({
       code: "hydrogen",
@@ -26,13 +26,13 @@ export const gasVolume: PlanRule = ({ bench }) => {
 export const chlorineInRoom: PlanRule = ({ setup, bench }) => {
   const { gas } = bench;
   if (gas === null || gas.chlorineRoomPpm <= CHLORINE_CEILING.value) return [];
-  const measured = `${shown(gas.chlorineRoomPpm, 2)} ppm in ${shown(setup.session.roomCubicMetres)} m³`;
+  const measured = `${shown(gas.chlorineRoomPpm)} ppm in ${shown(setup.session.roomCubicMetres)} m³`;
   return [
     finding({
       code: "chlorine-in-room",
       severity: "stop",
       about: "supply.waveform",
-      message: `All trays together can make ${measured} of closed room, enough to hurt.`,
+      message: `All trays together can make ${measured} of closed room, more than lungs should meet for a quarter of an hour.`,
       measured,
       limit: CHLORINE_CEILING,
       remedy: "Never DC with chloride: use AC or another salt.",

@@ -14,7 +14,7 @@ export const meterLoading: PlanRule = ({ setup, bench }) => {
       severity: "caution",
       about: "meter.inputMegohm",
       message: `The meter draws the reading down by ${percent(loadingShare)}: ${shown(source)} kΩ at the probe against ${shown(inputImpedanceOhm / 1e6)} MΩ at its input.`,
-      measured: percent(loadingShare),
+      measured: percent(loadingShare, 3),
       limit: { text: percent(LOADING_SHARE.value), source: sourceOf(LOADING_SHARE) },
       remedy: `Use a meter of higher input resistance, a thicker tip than ${shown(setup.probing.probeTipMm)} mm, or water that conducts better; never a low-impedance mode.`,
     }),

@@ -14,7 +14,7 @@ export const supplyCurrent: PlanRule = ({ setup, bench }) => {
       message: `The water would draw ${current(currentA.value)}, the supply gives ${current(currentLimitA)}: its volts sag and no reading holds.`,
       measured: `${current(currentA.value)}`,
       limit: { text: `${current(currentLimitA)}`, source: "the supply's own current limit" },
-      remedy: `Set ${shown(volts)} V or less, use thinner water or less of it, or a stronger supply.`,
+      remedy: `Set ${shown(volts)} V or less, use water that conducts less, or less of it, or a stronger supply.`,
       edit: volts >= 0.001 ? { path: "supply.volts", value: volts } : null,
     }),
   ];

@@ -6,6 +6,8 @@ import { finding, percent, roundedUp, shown } from "./wording";
 export const interfaceShare: PlanRule = ({ setup, bench }) => {
   const surface = bench.interface;
   if (surface.waveform === "dc" || surface.shareLost.typical <= INTERFACE_SHARE.value) return [];
+  const { low, typical, high } = surface.shareLost;
+  const range = low < high ? ` (${percent(low)} to ${percent(high)}, an estimate)` : "";
   const needed = roundedUp(surface.frequencyForTwoPercentHz, 5);
   const top = Math.min(setup.meter.acHighHz, ADVISABLE_HIGH_HZ.value);
   return [
@@ -13,13 +15,13 @@ export const interfaceShare: PlanRule = ({ setup, bench }) => {
       code: "interface-loss",
       severity: "caution",
       about: "supply.frequencyHz",
-      message: `At ${shown(surface.frequencyHz)} Hz the electrodes' surfaces take about ${percent(surface.shareLost.typical)} of the volts (${percent(surface.shareLost.low)} to ${percent(surface.shareLost.high)}, an estimate); out of step with the water, which keeps ${shown(surface.waterVolts.typical)} V.`,
-      measured: percent(surface.shareLost.typical),
+      message: `At ${shown(surface.frequencyHz)} Hz the electrodes' surfaces take about ${percent(typical)} of the volts${range}; since they are out of step with the water's, ${shown(surface.waterVolts.typical, 4)} V stay across the water.`,
+      measured: percent(typical, 3),
       limit: { text: percent(INTERFACE_SHARE.value), source: "electrode double layers, published 5 to 50 µF/cm² (a margin of ours)" },
       remedy:
         needed <= top
-          ? `Raise the frequency to ${shown(needed, 4)} Hz, use thinner water, or let the readings allow for the loss.`
-          : "Use thinner water or electrodes with more wetted face, or let the readings allow for the loss.",
+          ? `Raise the frequency to ${shown(needed, 4)} Hz, use water that conducts less, or let the readings allow for the loss.`
+          : "Use water that conducts less, or electrodes with more wetted face, or let the readings allow for the loss.",
       edit: needed <= top ? { path: "supply.frequencyHz", value: needed } : null,
     }),
   ];
@@ -45,10 +47,10 @@ export const alternatingGas: PlanRule = ({ bench }) => {
       message: `At its densest place ${measured} leaves the metal, more than the double layer carries: fine bubbles and a changing loss are likely there.`,
       measured,
       limit: {
-        text: `${shown(surface.gasFreeCurrentDensityAPerM2 / 10, 2)} mA/cm²`,
-        source: "2πfC·0.5 V (derived; an estimate)",
+        text: `${shown(surface.gasFreeCurrentDensityAPerM2 / 10)} mA/cm²`,
+        source: "2πfC·0.5 V (derived, an estimate)",
       },
-      remedy: "Lower the volts, round the corners, or use thinner water.",
+      remedy: "Lower the volts, round the corners, or use water that conducts less.",
     }),
   ];
 };

@@ -1,5 +1,5 @@
 import { isSaltSolution } from "../bench/water-conductivity";
-import { dryHandsLimit, UNLOADED_RISE, wetHandsLimit } from "./limits";
+import { dryHandsLimit, sourceOf, UNLOADED_RISE, wetHandsLimit } from "./limits";
 import type { SetupRule } from "./rule";
 import { finding, shown } from "./wording";
 
@@ -34,8 +34,8 @@ export const touchVoltage: SetupRule = (setup) => {
         severity: "note",
         about: "supply.openCircuitVolts",
         message: `A small transformer marked ${shown(volts)} V can stand near ${might} V with nothing connected, above the ${wet.value} V for wet hands.`,
-        measured,
-        limit: UNLOADED_RISE,
+        measured: `${measured} stated, unloaded unknown`,
+        limit: { text: `${wet.value} ${wet.unit} with nothing connected`, source: `${sourceOf(wet)}; ${sourceOf(UNLOADED_RISE)}` },
         remedy: "Measure the supply with its leads open and enter that as the open-circuit voltage.",
         safety: true,
       }),

@@ -24,7 +24,7 @@ export const freeboard: SetupRule = (setup) => {
         ? `The water stands ${shown(deepestMm)} mm deep at a wall of ${shown(setup.tray.wallHeightMm)} mm: it runs over.`
         : `Only ${shown(freeboardMm, 2)} mm of wall stand above the water at its deepest side; a nudge spills it.`,
       measured: `${shown(freeboardMm, 2)} mm`,
-      limit: FREEBOARD,
+      limit: spills ? { text: "water lower than the wall", source: "the tray's wall" } : FREEBOARD,
       remedy: depthMm >= LEAST_DEPTH_MM ? `Fill to ${shown(depthMm)} mm, or take a tray with a higher wall.` : "Take a tray with a higher wall, or tilt it less.",
       edit: depthMm >= LEAST_DEPTH_MM ? { path: "water.depthMm", value: depthMm } : null,
       safety: true,
@@ -45,9 +45,9 @@ export const tooShallowForTilt: SetupRule = (setup) => {
       severity: "caution",
       about: "water.depthMm",
       message: `A tilt of ${UNNOTICED_TILT_DEG}° that nobody notices changes this depth by ${percent(depthShare)} and shifts readings by up to ${percent(share)} of the span.`,
-      measured: percent(share),
+      measured: percent(share, 3),
       limit: { text: percent(TILT_READING_SHARE.value), source: sourceOf(TILT_READING_SHARE) },
-      remedy: `Fill to ${shown(depthMm)} mm or more, or level the tray with a dial gauge.`,
+      remedy: `Fill to ${shown(depthMm)} mm or more, or level the tray more finely.`,
       edit: depthMm <= MOST_DEPTH_MM ? { path: "water.depthMm", value: depthMm } : null,
     }),
   ];

@@ -31,7 +31,7 @@ export const waterKindFits: SetupRule = (setup) => {
         message: `Water of ${measured} is salty: it draws needless current and the electrodes' surfaces take more of the volts.`,
         measured,
         limit: NEEDLESS_CONDUCTIVITY,
-        remedy: "Use tap water, or thin the brine.",
+        remedy: "Use tap water, or dilute it.",
       }),
     ];
   }
