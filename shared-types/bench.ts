@@ -133,7 +133,7 @@ export interface MeterNumbers {
   readonly acHighHz: number;
   /** True on DC, whose ranges know no frequency. */
   readonly frequencyWithinMeter: boolean;
-  /** Field where the probe can go: the median place, and the place below which a tenth of the water lies. Null without reachable water. */
+  /** Field along the equipotentials where the probe can go: the median, and what a tenth of their length falls below. Null without any. */
   readonly medianFieldMvPerMm: number | null;
   readonly weakFieldMvPerMm: number | null;
   /** Median field against one digit. */

@@ -76,9 +76,19 @@ function pictureFieldMvPerMm(picture: FieldPicture, xMm: number, yMm: number): n
   return Math.hypot(alongX, alongY) * 1000;
 }
 
-/** The value below which the given share of a sorted list lies. */
-const quantile = (sorted: readonly number[], share: number): number | null =>
-  sorted.length === 0 ? null : sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))];
+/**
+ * The field below which a given share of the equipotentials' length lies. Lines at even steps lie the denser the stronger the
+ * field, so that a place counts in proportion to its field (coarea formula); water at one potential holds no line and counts nothing.
+ */
+function fieldAlongLines(sorted: readonly number[], share: number): number | null {
+  const total = sorted.reduce((sum, field) => sum + field, 0);
+  let passed = 0;
+  for (const field of sorted) {
+    passed += field;
+    if (passed >= share * total) return field;
+  }
+  return null;
+}
 
 /** @returns loading, range, digit, frequency and the field against the digit. */
 export function meterNumbers(setup: Setup, facts: FieldFacts, circuit: CircuitNumbers): MeterNumbers {
@@ -93,7 +103,7 @@ export function meterNumbers(setup: Setup, facts: FieldFacts, circuit: CircuitNu
     .map(([x, y]) => pictureFieldMvPerMm(facts.picture, x, y))
     .filter((field) => field !== null)
     .sort((a, b) => a - b);
-  const median = quantile(fields, 0.5);
+  const median = fieldAlongLines(fields, 0.5);
   return {
     tipResistanceOhm: tip,
     trayResistanceOhm: tray,
@@ -107,7 +117,7 @@ export function meterNumbers(setup: Setup, facts: FieldFacts, circuit: CircuitNu
     acHighHz: meter.acHighHz,
     frequencyWithinMeter: frequencyHz === 0 || (frequencyHz >= meter.acLowHz && frequencyHz <= meter.acHighHz),
     medianFieldMvPerMm: median,
-    weakFieldMvPerMm: quantile(fields, 0.1),
+    weakFieldMvPerMm: fieldAlongLines(fields, 0.1),
     digitsPerMm: median === null ? null : median / (digit * 1000),
   };
 }

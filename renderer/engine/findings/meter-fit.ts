@@ -73,7 +73,7 @@ export const readableGradient: PlanRule = ({ setup, bench }) => {
       code: "gradient-unreadable",
       severity: "caution",
       about: "supply.volts",
-      message: `At the median place a millimetre changes the reading by ${shown(medianFieldMvPerMm, 2)} mV, less than one digit (${shown(digitVolts * 1000)} mV).`,
+      message: `Along half of the lines a millimetre changes the reading by no more than ${shown(medianFieldMvPerMm, 2)} mV, less than one digit (${shown(digitVolts * 1000)} mV).`,
       measured: `${shown(digitsPerMm, 2)} digit per mm`,
       limit: DIGITS_PER_MM,
       remedy: allowed
