@@ -37,21 +37,28 @@ const PREP_ROOM = {
   meter: { inputMegohm: 10, counts: 2000, accuracyPercent: 1, accuracyDigits: 3 },
 };
 
+/** What an example gives itself; the rest is the prep room's. */
+interface OwnPart {
+  readonly title: string;
+  readonly notes: string;
+  readonly parts: readonly object[];
+  readonly tray?: object;
+  readonly water?: object;
+  readonly probing?: object;
+}
+
 /**
  * @param own what differs from the prep room's tray, water, supply and meter.
  * @returns the validated setup of an example; a wrong one is a fault of ours and throws.
  */
-export function exampleSetup(own: {
-  readonly title: string;
-  readonly notes: string;
-  readonly parts: readonly object[];
-  readonly water?: object;
-  readonly probing?: object;
-}): Setup {
-  const parsed = parseSetup({ ...PREP_ROOM, ...own, water: { ...PREP_ROOM.water, ...own.water } });
+export function exampleSetup(own: OwnPart): Setup {
+  const parsed = parseSetup({ ...PREP_ROOM, ...own, tray: own.tray ?? PREP_ROOM.tray, water: { ...PREP_ROOM.water, ...own.water } });
   if (!parsed.ok) throw new Error(`the example "${own.title}" is no setup: ${parsed.problems.map(({ message }) => message).join("; ")}`);
   return parsed.value;
 }
+
+/** The prep room's round tray: a ring lies just inside its wall. */
+export const ROUND_TRAY = { shape: "circle", diameterMm: 190, wallHeightMm: 40, baseMm: 3, baseMaterial: "acrylic" };
 
 /** The pair of bars that several examples share: 100 mm long, 160 mm of water between them (a usual distance; common practice, no source). */
 export const BAR_PAIR: readonly object[] = [

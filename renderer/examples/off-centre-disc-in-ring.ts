@@ -5,13 +5,13 @@
  * (bipolar coordinates): with the limit points of both circles on the line of centres, φ is linear in the logarithm of the
  * ratio of the distances from them.
  */
-import { type Example, exampleSetup } from "./example";
+import { type Example, exampleSetup, ROUND_TRAY } from "./example";
 
 const VOLTS = 6;
-const DISC_MM = 30;
-const RING_MM = 150;
-const OFFSET_MM = 25;
-const MIDDLE = { xMm: 150, yMm: 100 };
+const DISC_MM = 40;
+const RING_MM = 172;
+const OFFSET_MM = 30;
+const MIDDLE = { xMm: 95, yMm: 95 };
 
 /** Distances of the two limit points from the ring's middle, towards the disc: their product is R², and that from the disc's middle r². */
 const sum = (RING_MM ** 2 / 4 - DISC_MM ** 2 / 4 + OFFSET_MM ** 2) / OFFSET_MM;
@@ -35,6 +35,8 @@ export const offCentreDiscInRing: Example = {
   setup: exampleSetup({
     title: "Disc off the centre of a ring",
     notes: "Saltmarsh College, physics prep room. Where would the insulation of this cable break down first?",
+    tray: ROUND_TRAY,
+    water: { conductivityUsPerCm: 200 },
     parts: [
       {
         id: "A",
@@ -45,9 +47,9 @@ export const offCentreDiscInRing: Example = {
         yMm: MIDDLE.yMm,
         shape: { kind: "disc", diameterMm: DISC_MM },
       },
-      { id: "B", name: "Ring", role: "electrode", tap: 0, ...MIDDLE, shape: { kind: "ring", outerMm: RING_MM + 10, innerMm: RING_MM } },
+      { id: "B", name: "Ring", role: "electrode", tap: 0, ...MIDDLE, shape: { kind: "ring", outerMm: RING_MM + 8, innerMm: RING_MM } },
     ],
-    probing: { levels: 7, pointsPerLevel: 8, wallClearanceMm: 3, partClearanceMm: 3 },
+    probing: { levels: 7, pointsPerLevel: 8, partClearanceMm: 2 },
   }),
   known: {
     source: "2π/acosh[(D² + d² − 4z²)/(2Dd)], Incropera and DeWitt, table 4.1 (exact); bipolar coordinates",
@@ -57,7 +59,7 @@ export const offCentreDiscInRing: Example = {
     },
     currents: [],
     conductors: [],
-    places: [at(55, 0), at(25, 25), at(-20, 10), at(0, -45), at(-55, -30)],
+    places: [at(65, 0), at(30, 32), at(-20, 10), at(0, -45), at(-55, -30)],
     voltsWithin: 2e-5,
   },
 };

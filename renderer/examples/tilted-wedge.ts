@@ -11,12 +11,13 @@ import { degrees } from "../../shared-types/units";
 import { type Example, exampleSetup } from "./example";
 
 const VOLTS = 6;
-/** Fall of the bed: 1 mm in 10 mm. With 9 mm of water at the centre the waterline lies 90 mm left of it. */
+/** Fall of the bed: 1 mm in 10 mm. With 5.5 mm of water at the centre of a tray 190 mm long the waterline lies at 40 mm. */
 const SLOPE = 0.1;
-const CENTRE_DEPTH_MM = 9;
-const WATERLINE = { xMm: 150 - CENTRE_DEPTH_MM / SLOPE, yMm: 100 };
-const INNER_MM = 20;
-const OUTER_MM = 85;
+const CENTRE_DEPTH_MM = 5.5;
+const TRAY = { shape: "rectangle", lengthMm: 190, widthMm: 300, wallHeightMm: 40, baseMm: 3, baseMaterial: "acrylic" };
+const WATERLINE = { xMm: TRAY.lengthMm / 2 - CENTRE_DEPTH_MM / SLOPE, yMm: TRAY.widthMm / 2 };
+const INNER_MM = 35;
+const OUTER_MM = 135;
 const curvature = 1 / INNER_MM - 1 / OUTER_MM;
 
 const at = (x: number, y: number) => ({
@@ -32,8 +33,9 @@ export const tiltedWedge: Example = {
   setup: exampleSetup({
     title: "Spheres in a tilted wedge",
     notes:
-      "Saltmarsh College, physics prep room. Prop the right end down until the waterline runs through the disc's centre; the left 60 mm stay dry on purpose.",
-    water: { depthMm: CENTRE_DEPTH_MM, tiltXDeg: degrees(Math.atan(SLOPE)) },
+      "Saltmarsh College, physics prep room. Prop the right end down until the waterline runs through the disc's centre; the left 40 mm stay dry on purpose.",
+    tray: TRAY,
+    water: { conductivityUsPerCm: 200, depthMm: CENTRE_DEPTH_MM, tiltXDeg: degrees(Math.atan(SLOPE)) },
     parts: [
       { id: "A", name: "Inner sphere", role: "electrode", tap: 1, ...WATERLINE, shape: { kind: "disc", diameterMm: 2 * INNER_MM } },
       {
@@ -45,14 +47,14 @@ export const tiltedWedge: Example = {
         shape: { kind: "arc", outerMm: 2 * OUTER_MM + 12, innerMm: 2 * OUTER_MM, sweepDeg: 180 },
       },
     ],
-    probing: { levels: 7, pointsPerLevel: 7, wallClearanceMm: 5, partClearanceMm: 3 },
+    probing: { levels: 7, pointsPerLevel: 7, partClearanceMm: 2.5 },
   }),
   known: {
     source: "field between concentric spheres, by the wedge's analogy with axial symmetry (exact)",
     shapeFactor: { value: (2 * SLOPE) / (CENTRE_DEPTH_MM * curvature), within: 2e-4 },
     currents: [],
     conductors: [],
-    places: [at(40, 0), at(5, 50), at(30, 40), at(60, -45), at(25, -60)],
+    places: [at(45, 0), at(5, 60), at(40, 50), at(90, -60), at(30, -100)],
     voltsWithin: 2e-4,
   },
 };
