@@ -1,4 +1,6 @@
-import { boundsOf, chainOf, outlineOf } from "../../renderer/engine/geometry/outline";
+import { gapMm, wallGapMm } from "../../renderer/engine/geometry/clearance";
+import { boundsOf, outlineOf } from "../../renderer/engine/geometry/outline";
+import { outlined } from "../../renderer/engine/geometry/overlap";
 import { covers, distanceToOutline } from "../../renderer/engine/geometry/signed-distance";
 import { depthFromWallMm, traySizeMm } from "../../renderer/engine/geometry/tray-outline";
 import type { PlacedShape, Setup } from "../../shared-types/setup";
@@ -15,26 +17,7 @@ export function seededNumbers(seed: number): () => number {
   };
 }
 
-/** Whether two shapes keep at least `gapMm` between them (neither covers the other's outline). */
-function apart(a: PlacedShape, b: PlacedShape, gapMm: number): boolean {
-  const [loopsA, loopsB] = [outlineOf(a), outlineOf(b)];
-  const clear = (one: PlacedShape, oneLoops: typeof loopsA, otherLoops: typeof loopsA): boolean =>
-    otherLoops.every((loop) => {
-      const chain = chainOf(loop, 0.2);
-      return chain.every(([x, y], index) => {
-        const [nextX, nextY] = chain[(index + 1) % chain.length];
-        return [0, 0.5].every((share) => {
-          const px = x + share * (nextX - x);
-          const py = y + share * (nextY - y);
-          return !covers(one, px, py) && distanceToOutline(oneLoops, px, py) >= gapMm;
-        });
-      });
-    });
-  return clear(a, loopsA, loopsB) && clear(b, loopsB, loopsA);
-}
-
-const insideTray = (tray: Setup["tray"], placed: PlacedShape, gapMm: number): boolean =>
-  outlineOf(placed).every((loop) => chainOf(loop, 0.2).every(([x, y]) => depthFromWallMm(tray, x, y) >= gapMm));
+const apart = (a: PlacedShape, b: PlacedShape, leastMm: number): boolean => gapMm(outlined(a), outlined(b)) >= leastMm;
 
 export interface RandomSetupOptions {
   readonly insulators: boolean;
@@ -102,7 +85,7 @@ export function randomSetup(seed: number, { insulators, slabs, tilt }: RandomSet
     } catch {
       continue;
     }
-    if (!insideTray(base.tray, one, 3) || !placed.every((other) => apart(one, other, 3))) continue;
+    if (wallGapMm(outlined(one), base.tray) < 3 || !placed.every((other) => apart(one, other, 3))) continue;
     parts.push(part);
     placed.push(one);
   }

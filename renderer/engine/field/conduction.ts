@@ -10,6 +10,8 @@ import { markNear } from "./ownership";
 
 const NEAR_INSULATOR = 1;
 const NEAR_STEP = 2;
+/** Within so many cells of the waterline the depth changes too fast for local potentials to hold. */
+const WATERLINE_CELLS = 4;
 
 /** A plane of depth: depth at (x, y) = at0 + slopeX·x + slopeY·y, mm. */
 export interface BedPlane {
@@ -34,6 +36,8 @@ export interface Conduction {
   readonly depthAt: (x: number, y: number) => number;
   /** Thickness of the slabs at a place, mm. */
   readonly slabThicknessAt: (x: number, y: number) => number;
+  /** Whether a place lies within a few cells of the waterline of a tilted tray, or beyond it. */
+  readonly nearWaterline: (x: number, y: number) => boolean;
   /** Whether the tray stands level (slabs apart). */
   readonly isLevel: boolean;
   /** Whether a depth step lies within two cells of the node. */
@@ -185,6 +189,7 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     along,
     depthAt,
     slabThicknessAt,
+    nearWaterline: (x, y) => bedAt(x, y) < WATERLINE_CELLS * (Math.abs(plane.slopeX) * pitchXMm + Math.abs(plane.slopeY) * pitchYMm),
     isLevel: plane.slopeX === 0 && plane.slopeY === 0,
     nearStep: (node) => (flags[node] & NEAR_STEP) !== 0,
     stepAround: (node) => {

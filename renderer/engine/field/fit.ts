@@ -20,6 +20,7 @@ function fittedConductance(network: Network, node: number, potential: LocalPoten
   const { grid, east, north, active, conduction } = network;
   const { columns, pitchXMm, pitchYMm } = grid;
   const level = conduction.isLevel;
+  if (conduction.nearWaterline((node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm)) return null;
   const at = (other: number): number => {
     const x = (other % columns) * pitchXMm;
     const y = Math.floor(other / columns) * pitchYMm;

@@ -159,7 +159,7 @@ export function readerOf(network: FittedNetwork, map: ReadingMap, potentials: Fl
     const row0 = row - WINDOW;
     flood(column0, row0, start);
     const depth = layout.slabs.length > 0 ? conduction.slabThicknessAt(x, y) : 0;
-    const potential = body >= 0 ? localFields[body].at(x, y) : null;
+    const potential = body >= 0 && !conduction.nearWaterline(x, y) ? localFields[body].at(x, y) : null;
     const level = conduction.isLevel;
     values.count = 0;
     for (let b = 0; b < WINDOW_WIDTH; b++) {

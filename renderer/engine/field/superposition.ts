@@ -6,18 +6,57 @@ import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
 import type { PotentialField } from "./potential-field";
 import { type Reader, readerOf } from "./reading";
-import { type FieldLayout, isEvenlyDeep } from "./layout";
+import { type FieldLayout, isEvenlyDeep, wallThicknessMm } from "./layout";
 import type { FieldSolution, SolvedGrid } from "./solve-field";
 
+/**
+ * Share of the grids' typical difference over the whole tray that every bound contains beside the difference at its own
+ * place: where the two grids happen to agree the error need not vanish. Calibrated on random setups (tests/reference/bounds).
+ */
+const TYPICAL_SHARE = 0.12;
+/**
+ * What the grids' difference is multiplied by where they do not converge evenly: plates a few cells thick are seen one way
+ * by one grid and another way by the other, and next to depth steps nothing is fitted. Calibrated like the share above.
+ */
+const THIN_PLATE_FACTOR = 2.5;
+const DEPTH_STEP_FACTOR = 1.5;
+const THIN_PLATE_CELLS = 4;
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
 const FLOOR_SHARE = 1e-6;
 /** The bound (share of the span) where the coarser grid has no value to compare with, such as in a gap that it cannot see. */
 const UNSEEN_SHARE = 0.02;
 
 /** Bound of a potential from the same potential on the coarser grid: their whole difference, never less than the floor. */
-function voltsBound(near: number, far: number | undefined, span: number): number {
-  const difference = far === undefined || Number.isNaN(far) ? UNSEEN_SHARE * span : Math.abs(near - far);
-  return difference + FLOOR_SHARE * span;
+function voltsBound(near: number, far: number | undefined, span: number, { typicalShare, factor }: Pick<PerVolt, "typicalShare" | "factor">): number {
+  const difference = far === undefined || !Number.isFinite(far) ? UNSEEN_SHARE * span : Math.abs(near - far);
+  return factor * difference + (TYPICAL_SHARE * typicalShare + FLOOR_SHARE) * span;
+}
+
+function convergenceFactor({ network }: SolvedGrid): number {
+  const { layout, grid } = network;
+  const thinMm = THIN_PLATE_CELLS * Math.max(grid.pitchXMm, grid.pitchYMm);
+  if (layout.insulators.some(({ placed }) => wallThicknessMm(placed.shape) < thinMm)) return THIN_PLATE_FACTOR;
+  return layout.slabs.length > 0 ? DEPTH_STEP_FACTOR : 1;
+}
+
+/** Root mean square of the grids' difference over the nodes that both have, as a share of the span. */
+function typicalDifference(fine: SolvedGrid, near: Superposed, coarse: SolvedGrid, far: Superposed): number {
+  const { columns, rows } = coarse.network.grid;
+  const fineColumns = fine.network.grid.columns;
+  let sum = 0;
+  let count = 0;
+  for (let row = 0; row < rows; row++) {
+    for (let column = 0; column < columns; column++) {
+      const here = row * columns + column;
+      const there = 2 * row * fineColumns + 2 * column;
+      if (coarse.network.active[here] === 0 || fine.network.active[there] === 0) continue;
+      const difference = far.potentials[here] - near.potentials[there];
+      sum += difference * difference;
+      count++;
+    }
+  }
+  const taps = near.bodyVolts.slice(0, near.fluxes.length);
+  return count === 0 ? UNSEEN_SHARE : Math.sqrt(sum / count) / (Math.max(...taps) - Math.min(...taps));
 }
 
 /** One solved grid at given electrode potentials. */
@@ -82,6 +121,8 @@ interface PerVolt {
   readonly far: Superposed;
   readonly picture: FieldPicture;
   readonly surfaceFields: readonly number[];
+  readonly typicalShare: number;
+  readonly factor: number;
 }
 
 /** Gives the fields of one solution; the newest taps are remembered, so that other volts cost a multiplication. */
@@ -127,7 +168,7 @@ function readingsOf(solution: FieldSolution, setup: Setup, perVolt: PerVolt, con
       yMm,
       inside: null,
       volts: volts * here.volts,
-      voltsError: voltsBound(volts * here.volts, coarser === null ? undefined : volts * coarser.volts, span),
+      voltsError: voltsBound(volts * here.volts, coarser === null ? undefined : volts * coarser.volts, span, perVolt),
       fieldVPerM,
       directionDeg: fieldVPerM === 0 ? 0 : degrees(Math.atan2(-here.slopeY, -here.slopeX)),
     };
@@ -151,7 +192,15 @@ export function superposerOf(solution: FieldSolution): Superposer {
     const key = taps.join(" ");
     if (remembered?.key === key) return remembered.perVolt;
     const near = superpose(fine, taps);
-    const perVolt = { near, far: superpose(coarse, taps), picture: pictureOf(fine, near), surfaceFields: largestSurfaceFields(fine, near) };
+    const far = superpose(coarse, taps);
+    const perVolt = {
+      near,
+      far,
+      picture: pictureOf(fine, near),
+      surfaceFields: largestSurfaceFields(fine, near),
+      factor: convergenceFactor(fine),
+      typicalShare: convergenceFactor(fine) * typicalDifference(fine, near, coarse, far),
+    };
     remembered = { key, perVolt };
     return perVolt;
   }
@@ -159,11 +208,13 @@ export function superposerOf(solution: FieldSolution): Superposer {
   return (setup, conductivitySPerM) => {
     const taps = tapsOf(layout, setup);
     const perVolt = perVoltFor(taps);
-    const { near, far, picture, surfaceFields } = perVolt;
+    const { near, far, picture, surfaceFields, typicalShare, factor } = perVolt;
+    const fluxShare = TYPICAL_SHARE * typicalShare + FLOOR_SHARE;
     const { volts } = setup.supply;
     const span = volts * tapSpan(perVolt);
     // In evenly deep water the currents grow as the depth: div(σ h grad φ) = 0 with one h.
     const deeper = isEvenlyDeep(setup) ? setup.water.depthMm / layout.setup.water.depthMm : 1;
+    const total = sumOfPositive(near.fluxes);
     const amperes = (flux: number): number => (volts * deeper * flux * conductivitySPerM) / MM_PER_M;
     const conductors = layout.conductors.map(({ index }, body): ConductorReading => {
       const electrode = body < layout.electrodeCount;
@@ -172,13 +223,12 @@ export function superposerOf(solution: FieldSolution): Superposer {
         id: setup.parts[index].id,
         role: electrode ? "electrode" : "floating",
         volts: volts * near.bodyVolts[body],
-        voltsError: electrode ? 0 : voltsBound(volts * near.bodyVolts[body], volts * far.bodyVolts[body], span),
+        voltsError: electrode ? 0 : voltsBound(volts * near.bodyVolts[body], volts * far.bodyVolts[body], span, perVolt),
         currentA: amperes(flux),
-        currentErrorA: electrode ? amperes(Math.abs(flux - far.fluxes[body]) + FLOOR_SHARE * Math.abs(flux)) : 0,
+        currentErrorA: electrode ? amperes(factor * Math.abs(flux - far.fluxes[body]) + fluxShare * total) : 0,
         largestCurrentDensityAPerM2: volts * conductivitySPerM * surfaceFields[body] * MM_PER_M,
       };
     });
-    const total = sumOfPositive(near.fluxes);
     const { network, units } = fine;
     return {
       numerics: {
@@ -191,7 +241,7 @@ export function superposerOf(solution: FieldSolution): Superposer {
       spanV: [volts * Math.min(...taps), volts * Math.max(...taps)],
       picture: { ...picture, volts: picture.volts.map((value) => volts * value) },
       conductors,
-      totalFlux: { value: volts * deeper * total, error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + FLOOR_SHARE * total) },
+      totalFlux: { value: volts * deeper * total, error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + fluxShare * total) },
       read: readingsOf(solution, setup, perVolt, conductors),
     };
   };
