@@ -1,4 +1,3 @@
-import { OWNER_WATER } from "../../../shared-types/plan";
 import { radians } from "../../../shared-types/units";
 import type { PotentialField } from "../field/potential-field";
 
@@ -14,22 +13,24 @@ export function directionFromReadings(field: PotentialField, weakestVPerM: numbe
   };
 }
 
-/** @returns the field's direction from the slope between the four nodes round a place, where all four lie in water; else from readings. */
+/**
+ * @returns the field's direction from the slope between the four nodes round a place, in which metal has its own potential:
+ * quick, and rough in the last cell before metal. From readings where a node has no potential.
+ */
 export function directionFromPicture(field: PotentialField, weakestVPerM: number): FieldDirection {
-  const { columns, rows, pitchXMm, pitchYMm, volts, owner } = field.picture;
+  const { columns, rows, pitchXMm, pitchYMm, volts } = field.picture;
   const careful = directionFromReadings(field, weakestVPerM);
   return (x, y) => {
     const column = Math.min(columns - 2, Math.max(0, Math.floor(x / pitchXMm)));
     const row = Math.min(rows - 2, Math.max(0, Math.floor(y / pitchYMm)));
     const a = row * columns + column;
     const d = a + columns;
-    if (owner[a] !== OWNER_WATER || owner[a + 1] !== OWNER_WATER || owner[d] !== OWNER_WATER || owner[d + 1] !== OWNER_WATER)
-      return careful(x, y);
     const u = x / pitchXMm - column;
     const v = y / pitchYMm - row;
     const alongX = ((1 - v) * (volts[a] - volts[a + 1]) + v * (volts[d] - volts[d + 1])) / pitchXMm;
     const alongY = ((1 - u) * (volts[a] - volts[d]) + u * (volts[a + 1] - volts[d + 1])) / pitchYMm;
     const strength = Math.hypot(alongX, alongY);
-    return strength * 1000 < weakestVPerM ? null : [alongX / strength, alongY / strength];
+    // Not a number where a node has no potential, too weak where all four lie in metal.
+    return strength * 1000 >= weakestVPerM ? [alongX / strength, alongY / strength] : careful(x, y);
   };
 }

@@ -8,7 +8,8 @@ import { type Box, boxGapMm, outlined } from "../geometry/overlap";
 import { traySizeMm } from "../geometry/tray-outline";
 import { directionFromPicture, directionFromReadings, type FieldDirection } from "./field-direction";
 import { leavesWaterAt } from "./line-ends";
-import { type LineSeed, lineSeeds } from "./line-seeds";
+import { lineSeeds } from "./line-seeds";
+import { type SurfacePlace, surfaceFieldFromPicture, surfaceFieldFromReadings } from "./surface-field";
 
 /** Longest step along a line, mm, and the turns (cosines of 3° and 8°) between which a step is neither lengthened nor halved. */
 const LONGEST_STEP_MM = 4;
@@ -16,6 +17,8 @@ const LITTLE_TURN = Math.cos(Math.PI / 60);
 const SHARP_TURN = Math.cos(Math.PI / 22.5);
 /** A line that has not arrived after this many steps is going nowhere. */
 const MOST_STEPS = 2000;
+/** How far off the metal a line is first followed and its field read, in cells of the picture. */
+const OFF_SURFACE_CELLS = 0.2;
 /** A field weaker than this share of span over tray length has no direction worth drawing. */
 const WEAK_SHARE = 1e-5;
 
@@ -58,10 +61,10 @@ function meanDirection(
   return [(first[0] + 2 * second[0] + 2 * third[0] + fourth[0]) / 6, (first[1] + 2 * second[1] + 2 * third[1] + fourth[1]) / 6];
 }
 
-function traced({ onX, onY, offX, offY }: LineSeed, water: Water): FieldLine {
-  const places = [onX, onY];
-  let x = offX;
-  let y = offY;
+function traced(seed: SurfacePlace, offMm: number, water: Water): FieldLine {
+  const places = [seed.x, seed.y];
+  let x = seed.x + offMm * seed.outX;
+  let y = seed.y + offMm * seed.outY;
   let step = water.shortestStepMm * 2;
   let direction = water.directionAt(x, y);
   for (let count = 0; count < MOST_STEPS && direction !== null; count++) {
@@ -104,6 +107,8 @@ export function fieldLinesOf(field: PotentialField, setup: Setup, lines: number,
     }),
     shortestStepMm: pitchMm / 4,
   };
-  const seeds = lineSeeds(field, setup, lines, holdsWater, quality === "live" ? 2 * pitchMm : pitchMm, 0.2 * pitchMm);
-  return seeds.map((seed) => traced(seed, water)).filter((line) => line.length > 4);
+  const offMm = OFF_SURFACE_CELLS * pitchMm;
+  const surfaceField = (quality === "live" ? surfaceFieldFromPicture : surfaceFieldFromReadings)(field, holdsWater, offMm);
+  const seeds = lineSeeds(field, setup, lines, surfaceField, quality === "live" ? 2 * pitchMm : pitchMm);
+  return seeds.map((seed) => traced(seed, offMm, water)).filter((line) => line.length > 4);
 }

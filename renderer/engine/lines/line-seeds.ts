@@ -1,17 +1,8 @@
 import type { Setup } from "../../../shared-types/setup";
-import { radians } from "../../../shared-types/units";
 import type { PotentialField } from "../field/potential-field";
-import type { HoldsWater } from "../geometry/open-water";
 import { lengthOf, outlineOf, type Piece, pointAlong } from "../geometry/outline";
 import { waterDepthMm } from "../geometry/water-depth";
-
-/** Where a field line leaves metal: a place on the surface and one just off it, mm. */
-export interface LineSeed {
-  readonly onX: number;
-  readonly onY: number;
-  readonly offX: number;
-  readonly offY: number;
-}
+import type { SurfaceField, SurfacePlace } from "./surface-field";
 
 /** A short stretch of a conductor's outline and the current that leaves it. */
 interface Outflow {
@@ -25,42 +16,25 @@ interface Outflow {
 /** A loop's weakest stretch below this share of the mean is where the count of lines begins; else its first stretch is. */
 const CLEARLY_WEAK = 0.8;
 
-/** A place on a piece, and one `offMm` off it in the water (the solid lies on the left). */
-function seedOn(piece: Piece, share: number, offMm: number): LineSeed {
-  const [onX, onY] = pointAlong(piece, share);
-  let rightX: number;
-  let rightY: number;
+/** A place on a piece, and the direction from it into the water (the solid lies on the left). */
+function placeOn(piece: Piece, share: number): SurfacePlace {
+  const [x, y] = pointAlong(piece, share);
   if (piece.kind === "edge") {
     const length = lengthOf(piece);
-    rightX = (piece.y1 - piece.y0) / length;
-    rightY = (piece.x0 - piece.x1) / length;
-  } else {
-    const outward = Math.sign(piece.sweepRad) / piece.radius;
-    rightX = outward * (onX - piece.cx);
-    rightY = outward * (onY - piece.cy);
+    return { x, y, outX: (piece.y1 - piece.y0) / length, outY: (piece.x0 - piece.x1) / length };
   }
-  return { onX, onY, offX: onX + offMm * rightX, offY: onY + offMm * rightY };
+  const outward = Math.sign(piece.sweepRad) / piece.radius;
+  return { x, y, outX: outward * (x - piece.cx), outY: outward * (y - piece.cy) };
 }
 
-function outflowsOf(
-  loop: readonly Piece[],
-  field: PotentialField,
-  setup: Setup,
-  holdsWater: HoldsWater,
-  stepMm: number,
-  offMm: number,
-): Outflow[] {
+function outflowsOf(loop: readonly Piece[], setup: Setup, metalVolts: number, surfaceField: SurfaceField, stepMm: number): Outflow[] {
   return loop.flatMap((piece) => {
     const count = Math.max(2, Math.ceil(lengthOf(piece) / stepMm));
     return Array.from({ length: count }, (_, index): Outflow => {
-      const { onX, onY, offX, offY } = seedOn(piece, (index + 0.5) / count, offMm);
-      const stretch = { piece, fromShare: index / count, toShare: (index + 1) / count };
-      if (!holdsWater(offX, offY)) return { ...stretch, flux: 0 };
-      const { volts, fieldVPerM, directionDeg } = field.read(offX, offY);
-      if (volts === null) return { ...stretch, flux: 0 };
-      const angle = radians(directionDeg);
-      const outward = (fieldVPerM * (Math.cos(angle) * (offX - onX) + Math.sin(angle) * (offY - onY))) / offMm;
-      return { ...stretch, flux: (Math.max(0, outward) * waterDepthMm(setup, offX, offY) * lengthOf(piece)) / count };
+      const place = placeOn(piece, (index + 0.5) / count);
+      const outward = Math.max(0, surfaceField(place, metalVolts));
+      const flux = outward === 0 ? 0 : (outward * Math.max(0, waterDepthMm(setup, place.x, place.y)) * lengthOf(piece)) / count;
+      return { piece, fromShare: index / count, toShare: (index + 1) / count, flux };
     });
   });
 }
@@ -106,15 +80,15 @@ function runsOf(outflows: readonly Outflow[]): Outflow[][] {
   return run.length > 0 ? [...runs, run] : runs;
 }
 
-function seedsOf(run: readonly Outflow[], count: number, offMm: number): LineSeed[] {
+function seedsOf(run: readonly Outflow[], count: number): SurfacePlace[] {
   const total = run.reduce((sum, { flux }) => sum + flux, 0);
-  const seeds: LineSeed[] = [];
+  const seeds: SurfacePlace[] = [];
   let passed = 0;
   for (const { piece, fromShare, toShare, flux } of run) {
     // A line in the middle of each equal portion of the current.
     while (seeds.length < count && ((seeds.length + 0.5) / count) * total <= passed + flux) {
       const within = (((seeds.length + 0.5) / count) * total - passed) / flux;
-      seeds.push(seedOn(piece, fromShare + within * (toShare - fromShare), offMm));
+      seeds.push(placeOn(piece, fromShare + within * (toShare - fromShare)));
     }
     passed += flux;
   }
@@ -125,22 +99,21 @@ function seedsOf(run: readonly Outflow[], count: number, offMm: number): LineSee
  * Where field lines leave electrodes and loose conductors, so that neighbours on a surface have equal currents between them.
  * @param lines how many lines the electrodes send out together, nearly.
  * @param stepMm length of the stretches in which the current is summed.
- * @param offMm how far off the metal its field is read.
  */
 export function lineSeeds(
   field: PotentialField,
   setup: Setup,
   lines: number,
-  holdsWater: HoldsWater,
+  surfaceField: SurfaceField,
   stepMm: number,
-  offMm: number,
-): readonly LineSeed[] {
-  const surfaces = setup.parts.flatMap((part) => {
-    if (part.role === "insulator") return [];
-    const runs = outlineOf(part).flatMap((loop) => runsOf(outflowsOf(loop, field, setup, holdsWater, stepMm, offMm)));
-    return runs.map((run) => ({ role: part.role, run, flux: run.reduce((sum, { flux }) => sum + flux, 0) }));
+): readonly SurfacePlace[] {
+  const surfaces = field.conductors.flatMap(({ id, role, volts }) => {
+    const part = setup.parts.find((each) => each.id === id);
+    if (part === undefined || Number.isNaN(volts)) return [];
+    const runs = outlineOf(part).flatMap((loop) => runsOf(outflowsOf(loop, setup, volts, surfaceField, stepMm)));
+    return runs.map((run) => ({ role, run, flux: run.reduce((sum, { flux }) => sum + flux, 0) }));
   });
   const sent = surfaces.reduce((sum, { role, flux }) => sum + (role === "electrode" ? flux : 0), 0);
   if (!(sent > 0)) return [];
-  return surfaces.flatMap(({ run, flux }) => seedsOf(run, Math.round((lines * flux) / sent), offMm));
+  return surfaces.flatMap(({ run, flux }) => seedsOf(run, Math.round((lines * flux) / sent)));
 }
