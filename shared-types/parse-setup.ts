@@ -118,4 +118,3 @@ export function parseSetupText(text: string): Result<Setup> {
 export function setupText(setup: Setup): string {
   return `${JSON.stringify(setup, null, 2)}\n`;
 }
-

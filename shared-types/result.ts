@@ -7,9 +7,7 @@ export interface Problem {
 }
 
 /** A value, or the reasons why there is none. Used at every border: file, message, worker, form. */
-export type Result<Value> =
-  | { readonly ok: true; readonly value: Value }
-  | { readonly ok: false; readonly problems: readonly Problem[] };
+export type Result<Value> = { readonly ok: true; readonly value: Value } | { readonly ok: false; readonly problems: readonly Problem[] };
 
 /** @returns a successful result that carries `value`. */
 export function success<Value>(value: Value): Result<Value> {

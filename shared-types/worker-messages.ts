@@ -5,7 +5,12 @@ import type { Setup } from "./setup";
 export type WorkerRequest =
   | { readonly kind: "plan"; readonly requestId: number; readonly setup: Setup; readonly quality: Quality }
   /** Readings at places in the tray, from the newest planned field of that very setup's geometry. */
-  | { readonly kind: "sample"; readonly requestId: number; readonly setup: Setup; readonly placesMm: readonly (readonly [number, number])[] };
+  | {
+      readonly kind: "sample";
+      readonly requestId: number;
+      readonly setup: Setup;
+      readonly placesMm: readonly (readonly [number, number])[];
+    };
 
 /** What the field worker answers. */
 export type WorkerAnswer =

@@ -1,4 +1,14 @@
-import type { Bounded, Equipotential, FieldLine, FieldReading, Finding, Plan, PlanOutcome, PlanRefusal, Quality } from "../../shared-types/plan";
+import type {
+  Bounded,
+  Equipotential,
+  FieldLine,
+  FieldReading,
+  Finding,
+  Plan,
+  PlanOutcome,
+  PlanRefusal,
+  Quality,
+} from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { setupId } from "../../shared-types/setup-id";
 import { MM_PER_M } from "../../shared-types/units";
@@ -41,7 +51,11 @@ function refusalOf(findings: readonly Finding[]): PlanRefusal | null {
 }
 
 /** Resistance and shape factor between the two potentials in use; null where there are more than two. */
-function twoPoleOf(setup: Setup, field: SuperposedField, conductivitySPerM: number): { resistanceOhm: Bounded; shapeFactor: Bounded } | null {
+function twoPoleOf(
+  setup: Setup,
+  field: SuperposedField,
+  conductivitySPerM: number,
+): { resistanceOhm: Bounded; shapeFactor: Bounded } | null {
   const potentials = new Set(setup.parts.flatMap((part) => (part.role === "electrode" ? [part.tap] : [])));
   if (potentials.size !== 2) return null;
   const volts = field.spanV[1] - field.spanV[0];
@@ -55,7 +69,12 @@ function twoPoleOf(setup: Setup, field: SuperposedField, conductivitySPerM: numb
 /** A solved geometry with the lines drawn last: their places depend on taps and levels, not on volts. */
 interface Solved {
   readonly superposed: Superposer;
-  lines: { readonly key: string; readonly volts: number; readonly equipotentials: readonly Equipotential[]; readonly fieldLines: readonly FieldLine[] } | null;
+  lines: {
+    readonly key: string;
+    readonly volts: number;
+    readonly equipotentials: readonly Equipotential[];
+    readonly fieldLines: readonly FieldLine[];
+  } | null;
 }
 
 function linesOf(solved: Solved, setup: Setup, field: SuperposedField, quality: Quality): Pick<Plan, "equipotentials" | "fieldLines"> {
@@ -135,7 +154,9 @@ export function createPlanner(): Planner {
 
   function sample(setup: Setup, placesMm: readonly (readonly [number, number])[]): readonly FieldReading[] | null {
     const geometry = geometryKey(setup);
-    const solved = (["reference", "print", "live"] as const).map((quality) => kept.get(`${quality} ${geometry}`)).find((one) => one !== undefined);
+    const solved = (["reference", "print", "live"] as const)
+      .map((quality) => kept.get(`${quality} ${geometry}`))
+      .find((one) => one !== undefined);
     if (solved === undefined) return null;
     const field = solved.superposed(setup, conductivityAtTemperatureSPerM(setup));
     return placesMm.map(([xMm, yMm]) => field.read(xMm, yMm));

@@ -27,7 +27,14 @@ describe("a square in a square (exact through elliptic integrals; F. Bowman, Int
     const setup = trayWith({
       parts: [
         { id: "A", role: "electrode", tap: 1, xMm: 150, yMm: 100, shape: { kind: "bar", lengthMm: outer / ratio, widthMm: outer / ratio } },
-        { id: "B", role: "electrode", tap: 0, xMm: 150, yMm: 100, shape: { kind: "frame", lengthMm: outer + 10, widthMm: outer + 10, wallMm: 5 } },
+        {
+          id: "B",
+          role: "electrode",
+          tap: 0,
+          xMm: 150,
+          yMm: 100,
+          shape: { kind: "frame", lengthMm: outer + 10, widthMm: outer + 10, wallMm: 5 },
+        },
       ],
     });
     within(shapeFactorOf(setup, solved(setup, "print")), known, 1e-4 / known + 2e-5);
@@ -110,7 +117,14 @@ describe("a tilted tray", () => {
       water: { depthMm, tiltXDeg: tilt },
       parts: [
         { id: "A", role: "electrode", tap: 1, xMm: waterlineX, yMm: 100, shape: { kind: "disc", diameterMm: 2 * inner } },
-        { id: "B", role: "electrode", tap: 0, xMm: waterlineX, yMm: 100, shape: { kind: "ring", innerMm: 2 * outer, outerMm: 2 * outer + 8 } },
+        {
+          id: "B",
+          role: "electrode",
+          tap: 0,
+          xMm: waterlineX,
+          yMm: 100,
+          shape: { kind: "ring", innerMm: 2 * outer, outerMm: 2 * outer + 8 },
+        },
       ],
     });
     const field = solved(setup, "print");

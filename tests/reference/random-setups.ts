@@ -30,7 +30,10 @@ export function randomSetup(seed: number, { insulators, slabs, tilt }: RandomSet
   const random = seededNumbers(seed);
   const between = (low: number, high: number): number => low + (high - low) * random();
   const pick = <Item>(items: readonly Item[]): Item => items[Math.floor(random() * items.length)];
-  const tray = random() < 0.7 ? { shape: "rectangle", lengthMm: between(150, 400), widthMm: between(120, 300) } : { shape: "circle", diameterMm: between(160, 300) };
+  const tray =
+    random() < 0.7
+      ? { shape: "rectangle", lengthMm: between(150, 400), widthMm: between(120, 300) }
+      : { shape: "circle", diameterMm: between(160, 300) };
   const base = soundSetup({
     format: "fieldtray.setup",
     version: 1,
@@ -69,7 +72,10 @@ export function randomSetup(seed: number, { insulators, slabs, tilt }: RandomSet
   const wanted = 2 + Math.floor(random() * 4);
   for (let attempt = 0; attempt < 400 && parts.length < wanted; attempt++) {
     const number = parts.length;
-    const role = number < 2 ? "electrode" : pick(insulators ? ["electrode", "floating", "insulator", "insulator"] : ["electrode", "floating", "floating"]);
+    const role =
+      number < 2
+        ? "electrode"
+        : pick(insulators ? ["electrode", "floating", "insulator", "insulator"] : ["electrode", "floating", "floating"]);
     const part = {
       id: `P${number}`,
       role,
@@ -97,7 +103,10 @@ export function randomSetup(seed: number, { insulators, slabs, tilt }: RandomSet
           yMm: between(0.3, 0.7) * widthMm,
           turnDeg: random() < 0.4 ? 0 : between(0, 180),
           thicknessMm: between(2, 7),
-          shape: random() < 0.5 ? { kind: "bar", lengthMm: between(40, 120), widthMm: between(30, 90) } : { kind: "disc", diameterMm: between(40, 100) },
+          shape:
+            random() < 0.5
+              ? { kind: "bar", lengthMm: between(40, 120), widthMm: between(30, 90) }
+              : { kind: "disc", diameterMm: between(40, 100) },
         },
       ]
     : [];

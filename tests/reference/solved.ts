@@ -1,9 +1,9 @@
+import { conductivityAtTemperatureSPerM } from "../../renderer/engine/bench/water-conductivity";
 import { fieldLayout } from "../../renderer/engine/field/layout";
 import { solveField } from "../../renderer/engine/field/solve-field";
 import { type SuperposedField, superposerOf } from "../../renderer/engine/field/superposition";
-import { conductivityAtTemperatureSPerM } from "../../renderer/engine/bench/water-conductivity";
-import type { Quality } from "../../shared-types/plan";
 import { parseSetup } from "../../shared-types/parse-setup";
+import type { Quality } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 
 /** @returns the result of a computation that is driven without pause. */

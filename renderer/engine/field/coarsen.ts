@@ -16,7 +16,12 @@ function sharesOf(p: Interpolation, N: number, coarseStride: number, shares: Flo
 }
 
 /** Galerkin product on the grid: each coarse link is what the fine network conducts between two coarse basis functions. */
-function coarseLinks(fine: Level, p: Interpolation, coarseColumns: number, coarseRows: number): Pick<Level, "centre" | "east" | "north" | "northEast" | "northWest"> {
+function coarseLinks(
+  fine: Level,
+  p: Interpolation,
+  coarseColumns: number,
+  coarseRows: number,
+): Pick<Level, "centre" | "east" | "north" | "northEast" | "northWest"> {
   const { columns, rows, stride, centre, east, north, northEast, northWest } = fine;
   const coarseStride = coarseColumns + 2;
   const size = coarseStride * (coarseRows + 2);

@@ -68,7 +68,12 @@ interface Face {
 }
 
 /** The part of a dual face that no insulator blocks, as [from, to] intervals across the link. */
-function openIntervals(face: Face, blockers: readonly Solid[], wall: Loop | null, insideWall: (x: number, y: number) => boolean): [number, number][] {
+function openIntervals(
+  face: Face,
+  blockers: readonly Solid[],
+  wall: Loop | null,
+  insideWall: (x: number, y: number) => boolean,
+): [number, number][] {
   const middle = face.start + face.pitch / 2;
   const scan: ScanAxis = face.axis === "row" ? "column" : "row";
   const cuts = [face.from, face.to];
@@ -123,7 +128,8 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
       cuts.sort((a, b) => a - b);
       for (let index = 0; index + 1 < cuts.length; index++) {
         const width = cuts[index + 1] - cuts[index];
-        for (const offset of [-GAUSS_2, GAUSS_2]) flux += (width / 2) * seriesFlux(face, (cuts[index] + cuts[index + 1]) / 2 + offset * width);
+        for (const offset of [-GAUSS_2, GAUSS_2])
+          flux += (width / 2) * seriesFlux(face, (cuts[index] + cuts[index + 1]) / 2 + offset * width);
       }
     }
     return flux;
@@ -179,7 +185,12 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     if (flag & NEAR_STEP) return steppedFlux(face, open);
     let flux = 0;
     for (const [low, high] of open) {
-      const depth = layout.slabs.length > 0 ? (isRow ? depthAt(middle, (low + high) / 2) : depthAt((low + high) / 2, middle)) : meanWet(bed(low), bed(high));
+      const depth =
+        layout.slabs.length > 0
+          ? isRow
+            ? depthAt(middle, (low + high) / 2)
+            : depthAt((low + high) / 2, middle)
+          : meanWet(bed(low), bed(high));
       flux += (depth * (high - low)) / pitch;
     }
     return flux;

@@ -81,7 +81,8 @@ function linkNodes(
     else touch(marks[marks.length - 1].body, other, whole / Math.max(SURFACE_SHARE, 1 - marks[marks.length - 1].share));
     for (let index = 0; index + 1 < marks.length; index++) {
       const [a, b] = [marks[index], marks[index + 1]];
-      if (a.body !== b.body) bridges.push({ bodyA: a.body, bodyB: b.body, conductanceMm: whole / Math.max(SURFACE_SHARE, b.share - a.share) });
+      if (a.body !== b.body)
+        bridges.push({ bodyA: a.body, bodyB: b.body, conductanceMm: whole / Math.max(SURFACE_SHARE, b.share - a.share) });
     }
   }
   // Links that end on metal without a cut of their own: the surface runs through the far node itself.

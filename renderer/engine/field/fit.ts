@@ -54,7 +54,13 @@ function plainNodesOf(network: Network): (node: number) => boolean {
     [node, node + 1, node - 1, node + grid.columns, node - grid.columns].every((one) => !conduction.nearInsulator(one));
 }
 
-function fitBody(network: Network, body: number, field: LocalField, shared: ReadonlySet<number>, isPlain: (node: number) => boolean): Contact {
+function fitBody(
+  network: Network,
+  body: number,
+  field: LocalField,
+  shared: ReadonlySet<number>,
+  isPlain: (node: number) => boolean,
+): Contact {
   const { grid, active, layout } = network;
   const { columns, rows, pitchXMm, pitchYMm } = grid;
   const contact = network.contacts[body];
@@ -69,8 +75,16 @@ function fitBody(network: Network, body: number, field: LocalField, shared: Read
   });
   const [left, bottom, right, top] = layout.conductors[body].bounds;
   const margin = field.widestReachMm;
-  for (let row = Math.max(0, Math.floor((bottom - margin) / pitchYMm)); row <= Math.min(rows - 1, Math.ceil((top + margin) / pitchYMm)); row++) {
-    for (let column = Math.max(0, Math.floor((left - margin) / pitchXMm)); column <= Math.min(columns - 1, Math.ceil((right + margin) / pitchXMm)); column++) {
+  for (
+    let row = Math.max(0, Math.floor((bottom - margin) / pitchYMm));
+    row <= Math.min(rows - 1, Math.ceil((top + margin) / pitchYMm));
+    row++
+  ) {
+    for (
+      let column = Math.max(0, Math.floor((left - margin) / pitchXMm));
+      column <= Math.min(columns - 1, Math.ceil((right + margin) / pitchXMm));
+      column++
+    ) {
       const node = row * columns + column;
       if (active[node] === 0 || ties.has(node) || shared.has(node) || !isPlain(node)) continue;
       const potential = field.featureAt(column * pitchXMm, row * pitchYMm);
@@ -104,7 +118,8 @@ export function fitContacts(network: Network): FittedNetwork {
   const isPlain = plainNodesOf(network);
   const localFields = layout.conductors.map((conductor) => {
     const others = [...layout.conductors, ...layout.insulators].filter((other) => other !== conductor);
-    const clearanceMm = (x: number, y: number): number => Math.min(Infinity, ...others.map((other) => distanceToOutline(other.loops, x, y)));
+    const clearanceMm = (x: number, y: number): number =>
+      Math.min(Infinity, ...others.map((other) => distanceToOutline(other.loops, x, y)));
     return localFieldOf(conductor, layout.setup, smallestReachMm, clearanceMm);
   });
   const contacts = localFields.map((field, body) => fitBody(network, body, field, shared, isPlain));

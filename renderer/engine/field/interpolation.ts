@@ -20,7 +20,8 @@ export interface Interpolation {
   readonly floatingShares: readonly { readonly nodes: Int32Array; readonly shares: Float64Array }[];
 }
 
-const safely = (numerator: number, denominator: number, scale: number): number => (denominator > 1e-9 * scale ? numerator / denominator : 0);
+const safely = (numerator: number, denominator: number, scale: number): number =>
+  denominator > 1e-9 * scale ? numerator / denominator : 0;
 
 /** @returns the interpolation to `fine` from the grid of every other node. */
 export function interpolationTo(fine: Level): Interpolation {
@@ -105,7 +106,8 @@ function floatingShares(fine: Level, nodes: Int32Array, conductances: Float64Arr
   // Centre nodes take from the nodes on the coarse lines, so they come last; a neighbour's share reaches them too.
   const centres = new Set<number>();
   for (const n of tie.keys()) if (parity(n) === 3) centres.add(n);
-  for (const n of [...shares.keys()]) for (const m of [n - 1, n + 1, n - stride, n + stride]) if (parity(m) === 3 && centre[m] > 0) centres.add(m);
+  for (const n of [...shares.keys()])
+    for (const m of [n - 1, n + 1, n - stride, n + stride]) if (parity(m) === 3 && centre[m] > 0) centres.add(m);
   for (const n of centres) {
     const through =
       east[n - 1] * (shares.get(n - 1) ?? 0) +

@@ -65,14 +65,21 @@ export function makeLevel(
 }
 
 /** result = A·x for the grid part, floating conductors at `floatingX`; padding stays zero. Returns nothing. */
-export function applyLevel(level: Level, x: Float64Array, floatingX: Float64Array, result: Float64Array, floatingResult: Float64Array): void {
+export function applyLevel(
+  level: Level,
+  x: Float64Array,
+  floatingX: Float64Array,
+  result: Float64Array,
+  floatingResult: Float64Array,
+): void {
   const { columns, rows, stride, centre, east, north, northEast, northWest, borders, floating } = level;
   for (let row = 1; row <= rows; row++) {
     const first = row * stride + 1;
     const end = first + columns;
     if (northEast === null || northWest === null) {
       for (let n = first; n < end; n++) {
-        result[n] = centre[n] * x[n] - east[n] * x[n + 1] - east[n - 1] * x[n - 1] - north[n] * x[n + stride] - north[n - stride] * x[n - stride];
+        result[n] =
+          centre[n] * x[n] - east[n] * x[n + 1] - east[n - 1] * x[n - 1] - north[n] * x[n + stride] - north[n - stride] * x[n - stride];
       }
     } else {
       for (let n = first; n < end; n++) {

@@ -1,6 +1,6 @@
 import type { Setup } from "../../../shared-types/setup";
 import { radians } from "../../../shared-types/units";
-import { type Bow, type Edge, lengthOf, type Loop, type Piece, pointAlong } from "../geometry/outline";
+import { type Bow, type Edge, type Loop, lengthOf, type Piece, pointAlong } from "../geometry/outline";
 import { distanceToPiece } from "../geometry/signed-distance";
 import { depthFromWallMm } from "../geometry/tray-outline";
 import type { Solid } from "./layout";
@@ -71,7 +71,13 @@ function cornersOf(loop: Loop): Feature[] {
     const bent = [before, piece].some((one) => one.kind === "bow");
     const reachMm = Math.min(lengthOf(before), lengthOf(piece)) * (bent ? 0.25 : 0.45);
     // The outline turns left by `turn` at the corner, so the water opens by π + turn.
-    return [{ core: { kind: "edge", x0: x, y0: y, x1: x, y1: y }, reachMm, potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn) }];
+    return [
+      {
+        core: { kind: "edge", x0: x, y0: y, x1: x, y1: y },
+        reachMm,
+        potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn),
+      },
+    ];
   });
 }
 
@@ -119,7 +125,10 @@ function featuresOf(solid: Solid): Feature[] {
     const thick = Math.min(shape.lengthMm, shape.widthMm);
     if (long >= SLENDER * thick) return barEnds(placed, long, thick, placed.turnDeg + (shape.lengthMm >= shape.widthMm ? 0 : 90));
   }
-  if (shape.kind === "arc" && ((shape.outerMm + shape.innerMm) / 4) * radians(shape.sweepDeg) >= SLENDER * ((shape.outerMm - shape.innerMm) / 2)) {
+  if (
+    shape.kind === "arc" &&
+    ((shape.outerMm + shape.innerMm) / 4) * radians(shape.sweepDeg) >= SLENDER * ((shape.outerMm - shape.innerMm) / 2)
+  ) {
     return arcEnds(placed, shape.outerMm, shape.innerMm, shape.sweepDeg);
   }
   return solid.loops.flatMap(cornersOf);
@@ -162,7 +171,12 @@ const MOST_REACH_IN_LEAST = 12;
  * @param smallestReachMm corners whose circle would be smaller than this are left to the plain scheme.
  * @param clearanceMm distance from a point to the nearest other part (mm): a corner's circle stays well inside it.
  */
-export function localFieldOf(solid: Solid, setup: Setup, smallestReachMm: number, clearanceMm: (x: number, y: number) => number): LocalField {
+export function localFieldOf(
+  solid: Solid,
+  setup: Setup,
+  smallestReachMm: number,
+  clearanceMm: (x: number, y: number) => number,
+): LocalField {
   const wallMm = (x: number, y: number): number => Math.max(0, depthFromWallMm(setup.tray, x, y));
   const all = featuresOf(solid).map((feature) => {
     const { x0, y0, x1, y1 } = feature.core;

@@ -97,7 +97,8 @@ function relaxColour(level: Level, [columnParity, rowParity]: readonly [number, 
     if (northEast === null || northWest === null) {
       for (let n = first + columnParity; n < end; n += 2) {
         x[n] =
-          inverse[n] * (source[n] + east[n] * x[n + 1] + east[n - 1] * x[n - 1] + north[n] * x[n + stride] + north[n - stride] * x[n - stride]);
+          inverse[n] *
+          (source[n] + east[n] * x[n + 1] + east[n - 1] * x[n - 1] + north[n] * x[n + stride] + north[n - stride] * x[n - stride]);
       }
     } else {
       for (let n = first + columnParity; n < end; n += 2) {

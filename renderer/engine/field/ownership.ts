@@ -1,5 +1,5 @@
 import { OWNER_NOTHING, OWNER_WATER } from "../../../shared-types/plan";
-import { lengthOf, type Loop, pointAlong } from "../geometry/outline";
+import { type Loop, lengthOf, pointAlong } from "../geometry/outline";
 import { covers } from "../geometry/signed-distance";
 import { bedDepthMm } from "../geometry/water-depth";
 import type { Grid } from "./grid";

@@ -41,7 +41,8 @@ export function readingMap(network: FittedNetwork): ReadingMap {
       const column = node % columns;
       const row = Math.floor(node / columns);
       for (let j = Math.max(0, row - CARE_CELLS); j <= Math.min(rows - 1, row + CARE_CELLS); j++) {
-        for (let i = Math.max(0, column - CARE_CELLS); i <= Math.min(columns - 1, column + CARE_CELLS); i++) care[j * columns + i] = 2 + body;
+        for (let i = Math.max(0, column - CARE_CELLS); i <= Math.min(columns - 1, column + CARE_CELLS); i++)
+          care[j * columns + i] = 2 + body;
       }
     }
   });
@@ -193,7 +194,8 @@ export function readerOf(network: FittedNetwork, map: ReadingMap, potentials: Fl
     level: boolean,
   ): LocalValue {
     const step = 1e-4 * pitchXMm;
-    const scaled = (px: number, py: number): number => potential(px, py) / (level ? 1 : Math.sqrt(Math.max(1e-6, conduction.depthAt(px, py))));
+    const scaled = (px: number, py: number): number =>
+      potential(px, py) / (level ? 1 : Math.sqrt(Math.max(1e-6, conduction.depthAt(px, py))));
     const here = scaled(x, y);
     const localX = (scaled(x + step, y) - scaled(x - step, y)) / (2 * step);
     const localY = (scaled(x, y + step) - scaled(x, y - step)) / (2 * step);

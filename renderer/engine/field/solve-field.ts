@@ -37,7 +37,11 @@ function* solveGrid(layout: FieldLayout, grid: Grid, onSolved: (share: number) =
  * Yields every few milliseconds so that a caller can stop or pause it.
  * @param onProgress told the share of the work done, 0 to 1.
  */
-export function* solveField(layout: FieldLayout, quality: Quality, onProgress: (share: number) => void = () => {}): Generator<void, FieldSolution> {
+export function* solveField(
+  layout: FieldLayout,
+  quality: Quality,
+  onProgress: (share: number) => void = () => {},
+): Generator<void, FieldSolution> {
   const { tray } = layout.setup;
   const grid = gridOfPitch(tray, pitchFor(tray, quality));
   const coarse = yield* solveGrid(layout, halved(grid), (share) => onProgress(0.2 * share));

@@ -4,9 +4,9 @@ import { degrees, MM_PER_M } from "../../../shared-types/units";
 import { covers, distanceToOutline } from "../geometry/signed-distance";
 import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
+import { type FieldLayout, isEvenlyDeep, wallThicknessMm } from "./layout";
 import type { PotentialField } from "./potential-field";
 import { type Reader, readerOf } from "./reading";
-import { type FieldLayout, isEvenlyDeep, wallThicknessMm } from "./layout";
 import type { FieldSolution, SolvedGrid } from "./solve-field";
 
 /**
@@ -27,7 +27,12 @@ const FLOOR_SHARE = 1e-6;
 const UNSEEN_SHARE = 0.02;
 
 /** Bound of a potential from the same potential on the coarser grid: their whole difference, never less than the floor. */
-function voltsBound(near: number, far: number | undefined, span: number, { typicalShare, factor }: Pick<PerVolt, "typicalShare" | "factor">): number {
+function voltsBound(
+  near: number,
+  far: number | undefined,
+  span: number,
+  { typicalShare, factor }: Pick<PerVolt, "typicalShare" | "factor">,
+): number {
   const difference = far === undefined || !Number.isFinite(far) ? UNSEEN_SHARE * span : Math.abs(near - far);
   return factor * difference + (TYPICAL_SHARE * typicalShare + FLOOR_SHARE) * span;
 }
@@ -81,7 +86,9 @@ function superpose({ network, units, map }: SolvedGrid, electrodeVolts: readonly
     return units.floating.reduce((sum, shares, electrode) => sum + shares[f] * electrodeVolts[electrode], 0);
   });
   const bodyVolts = [...electrodeVolts, ...floatingVolts];
-  const fluxes = electrodeVolts.map((_, e) => electrodeVolts.reduce((sum, volts, f) => sum + units.conductanceMm[e * count + f] * volts, 0));
+  const fluxes = electrodeVolts.map((_, e) =>
+    electrodeVolts.reduce((sum, volts, f) => sum + units.conductanceMm[e * count + f] * volts, 0),
+  );
   return { potentials, bodyVolts, fluxes, reader: readerOf(network, map, potentials, bodyVolts) };
 }
 
@@ -92,8 +99,13 @@ function largestSurfaceFields({ network }: SolvedGrid, { potentials, bodyVolts }
   return network.contacts.map((contact, body) => {
     let largest = 0;
     for (const node of contact.nodes) {
-      const distance = distanceToOutline(network.layout.conductors[body].loops, (node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm);
-      if (distance > 0.3 * pitch && distance < 1.5 * pitch) largest = Math.max(largest, Math.abs(bodyVolts[body] - potentials[node]) / distance);
+      const distance = distanceToOutline(
+        network.layout.conductors[body].loops,
+        (node % columns) * pitchXMm,
+        Math.floor(node / columns) * pitchYMm,
+      );
+      if (distance > 0.3 * pitch && distance < 1.5 * pitch)
+        largest = Math.max(largest, Math.abs(bodyVolts[body] - potentials[node]) / distance);
     }
     return largest;
   });
@@ -137,7 +149,12 @@ const tapsOf = (layout: FieldLayout, setup: Setup): number[] =>
 const sumOfPositive = (fluxes: readonly number[]): number => fluxes.reduce((sum, flux) => sum + Math.max(0, flux), 0);
 
 /** @returns readings of the field at `volts` times the potentials per volt. */
-function readingsOf(solution: FieldSolution, setup: Setup, perVolt: PerVolt, conductors: readonly ConductorReading[]): PotentialField["read"] {
+function readingsOf(
+  solution: FieldSolution,
+  setup: Setup,
+  perVolt: PerVolt,
+  conductors: readonly ConductorReading[],
+): PotentialField["read"] {
   const { volts } = setup.supply;
   const span = volts * tapSpan(perVolt);
   const nothing = (xMm: number, yMm: number, inside: string | null): FieldReading => ({
@@ -241,7 +258,10 @@ export function superposerOf(solution: FieldSolution): Superposer {
       spanV: [volts * Math.min(...taps), volts * Math.max(...taps)],
       picture: { ...picture, volts: picture.volts.map((value) => volts * value) },
       conductors,
-      totalFlux: { value: volts * deeper * total, error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + fluxShare * total) },
+      totalFlux: {
+        value: volts * deeper * total,
+        error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + fluxShare * total),
+      },
       read: readingsOf(solution, setup, perVolt, conductors),
     };
   };

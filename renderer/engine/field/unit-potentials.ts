@@ -26,7 +26,13 @@ function finestLevel(network: Network): Level {
   const { columns, rows } = grid;
   const stride = columns + 2;
   const size = stride * (rows + 2);
-  const links = { centre: new Float64Array(size), east: new Float64Array(size), north: new Float64Array(size), northEast: null, northWest: null };
+  const links = {
+    centre: new Float64Array(size),
+    east: new Float64Array(size),
+    north: new Float64Array(size),
+    northEast: null,
+    northWest: null,
+  };
   for (let row = 0; row < rows; row++) {
     for (let column = 0; column < columns; column++) {
       const node = row * columns + column;
@@ -39,15 +45,16 @@ function finestLevel(network: Network): Level {
     }
   }
   const at = (node: number): number => padded(stride, node % columns, Math.floor(node / columns));
-  for (const contact of contacts) contact.nodes.forEach((node, k) => {
-    links.centre[at(node)] += contact.conductances[k];
-  });
+  for (const contact of contacts)
+    contact.nodes.forEach((node, k) => {
+      links.centre[at(node)] += contact.conductances[k];
+    });
   for (let node = 0; node < active.length; node++) if (active[node] === 0) links.centre[at(node)] = 1;
   const first = layout.electrodeCount;
   const count = layout.conductors.length - first;
-  const borders = contacts.slice(first).map(
-    (contact): Border => ({ nodes: Int32Array.from(contact.nodes, at), conductances: Float64Array.from(contact.conductances) }),
-  );
+  const borders = contacts
+    .slice(first)
+    .map((contact): Border => ({ nodes: Int32Array.from(contact.nodes, at), conductances: Float64Array.from(contact.conductances) }));
   const floating = new Float64Array(count * count);
   borders.forEach((border, f) => {
     for (const conductance of border.conductances) floating[f * count + f] += conductance;

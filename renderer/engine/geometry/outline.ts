@@ -1,5 +1,5 @@
-import { radians } from "../../../shared-types/units";
 import type { PlacedShape, Shape } from "../../../shared-types/setup";
+import { radians } from "../../../shared-types/units";
 
 /** A straight piece of an outline, mm; the solid lies on its left. */
 export interface Edge {
@@ -26,9 +26,7 @@ export type Loop = readonly Piece[];
 
 const FULL_TURN = 2 * Math.PI;
 
-const circle = (radius: number, sense: 1 | -1): Loop => [
-  { kind: "bow", cx: 0, cy: 0, radius, startRad: 0, sweepRad: sense * FULL_TURN },
-];
+const circle = (radius: number, sense: 1 | -1): Loop => [{ kind: "bow", cx: 0, cy: 0, radius, startRad: 0, sweepRad: sense * FULL_TURN }];
 
 function polygon(points: readonly (readonly [number, number])[], sense: 1 | -1): Loop {
   let twiceArea = 0;
@@ -104,23 +102,24 @@ export function outlineOf(placed: PlacedShape): readonly Loop[] {
   const moveX = (x: number, y: number): number => placed.xMm + c * x - s * y;
   const moveY = (x: number, y: number): number => placed.yMm + s * x + c * y;
   return localLoops(placed.shape).map((loop) =>
-    loop.map((piece): Piece =>
-      piece.kind === "edge"
-        ? {
-            kind: "edge",
-            x0: moveX(piece.x0, piece.y0),
-            y0: moveY(piece.x0, piece.y0),
-            x1: moveX(piece.x1, piece.y1),
-            y1: moveY(piece.x1, piece.y1),
-          }
-        : {
-            kind: "bow",
-            cx: moveX(piece.cx, piece.cy),
-            cy: moveY(piece.cx, piece.cy),
-            radius: piece.radius,
-            startRad: piece.startRad + turn,
-            sweepRad: piece.sweepRad,
-          },
+    loop.map(
+      (piece): Piece =>
+        piece.kind === "edge"
+          ? {
+              kind: "edge",
+              x0: moveX(piece.x0, piece.y0),
+              y0: moveY(piece.x0, piece.y0),
+              x1: moveX(piece.x1, piece.y1),
+              y1: moveY(piece.x1, piece.y1),
+            }
+          : {
+              kind: "bow",
+              cx: moveX(piece.cx, piece.cy),
+              cy: moveY(piece.cx, piece.cy),
+              radius: piece.radius,
+              startRad: piece.startRad + turn,
+              sweepRad: piece.sweepRad,
+            },
     ),
   );
 }

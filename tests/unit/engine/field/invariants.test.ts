@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
-import { traySizeMm } from "../../../../renderer/engine/geometry/tray-outline";
 import { fieldLayout } from "../../../../renderer/engine/field/layout";
 import { solveField } from "../../../../renderer/engine/field/solve-field";
+import { traySizeMm } from "../../../../renderer/engine/geometry/tray-outline";
 import type { Setup } from "../../../../shared-types/setup";
 import { randomPlaces, randomSetup } from "../../../reference/random-setups";
 import { finished, solved, soundSetup, trayWith } from "../../../reference/solved";
@@ -81,8 +81,7 @@ function mirroredSetup(setup: Setup): Setup {
     ...placed,
     xMm: lengthMm - placed.xMm,
     turnDeg: 180 - placed.turnDeg,
-    shape:
-      placed.shape.kind === "polygon" ? { kind: "polygon", pointsMm: placed.shape.pointsMm.map(([x, y]) => [x, -y]) } : placed.shape,
+    shape: placed.shape.kind === "polygon" ? { kind: "polygon", pointsMm: placed.shape.pointsMm.map(([x, y]) => [x, -y]) } : placed.shape,
   });
   return soundSetup({
     ...setup,
@@ -118,7 +117,15 @@ describe("a layout in open water", () => {
 
   it("of twice the size in every direction has the same resistance per depth, and the same potentials at scaled places", () => {
     const part = (scale: number): object[] => [
-      { id: "A", role: "electrode", tap: 0, xMm: 40 * scale, yMm: 50 * scale, turnDeg: 30, shape: { kind: "bar", lengthMm: 40 * scale, widthMm: 6 * scale } },
+      {
+        id: "A",
+        role: "electrode",
+        tap: 0,
+        xMm: 40 * scale,
+        yMm: 50 * scale,
+        turnDeg: 30,
+        shape: { kind: "bar", lengthMm: 40 * scale, widthMm: 6 * scale },
+      },
       { id: "B", role: "electrode", tap: 1, xMm: 110 * scale, yMm: 60 * scale, shape: { kind: "disc", diameterMm: 20 * scale } },
     ];
     const tray = (scale: number): object => ({ shape: "rectangle", lengthMm: 150 * scale, widthMm: 100 * scale });
@@ -137,7 +144,15 @@ describe("a part that is dragged", () => {
       const setup = trayWith({
         parts: [
           { id: "A", role: "electrode", tap: 0, xMm: 65, yMm: 100, turnDeg: 90, shape: { kind: "bar", lengthMm: 100, widthMm: 10 } },
-          { id: "B", role: "electrode", tap: 1, xMm: 200 + 0.05 * step, yMm: 103, turnDeg: 78, shape: { kind: "bar", lengthMm: 70, widthMm: 6 } },
+          {
+            id: "B",
+            role: "electrode",
+            tap: 1,
+            xMm: 200 + 0.05 * step,
+            yMm: 103,
+            turnDeg: 78,
+            shape: { kind: "bar", lengthMm: 70, widthMm: 6 },
+          },
         ],
       });
       const field = solved(setup, "live");
