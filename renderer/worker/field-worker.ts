@@ -35,7 +35,7 @@ async function plan(request: Extract<WorkerRequest, { kind: "plan" }>): Promise<
   }
 }
 
-onmessage = (event: MessageEvent<WorkerRequest>) => {
+self.onmessage = (event: MessageEvent<WorkerRequest>) => {
   const request = event.data;
   if (request.kind === "plan") void plan(request);
   else answer({ kind: "sampled", requestId: request.requestId, readings: planner.sample(request.setup, request.placesMm) });
