@@ -3,7 +3,7 @@ import type { Setup } from "../../../shared-types/setup";
 import type { PotentialField } from "../field/potential-field";
 import { crossingsOf } from "../geometry/crossings-of-pieces";
 import { type HoldsWater, openWaterOf } from "../geometry/open-water";
-import type { Piece } from "../geometry/outline";
+import { boundsOf, type Piece } from "../geometry/outline";
 import { type Box, boxGapMm, outlined } from "../geometry/overlap";
 import { traySizeMm } from "../geometry/tray-outline";
 import { directionFromPicture, directionFromReadings, type FieldDirection } from "./field-direction";
@@ -25,7 +25,7 @@ const WEAK_SHARE = 1e-5;
 interface Water {
   readonly directionAt: FieldDirection;
   readonly holdsWater: HoldsWater;
-  readonly outlines: readonly { readonly box: Box; readonly pieces: readonly Piece[] }[];
+  readonly outlines: readonly { readonly box: Box; readonly pieces: readonly { readonly piece: Piece; readonly box: Box }[] }[];
   readonly shortestStepMm: number;
 }
 
@@ -35,7 +35,8 @@ function arrival(x: number, y: number, toX: number, toY: number, { outlines, hol
   let nearest: readonly [number, number] | null = null;
   for (const { box, pieces } of outlines) {
     if (boxGapMm(stepBox, box) > 0) continue;
-    for (const piece of pieces) {
+    for (const { piece, box: pieceBox } of pieces) {
+      if (boxGapMm(stepBox, pieceBox) > 0) continue;
       for (const place of crossingsOf({ kind: "edge", x0: x, y0: y, x1: toX, y1: toY }, piece)) {
         if (nearest === null || Math.hypot(place[0] - x, place[1] - y) < Math.hypot(nearest[0] - x, nearest[1] - y)) nearest = place;
       }
@@ -103,7 +104,7 @@ export function fieldLinesOf(field: PotentialField, setup: Setup, lines: number,
     holdsWater,
     outlines: setup.parts.map((part) => {
       const { box, loops } = outlined(part);
-      return { box, pieces: loops.flat() };
+      return { box, pieces: loops.flat().map((piece) => ({ piece, box: boundsOf([[piece]]) })) };
     }),
     shortestStepMm: pitchMm / 4,
   };

@@ -29,7 +29,7 @@ function placeOn(piece: Piece, share: number): SurfacePlace {
 
 function outflowsOf(loop: readonly Piece[], setup: Setup, metalVolts: number, surfaceField: SurfaceField, stepMm: number): Outflow[] {
   return loop.flatMap((piece) => {
-    const count = Math.max(2, Math.ceil(lengthOf(piece) / stepMm));
+    const count = Math.max(1, Math.ceil(lengthOf(piece) / stepMm));
     return Array.from({ length: count }, (_, index): Outflow => {
       const place = placeOn(piece, (index + 0.5) / count);
       const outward = Math.max(0, surfaceField(place, metalVolts));

@@ -1,7 +1,7 @@
 import type { Part, Setup } from "../../../shared-types/setup";
 import { radians } from "../../../shared-types/units";
 import { type HoldsWater, openWaterOf } from "../geometry/open-water";
-import { type OutlinedShape, outlined } from "../geometry/overlap";
+import { boxGapMm, type OutlinedShape, outlined } from "../geometry/overlap";
 import { distanceToOutline, signedDistance } from "../geometry/signed-distance";
 import { type Place, roundedPlace } from "./rounded-place";
 
@@ -105,9 +105,11 @@ export function checkPlaces(setup: Setup): readonly Place[] {
   const holdsWater = openWaterOf(setup);
   return setup.parts.flatMap((part, index) => {
     if (part.role !== "floating") return [];
-    const { placed, loops } = shapes[index];
+    const { placed, loops, box } = shapes[index];
     const onMetal = roomiest(setup, metalCandidates(part), ([x, y]) => -signedDistance(placed, x, y, loops), ON_METAL_MM);
-    const within = inHollow(setup, part, shapes, holdsWater);
+    // What lies outside the part's box is farther from its hollow than the part itself.
+    const nearby = shapes.filter(({ box: other }) => boxGapMm(other, box) === 0);
+    const within = inHollow(setup, part, nearby, holdsWater);
     return [onMetal, within].filter((place) => place !== null);
   });
 }

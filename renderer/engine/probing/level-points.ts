@@ -7,6 +7,7 @@ import type { Reach } from "./reach";
 import { FARTHEST_ROUNDING_MM, type Place, roundedPlace } from "./rounded-place";
 import { spreadPlaces } from "./spread";
 import { clearStretches, type Stretch } from "./stretches";
+import { type TakenPlaces, takenPlaces } from "./taken-places";
 
 /** The places found on one level, before they are numbered. */
 export interface LevelPlaces {
@@ -36,7 +37,15 @@ function onLevel([x, y]: Place, volts: number, field: PotentialField): Place {
   return [x + downhill * Math.cos(angle), y + downhill * Math.sin(angle)];
 }
 
-const tooClose = ([ax, ay]: Place, [bx, by]: Place, leastMm: number): boolean => Math.hypot(ax - bx, ay - by) < leastMm - 1e-9;
+/** @returns whether any two of the places are nearer than `leastMm`. */
+function anyTooClose(places: readonly Place[], leastMm: number): boolean {
+  const before = takenPlaces(leastMm);
+  return places.some((place) => {
+    if (before.anyWithin(place, leastMm)) return true;
+    before.add(place);
+    return false;
+  });
+}
 
 const asked = (count: number): string => (count === 1 ? "1 point" : `${count} points`);
 
@@ -60,16 +69,16 @@ function noteOf(
 /**
  * Chooses the places of one level: spread evenly by length over the part of its line that the probe can reach, each rounded
  * to 0.5 mm without coming too near to anything.
- * @param others places that the new ones must keep away from.
+ * @param others places of other levels, which the new ones keep away from; asked about up to `leastDistanceMm` + rounding.
  */
-export function levelPlaces(setup: Setup, field: PotentialField, line: Equipotential, reach: Reach, others: readonly Place[]): LevelPlaces {
+export function levelPlaces(setup: Setup, field: PotentialField, line: Equipotential, reach: Reach, others: TakenPlaces): LevelPlaces {
   const leastMm = leastDistanceMm(setup);
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
   const wanted = setup.probing.pointsPerLevel;
   const hindrances = new Map<string, number>();
   const isClear = (place: Place): boolean => {
     // Room for the rounding, so that it can break no clearance.
-    const hindrance = others.some((other) => tooClose(place, other, leastMm + FARTHEST_ROUNDING_MM))
+    const hindrance = others.anyWithin(place, leastMm + FARTHEST_ROUNDING_MM)
       ? "the points of the next level"
       : reach.hindrance(place[0], place[1], FARTHEST_ROUNDING_MM);
     if (hindrance !== null) hindrances.set(hindrance, (hindrances.get(hindrance) ?? 0) + 1);
@@ -77,16 +86,22 @@ export function levelPlaces(setup: Setup, field: PotentialField, line: Equipoten
   };
   const stretches: Stretch[] = line.paths.flatMap((path) => clearStretches(path, isClear, [lengthMm / 2, widthMm / 2]));
   const reachableMm = stretches.reduce((sum, stretch) => sum + stretch.lengthMm, 0);
-  const fits = ([x, y]: Place): boolean => reach.hindrance(x, y, 0) === null && !others.some((other) => tooClose([x, y], other, leastMm));
+  const fits = ([x, y]: Place): boolean => reach.hindrance(x, y, 0) === null && !others.anyWithin([x, y], leastMm);
   const placed = (place: Place): Place => {
     const corrected = roundedPlace(setup.tray, onLevel(place, line.volts, field));
     return fits(corrected) ? corrected : roundedPlace(setup.tray, place);
   };
   const most = reachableMm === 0 ? 0 : Math.min(wanted, Math.max(1, Math.floor(reachableMm / leastMm)));
-  for (let count = most; count > 0; count--) {
+  // Among many points a few fewer hardly show, and trying every count would be slow.
+  for (let count = most; count > 0; count -= Math.max(1, Math.floor(count / 20))) {
     const chosen = spreadPlaces(stretches, count).map(({ closed, places }) => ({ closed, places: places.map(placed) }));
-    const all = chosen.flatMap(({ places }) => places);
-    if (all.some((place, index) => all.slice(0, index).some((before) => tooClose(place, before, leastMm)))) continue;
+    if (
+      anyTooClose(
+        chosen.flatMap(({ places }) => places),
+        leastMm,
+      )
+    )
+      continue;
     return { stretches: chosen, note: noteOf(count, wanted, reachableMm, leastMm, hindrances) };
   }
   return { stretches: [], note: noteOf(0, wanted, 0, leastMm, hindrances) };

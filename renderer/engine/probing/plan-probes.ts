@@ -2,10 +2,11 @@ import type { Equipotential, ProbePlan, ProbePoint } from "../../../shared-types
 import type { Setup } from "../../../shared-types/setup";
 import type { PotentialField } from "../field/potential-field";
 import { checkPlaces } from "./check-places";
-import { levelPlaces } from "./level-points";
+import { leastDistanceMm, levelPlaces } from "./level-points";
 import { evenLevels } from "./levels";
 import { reachOf } from "./reach";
-import type { Place } from "./rounded-place";
+import { FARTHEST_ROUNDING_MM, type Place } from "./rounded-place";
+import { takenPlaces } from "./taken-places";
 import { toleranceBand } from "./tolerance-band";
 import { visitingOrder } from "./visiting-order";
 
@@ -28,11 +29,11 @@ export function planProbes(setup: Setup, field: PotentialField, equipotentials: 
   const bandAt = toleranceBand(setup, Math.max(Math.abs(spanV[0]), Math.abs(spanV[1])));
 
   const found = volts.map((): ReturnType<typeof levelPlaces> => ({ stretches: [], note: null }));
-  const taken: Place[] = [];
+  const taken = takenPlaces(leastDistanceMm(setup) + FARTHEST_ROUNDING_MM);
   for (const level of fromMiddle(volts.length)) {
     const line = equipotentials.find((each) => Math.abs(each.volts - volts[level]) <= 1e-9 * (spanV[1] - spanV[0]));
     found[level] = levelPlaces(setup, field, line ?? { volts: volts[level], paths: [] }, reach, taken);
-    taken.push(...found[level].stretches.flatMap(({ places }) => places));
+    for (const place of found[level].stretches.flatMap(({ places }) => places)) taken.add(place);
   }
 
   let number = 0;
