@@ -65,26 +65,13 @@ function fromWeakest(outflows: readonly Outflow[]): Outflow[] {
   ];
 }
 
-/** The unbroken runs of a loop from which current leaves. */
-function runsOf(outflows: readonly Outflow[]): Outflow[][] {
-  const runs: Outflow[][] = [];
-  let run: Outflow[] = [];
-  for (const outflow of fromWeakest(outflows)) {
-    if (outflow.flux > 0) {
-      run.push(outflow);
-    } else if (run.length > 0) {
-      runs.push(run);
-      run = [];
-    }
-  }
-  return run.length > 0 ? [...runs, run] : runs;
-}
+const totalOf = (outflows: readonly Outflow[]): number => outflows.reduce((sum, { flux }) => sum + flux, 0);
 
-function seedsOf(run: readonly Outflow[], count: number): SurfacePlace[] {
-  const total = run.reduce((sum, { flux }) => sum + flux, 0);
+function seedsOf(outflows: readonly Outflow[], count: number): SurfacePlace[] {
+  const total = totalOf(outflows);
   const seeds: SurfacePlace[] = [];
   let passed = 0;
-  for (const { piece, fromShare, toShare, flux } of run) {
+  for (const { piece, fromShare, toShare, flux } of outflows) {
     // A line in the middle of each equal portion of the current.
     while (seeds.length < count && ((seeds.length + 0.5) / count) * total <= passed + flux) {
       const within = (((seeds.length + 0.5) / count) * total - passed) / flux;
@@ -110,10 +97,12 @@ export function lineSeeds(
   const surfaces = field.conductors.flatMap(({ id, role, volts }) => {
     const part = setup.parts.find((each) => each.id === id);
     if (part === undefined || Number.isNaN(volts)) return [];
-    const runs = outlineOf(part).flatMap((loop) => runsOf(outflowsOf(loop, setup, volts, surfaceField, stepMm)));
-    return runs.map((run) => ({ role, run, flux: run.reduce((sum, { flux }) => sum + flux, 0) }));
+    return outlineOf(part).map((loop) => {
+      const outflows = fromWeakest(outflowsOf(loop, setup, volts, surfaceField, stepMm));
+      return { role, outflows, flux: totalOf(outflows) };
+    });
   });
   const sent = surfaces.reduce((sum, { role, flux }) => sum + (role === "electrode" ? flux : 0), 0);
   if (!(sent > 0)) return [];
-  return surfaces.flatMap(({ run, flux }) => seedsOf(run, Math.round((lines * flux) / sent)));
+  return surfaces.flatMap(({ outflows, flux }) => seedsOf(outflows, Math.round((lines * flux) / sent)));
 }
