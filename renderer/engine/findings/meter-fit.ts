@@ -1,5 +1,5 @@
-import { ADVISABLE_HIGH_HZ, ADVISABLE_LOW_HZ, DIGITS_PER_MM, LOADING_SHARE, sourceOf, wetHandsLimit } from "./limits";
 import { isSaltSolution } from "../bench/water-conductivity";
+import { ADVISABLE_HIGH_HZ, ADVISABLE_LOW_HZ, DIGITS_PER_MM, LOADING_SHARE, sourceOf, wetHandsLimit } from "./limits";
 import type { PlanRule, SetupRule } from "./rule";
 import { finding, percent, roundedUp, shown } from "./wording";
 

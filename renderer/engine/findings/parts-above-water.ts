@@ -23,9 +23,7 @@ export const partsAboveWater: SetupRule = (setup) =>
           ? `The ${KIND[part.role]} ${partLabel(part)} is ${shown(part.heightMm)} mm high in ${shown(depthMm)} mm of water: current passes over it, and the two-dimensional plan does not hold.`
           : `The ${KIND[part.role]} ${partLabel(part)} stands only ${shown(proudMm, 2)} mm proud of the water, which may creep over it.`,
         measured: `${shown(part.heightMm)} mm high in ${shown(depthMm)} mm of water`,
-        limit: covered
-          ? { text: "higher than the water", source: `the two-dimensional plan; ${sourceOf(IMMERSION)}` }
-          : LEAST_PROUD,
+        limit: covered ? { text: "higher than the water", source: `the two-dimensional plan; ${sourceOf(IMMERSION)}` } : LEAST_PROUD,
         remedy: `Use a part ${shown(height)} mm high (about half immersed), or less water.`,
         edit: height <= 500 ? { path: partPath(setup, part.id, "heightMm"), value: height } : null,
       }),

@@ -31,9 +31,7 @@ export const interfaceShare: PlanRule = ({ setup, bench }) => {
 export const alternatingGas: PlanRule = ({ bench }) => {
   const surface = bench.interface;
   if (surface.waveform === "dc") return [];
-  const dense = bench.circuit.electrodes.filter(
-    (electrode) => electrode.largestCurrentDensityAPerM2 > surface.gasFreeCurrentDensityAPerM2,
-  );
+  const dense = bench.circuit.electrodes.filter((electrode) => electrode.largestCurrentDensityAPerM2 > surface.gasFreeCurrentDensityAPerM2);
   if (dense.length === 0) return [];
   const most = Math.max(...dense.map((electrode) => electrode.largestCurrentDensityAPerM2));
   // 1 mA/cm² is 10 A/m².

@@ -19,12 +19,16 @@ export const touchVoltage: SetupRule = (setup) => {
     : `Set the supply to ${wet.value} V or less.`;
   if (standing > dry.value) {
     const message = `The supply reaches ${measured}, above the limit even for dry hands.`;
-    return [finding({ code: "volts-above-dry", severity: "stop", about, message, measured, limit: dry, remedy: another, edit, safety: true })];
+    return [
+      finding({ code: "volts-above-dry", severity: "stop", about, message, measured, limit: dry, remedy: another, edit, safety: true }),
+    ];
   }
   if (standing > wet.value) {
     const message = `The supply reaches ${measured}; hands are wet at this bench${salt ? ", and salt water makes the skin conduct better still" : ""}.`;
     const remedy = `${another} Switch off before hands go into the water.`;
-    return [finding({ code: "volts-above-wet-hands", severity: "caution", about, message, measured, limit: wet, remedy, edit, safety: true })];
+    return [
+      finding({ code: "volts-above-wet-hands", severity: "caution", about, message, measured, limit: wet, remedy, edit, safety: true }),
+    ];
   }
   if (waveform === "ac" && openCircuitVolts === undefined && volts * UNLOADED_RISE.value > wet.value) {
     const might = shown(volts * UNLOADED_RISE.value);

@@ -1,6 +1,6 @@
 import type { Finding } from "../../../shared-types/plan";
-import { depthRangeMm, leastDepthForTiltMm, tiltBaseMm, tiltReadingShare, UNNOTICED_TILT_DEG } from "../bench/water-geometry";
 import { radians } from "../../../shared-types/units";
+import { depthRangeMm, leastDepthForTiltMm, tiltBaseMm, tiltReadingShare, UNNOTICED_TILT_DEG } from "../bench/water-geometry";
 import { FREEBOARD, sourceOf, TILT_READING_SHARE } from "./limits";
 import type { SetupRule } from "./rule";
 import { finding, percent, roundedUp, shown } from "./wording";
@@ -25,7 +25,10 @@ export const freeboard: SetupRule = (setup) => {
         : `Only ${shown(freeboardMm, 2)} mm of wall stand above the water at its deepest side; a nudge spills it.`,
       measured: `${shown(freeboardMm, 2)} mm`,
       limit: spills ? { text: "water lower than the wall", source: "the tray's wall" } : FREEBOARD,
-      remedy: depthMm >= LEAST_DEPTH_MM ? `Fill to ${shown(depthMm)} mm, or take a tray with a higher wall.` : "Take a tray with a higher wall, or tilt it less.",
+      remedy:
+        depthMm >= LEAST_DEPTH_MM
+          ? `Fill to ${shown(depthMm)} mm, or take a tray with a higher wall.`
+          : "Take a tray with a higher wall, or tilt it less.",
       edit: depthMm >= LEAST_DEPTH_MM ? { path: "water.depthMm", value: depthMm } : null,
       safety: true,
     }),

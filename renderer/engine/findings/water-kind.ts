@@ -1,5 +1,5 @@
-import { DISTILLED_BELOW_US_PER_CM } from "../bench/water";
 import { LARGEST_TABULATED_MOL_PER_LITRE, saltDose } from "../bench/salt-to-add";
+import { DISTILLED_BELOW_US_PER_CM } from "../bench/water";
 import { isSaltSolution, NATURAL_WATER_RANGE_C, SALT_SOLUTION_RANGE_C } from "../bench/water-conductivity";
 import { DISTILLED, NEEDLESS_CONDUCTIVITY } from "./limits";
 import type { SetupRule } from "./rule";

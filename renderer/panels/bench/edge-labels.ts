@@ -63,6 +63,9 @@ export function edgeLabels(frame: ChartFrame, region: OperatingRegion): readonly
 export function edgePoints(frame: ChartFrame, boundary: RegionBoundary): string {
   const tall = 3 * frame.voltsEnd;
   return boundary.path
-    .map(([depthMm, volts]) => `${xOfDepth(frame, depthMm).toFixed(1)},${yOfVolts(frame, isUpright(boundary) && volts > 0 ? frame.voltsEnd : Math.min(volts, tall)).toFixed(1)}`)
+    .map(
+      ([depthMm, volts]) =>
+        `${xOfDepth(frame, depthMm).toFixed(1)},${yOfVolts(frame, isUpright(boundary) && volts > 0 ? frame.voltsEnd : Math.min(volts, tall)).toFixed(1)}`,
+    )
     .join(" ");
 }

@@ -68,7 +68,13 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
   const x = xOfHz(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, frequencyHz)));
   const text = `${hzText(frequencyHz)}, about ${percentText(shareLost.typical)} lost`;
   return (
-    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="group" aria-label="Share lost at the electrodes' surfaces along frequency">
+    <svg
+      ref={svg}
+      className="bench-chart"
+      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
+      role="group"
+      aria-label="Share lost at the electrodes' surfaces along frequency"
+    >
       <defs>
         <clipPath id={`${id}-clip`}>
           <rect x={FRAME.left} y={FRAME.top} width={FRAME.width} height={FRAME.height} />
@@ -82,7 +88,13 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
       <g clipPath={`url(#${id}-clip)`}>
         <path className="bench-chart-spread" d={band} />
         <path className="bench-chart-curve" d={`M${curve(alongFrequency, "typical").join("L")}`} />
-        <line className="bench-chart-edge" x1={FRAME.left} x2={FRAME.left + FRAME.width} y1={yOfShare(NAMED_SHARE)} y2={yOfShare(NAMED_SHARE)} />
+        <line
+          className="bench-chart-edge"
+          x1={FRAME.left}
+          x2={FRAME.left + FRAME.width}
+          y1={yOfShare(NAMED_SHARE)}
+          y2={yOfShare(NAMED_SHARE)}
+        />
       </g>
       <text className="bench-chart-name" x={FRAME.left + FRAME.width - 6} y={yOfShare(NAMED_SHARE) - 4} textAnchor="end">
         2 %

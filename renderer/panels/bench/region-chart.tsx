@@ -1,7 +1,17 @@
 import { type KeyboardEvent, type PointerEvent, useId, useRef } from "react";
 import type { OperatingRegion } from "../../../shared-types/bench";
 import { edgeLabels, edgePoints } from "./edge-labels";
-import { allowsSetting, axisTicks, type ChartFrame, chartEnds, depthOfX, regionPath, voltsOfY, xOfDepth, yOfVolts } from "./region-geometry";
+import {
+  allowsSetting,
+  axisTicks,
+  type ChartFrame,
+  chartEnds,
+  depthOfX,
+  regionPath,
+  voltsOfY,
+  xOfDepth,
+  yOfVolts,
+} from "./region-geometry";
 
 const WIDTH = 400;
 const HEIGHT = 300;
@@ -88,7 +98,13 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
 
   const { left, top, width, height } = frame;
   return (
-    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="group" aria-label="Depth of water against supply voltage">
+    <svg
+      ref={svg}
+      className="bench-chart"
+      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
+      role="group"
+      aria-label="Depth of water against supply voltage"
+    >
       <defs>
         <pattern id={`${id}-hatch`} width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
           <line className="bench-chart-hatch" x1="0" y1="0" x2="0" y2="7" />
@@ -102,7 +118,11 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
       <g clipPath={`url(#${id}-clip)`}>
         <path className="bench-chart-allowed" d={regionPath(frame, region)} />
         {region.boundaries.map((boundary) => (
-          <polyline key={boundary.rule} className={`bench-chart-edge bench-chart-edge-${boundary.forbids}`} points={edgePoints(frame, boundary)} />
+          <polyline
+            key={boundary.rule}
+            className={`bench-chart-edge bench-chart-edge-${boundary.forbids}`}
+            points={edgePoints(frame, boundary)}
+          />
         ))}
       </g>
       <Axes frame={frame} waveform={waveform} />
@@ -150,7 +170,11 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
       >
         <circle className="bench-chart-grip" r="16" />
         <circle className="bench-chart-ring" r="7.5" />
-        {allowed ? <circle className="bench-chart-core" r="3" /> : <path className="bench-chart-no" d="M-3.5-3.5L3.5 3.5M3.5-3.5L-3.5 3.5" />}
+        {allowed ? (
+          <circle className="bench-chart-core" r="3" />
+        ) : (
+          <path className="bench-chart-no" d="M-3.5-3.5L3.5 3.5M3.5-3.5L-3.5 3.5" />
+        )}
       </g>
     </svg>
   );

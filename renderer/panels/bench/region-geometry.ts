@@ -34,10 +34,17 @@ export function axisTicks(end: number, count: number): readonly number[] {
  * The part of the chart that the plan's numbers describe: enough to show the region, the present setting and every edge near them.
  * @returns the ends of both axes.
  */
-export function chartEnds(region: OperatingRegion, present: readonly [number, number]): { readonly depthEndMm: number; readonly voltsEnd: number } {
+export function chartEnds(
+  region: OperatingRegion,
+  present: readonly [number, number],
+): { readonly depthEndMm: number; readonly voltsEnd: number } {
   const highest = Math.max(...region.columns.flatMap((column) => column.volts.map((run) => run[1])), 0);
   const upright = region.boundaries.filter((one) => one.forbids === "deeper").map((one) => one.path[0][0]);
-  const deepest = Math.max(...region.columns.map((column) => column.depthMm), ...upright.filter((depth) => depth < region.depthRangeMm[1]), 0);
+  const deepest = Math.max(
+    ...region.columns.map((column) => column.depthMm),
+    ...upright.filter((depth) => depth < region.depthRangeMm[1]),
+    0,
+  );
   return {
     depthEndMm: roundEnd(Math.max(Math.min(deepest * 1.15, region.depthRangeMm[1]), present[0] * 1.1, 5)),
     voltsEnd: roundEnd(Math.max(highest > 0 ? highest * 1.2 : region.voltsRange[1], present[1] * 1.1)),

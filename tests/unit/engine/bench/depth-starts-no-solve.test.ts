@@ -5,7 +5,10 @@ import type { Setup } from "../../../../shared-types/setup";
 import { channel } from "./trays";
 
 /** Plans a setup and says whether a field was solved for it: only a solve reports progress. */
-async function planned(planner: ReturnType<typeof createPlanner>, setup: Setup): Promise<{ readonly plan: Plan; readonly solved: boolean }> {
+async function planned(
+  planner: ReturnType<typeof createPlanner>,
+  setup: Setup,
+): Promise<{ readonly plan: Plan; readonly solved: boolean }> {
   let solved = false;
   const outcome = await planner.plan(setup, "live", { onProgress: () => (solved = true) });
   if (!outcome.ok) throw new Error(outcome.refusal.message);

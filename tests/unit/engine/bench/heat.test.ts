@@ -43,8 +43,13 @@ describe("warming", () => {
   it("grows with the square of the volts and with time", () => {
     fc.assert(
       fc.property(fc.double({ min: 1, max: 30, noNaN: true }), (volts) => {
-        expect(heatOf({ supply: { volts: 2 * volts } }).riseOverSessionK / heatOf({ supply: { volts } }).riseOverSessionK).toBeCloseTo(4, 9);
-        expect(heatOf({ supply: { volts }, session: { minutes: 80 } }).conductivityDrift).toBeGreaterThan(heatOf({ supply: { volts } }).conductivityDrift);
+        expect(heatOf({ supply: { volts: 2 * volts } }).riseOverSessionK / heatOf({ supply: { volts } }).riseOverSessionK).toBeCloseTo(
+          4,
+          9,
+        );
+        expect(heatOf({ supply: { volts }, session: { minutes: 80 } }).conductivityDrift).toBeGreaterThan(
+          heatOf({ supply: { volts } }).conductivityDrift,
+        );
       }),
       { numRuns: 15 },
     );

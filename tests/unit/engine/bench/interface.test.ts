@@ -63,7 +63,11 @@ describe("volts lost at the electrodes' surfaces, AC", () => {
   it("polished gold has 6 ± 2 µF/cm² (published)", () => {
     const setup = channel();
     const gold = { ...setup, parts: setup.parts.map((part) => ({ ...part, material: "gold" })) };
-    expect(alternatingInterface(gold, circuitNumbers(gold, channelFacts(gold))).doubleLayerUfPerCm2).toEqual({ low: 4, typical: 6, high: 8 });
+    expect(alternatingInterface(gold, circuitNumbers(gold, channelFacts(gold))).doubleLayerUfPerCm2).toEqual({
+      low: 4,
+      typical: 6,
+      high: 8,
+    });
   });
 
   it("loses 2 % exactly at the frequency that it names", () => {
@@ -87,7 +91,10 @@ describe("volts lost at the electrodes' surfaces, AC", () => {
   });
 
   it("is the same at any depth: face and water grow together", () => {
-    expect(alternating({ water: { depthMm: 6 } }).shareLost.typical).toBeCloseTo(alternating({ water: { depthMm: 18 } }).shareLost.typical, 12);
+    expect(alternating({ water: { depthMm: 6 } }).shareLost.typical).toBeCloseTo(
+      alternating({ water: { depthMm: 18 } }).shareLost.typical,
+      12,
+    );
   });
 
   it("holds gas back below about 3 mA/cm² at 50 Hz (2πfC·0.5 V, derived)", () => {

@@ -62,14 +62,19 @@ describe("the depth–voltage region", () => {
       { supply: { waveform: "dc" } },
     );
     fc.assert(
-      fc.property(supplies, fc.double({ min: 1, max: 39, noNaN: true }), fc.double({ min: 0.05, max: 40, noNaN: true }), (change, depthMm, volts) => {
-        const base = { ...change, water: { ...(change?.water as object), depthMm }, supply: { ...(change?.supply as object), volts } };
-        const setup = channel(base);
-        const facts = channelFacts(setup);
-        const bench = benchOf(setup, facts);
-        const found = findingsOf(setup, bench, facts, NO_PROBING).filter((finding) => CHART_CODES.has(finding.code));
-        expect(bench.region.presentAllowed).toBe(found.length === 0);
-      }),
+      fc.property(
+        supplies,
+        fc.double({ min: 1, max: 39, noNaN: true }),
+        fc.double({ min: 0.05, max: 40, noNaN: true }),
+        (change, depthMm, volts) => {
+          const base = { ...change, water: { ...(change?.water as object), depthMm }, supply: { ...(change?.supply as object), volts } };
+          const setup = channel(base);
+          const facts = channelFacts(setup);
+          const bench = benchOf(setup, facts);
+          const found = findingsOf(setup, bench, facts, NO_PROBING).filter((finding) => CHART_CODES.has(finding.code));
+          expect(bench.region.presentAllowed).toBe(found.length === 0);
+        },
+      ),
       { numRuns: 300 },
     );
   });
@@ -84,7 +89,8 @@ describe("the depth–voltage region", () => {
   });
 
   it("ends at 12 V AC and 30 V DC (IEC 60364-4-41 cl. 414.4.5), and at 6 V AC with salt (IEC 60204-1 cl. 6.4.1)", () => {
-    const highest = (change: Change): number => Math.max(...regionFor(change).columns.flatMap((column) => column.volts.map((run) => run[1])));
+    const highest = (change: Change): number =>
+      Math.max(...regionFor(change).columns.flatMap((column) => column.volts.map((run) => run[1])));
     expect(highest({})).toBe(12);
     expect(highest({ supply: { waveform: "dc" } })).toBe(30);
     expect(highest({ water: { salt: "sodium-chloride" } })).toBe(6);

@@ -1,12 +1,12 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { waterNumbers } from "../../../../renderer/engine/bench/water";
 import {
   molarConductivity,
   saltConcentrationMolPerLitre,
   saltConductivitySPerM,
   saltDose,
 } from "../../../../renderer/engine/bench/salt-to-add";
+import { waterNumbers } from "../../../../renderer/engine/bench/water";
 import { channel } from "./trays";
 
 // CRC Handbook, equivalent conductivity of NaCl in water at 25 °C, S cm²/mol; a confirmed copy for the larger part.

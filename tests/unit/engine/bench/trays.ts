@@ -1,8 +1,8 @@
-import { type ConductorReading, type FieldPicture, OWNER_WATER } from "../../../../shared-types/plan";
-import { parseSetup } from "../../../../shared-types/parse-setup";
-import type { Setup } from "../../../../shared-types/setup";
-import { conductivityAtTemperatureSPerM } from "../../../../renderer/engine/bench/water-conductivity";
 import type { FieldFacts } from "../../../../renderer/engine/bench/field-facts";
+import { conductivityAtTemperatureSPerM } from "../../../../renderer/engine/bench/water-conductivity";
+import { parseSetup } from "../../../../shared-types/parse-setup";
+import { type ConductorReading, type FieldPicture, OWNER_WATER } from "../../../../shared-types/plan";
+import type { Setup } from "../../../../shared-types/setup";
 
 type Json = { [key: string]: Json | readonly Json[] | string | number | boolean | undefined };
 

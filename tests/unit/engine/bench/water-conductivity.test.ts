@@ -36,10 +36,13 @@ describe("conductivity at the water's temperature", () => {
     expect(Math.abs(1 / naturalWaterShare(temperatureC) / factor - 1)).toBeLessThan(0.0006);
   });
 
-  it.each(POTASSIUM_CHLORIDE)("the 2.1 %%/K of salt water is within 2 %% of the potassium chloride standards at %d °C", (temperatureC, thin, strong) => {
-    expect(Math.abs(saltSolutionShare(temperatureC) / (thin / 1408.23) - 1)).toBeLessThan(0.02);
-    expect(Math.abs(saltSolutionShare(temperatureC) / (strong / 12824.6) - 1)).toBeLessThan(0.02);
-  });
+  it.each(POTASSIUM_CHLORIDE)(
+    "the 2.1 %%/K of salt water is within 2 %% of the potassium chloride standards at %d °C",
+    (temperatureC, thin, strong) => {
+      expect(Math.abs(saltSolutionShare(temperatureC) / (thin / 1408.23) - 1)).toBeLessThan(0.02);
+      expect(Math.abs(saltSolutionShare(temperatureC) / (strong / 12824.6) - 1)).toBeLessThan(0.02);
+    },
+  );
 
   it("at 25 °C is exactly what the meter shows: 500 µS/cm are 0.05 S/m", () => {
     expect(conductivityAtTemperatureSPerM(channel())).toBe(0.05);

@@ -2,9 +2,9 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { waterNumbers } from "../../../../renderer/engine/bench/water";
 import { waterExtent } from "../../../../renderer/engine/bench/water-volume";
+import { covers } from "../../../../renderer/engine/geometry/signed-distance";
 import { depthFromWallMm, traySizeMm } from "../../../../renderer/engine/geometry/tray-outline";
 import { waterDepthMm } from "../../../../renderer/engine/geometry/water-depth";
-import { covers } from "../../../../renderer/engine/geometry/signed-distance";
 import type { Setup } from "../../../../shared-types/setup";
 import { channel } from "./trays";
 
@@ -86,7 +86,11 @@ describe("the tray's water", () => {
         }),
         ({ turnDeg, xMm, tiltXDeg, tiltYDeg }) => {
           const setup = channel({
-            water: { tiltXDeg, tiltYDeg, slabs: [{ id: "S", xMm: 130, yMm: 60, turnDeg, thicknessMm: 5, shape: { kind: "disc", diameterMm: 90 } }] },
+            water: {
+              tiltXDeg,
+              tiltYDeg,
+              slabs: [{ id: "S", xMm: 130, yMm: 60, turnDeg, thicknessMm: 5, shape: { kind: "disc", diameterMm: 90 } }],
+            },
             parts: [
               { id: "A", role: "floating", xMm, yMm: 80, turnDeg, shape: { kind: "frame", lengthMm: 90, widthMm: 50, wallMm: 8 } },
               { id: "B", role: "floating", xMm: 130, yMm: 160, turnDeg, shape: { kind: "arc", outerMm: 60, innerMm: 40, sweepDeg: 200 } },

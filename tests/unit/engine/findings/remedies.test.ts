@@ -18,7 +18,10 @@ function remedied(setup: Setup, edit: RemedyEdit): Setup {
   const copy: object = structuredClone(setup);
   const keys = edit.path.replace(/\[(\d+)\]/g, ".$1").split(".");
   const last = keys.pop() ?? "";
-  const holder: unknown = keys.reduce((at: unknown, key) => (typeof at === "object" && at !== null ? Reflect.get(at, key) : undefined), copy);
+  const holder: unknown = keys.reduce(
+    (at: unknown, key) => (typeof at === "object" && at !== null ? Reflect.get(at, key) : undefined),
+    copy,
+  );
   if (typeof holder !== "object" || holder === null || !Reflect.has(holder, last)) throw new Error(`no such key: ${edit.path}`);
   Reflect.set(holder, last, edit.value);
   const parsed = parseSetup(copy);

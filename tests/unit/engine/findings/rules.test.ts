@@ -357,20 +357,23 @@ function readable(text: string): void {
 }
 
 describe("each rule", () => {
-  it.each(TABLE.map((row) => [row.code, row.severity, row] as const))("%s (%s) is silent just inside its limit and speaks just outside", (_code, _severity, row) => {
-    const of = (change: Change) => findings(change).filter((finding) => finding.code === row.code && finding.severity === row.severity);
-    expect(of(row.inside)).toEqual([]);
-    const [found] = of(row.outside);
-    expect(found).toBeDefined();
-    expect(found.message).toMatch(row.says);
-    readable(found.message);
-    readable(found.remedy);
-    for (const text of [found.measured, found.limit, found.source]) {
-      expect(text).not.toBe("");
-      expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
-    }
-    expect(found.remedy.endsWith(SAFETY_SENTENCE)).toBe(row.safety === true);
-  });
+  it.each(TABLE.map((row) => [row.code, row.severity, row] as const))(
+    "%s (%s) is silent just inside its limit and speaks just outside",
+    (_code, _severity, row) => {
+      const of = (change: Change) => findings(change).filter((finding) => finding.code === row.code && finding.severity === row.severity);
+      expect(of(row.inside)).toEqual([]);
+      const [found] = of(row.outside);
+      expect(found).toBeDefined();
+      expect(found.message).toMatch(row.says);
+      readable(found.message);
+      readable(found.remedy);
+      for (const text of [found.measured, found.limit, found.source]) {
+        expect(text).not.toBe("");
+        expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
+      }
+      expect(found.remedy.endsWith(SAFETY_SENTENCE)).toBe(row.safety === true);
+    },
+  );
 
   it("a part of exactly the tray's width, wall to wall, is legal", () => {
     expect(geometryFindings(channel()).filter((finding) => finding.severity === "stop")).toEqual([]);
@@ -401,7 +404,9 @@ describe("each rule", () => {
   });
 
   it("lists the gravest first", () => {
-    const order = findings(dc(70, { water: { salt: "sodium-chloride" } })).map((finding) => ["stop", "caution", "note"].indexOf(finding.severity));
+    const order = findings(dc(70, { water: { salt: "sodium-chloride" } })).map((finding) =>
+      ["stop", "caution", "note"].indexOf(finding.severity),
+    );
     expect(order).toEqual([...order].sort((a, b) => a - b));
     expect(order.length).toBeGreaterThan(3);
   });

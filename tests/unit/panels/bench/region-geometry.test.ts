@@ -1,5 +1,6 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { benchOf } from "../../../../renderer/engine/bench/bench";
 import {
   allowsSetting,
   axisTicks,
@@ -14,7 +15,6 @@ import {
   xOfDepth,
   yOfVolts,
 } from "../../../../renderer/panels/bench/region-geometry";
-import { benchOf } from "../../../../renderer/engine/bench/bench";
 import { channel, channelFacts } from "../../engine/bench/trays";
 
 const regionFor = (change: Parameters<typeof channel>[0] = {}) => {
@@ -55,19 +55,25 @@ describe("the chart's plane", () => {
   it("agrees with the engine on what is allowed, for any setting", () => {
     const changes = fc.constantFrom<Parameters<typeof channel>[0]>({}, { meter: { counts: 400 } }, { supply: { currentLimitA: 0.006 } });
     fc.assert(
-      fc.property(changes, fc.double({ min: 1, max: 39, noNaN: true }), fc.double({ min: 0.05, max: 20, noNaN: true }), (change, depthMm, volts) => {
-        const region = regionFor({ ...change, water: { depthMm }, supply: { ...(change?.supply as object), volts } });
-        // Between two columns a curved edge runs straight: settings within 1 % of an edge may differ.
-        const near = [0.99, 1.01].map((share) => allowsSetting(region, depthMm, volts * share));
-        if (near[0] === near[1]) expect(allowsSetting(region, depthMm, volts)).toBe(region.presentAllowed);
-      }),
+      fc.property(
+        changes,
+        fc.double({ min: 1, max: 39, noNaN: true }),
+        fc.double({ min: 0.05, max: 20, noNaN: true }),
+        (change, depthMm, volts) => {
+          const region = regionFor({ ...change, water: { depthMm }, supply: { ...(change?.supply as object), volts } });
+          // Between two columns a curved edge runs straight: settings within 1 % of an edge may differ.
+          const near = [0.99, 1.01].map((share) => allowsSetting(region, depthMm, volts * share));
+          if (near[0] === near[1]) expect(allowsSetting(region, depthMm, volts)).toBe(region.presentAllowed);
+        },
+      ),
       { numRuns: 200 },
     );
   });
 
   it("says which rules a setting breaks", () => {
     const region = regionFor();
-    const broken = (depthMm: number, volts: number) => region.boundaries.filter((one) => breaks(one, depthMm, volts)).map((one) => one.rule);
+    const broken = (depthMm: number, volts: number) =>
+      region.boundaries.filter((one) => breaks(one, depthMm, volts)).map((one) => one.rule);
     expect(broken(12, 6)).toEqual([]);
     expect(broken(12, 13)).toEqual(["wet-hands"]);
     expect(broken(6, 13)).toEqual(["wet-hands", "tilt-tolerance"]);
