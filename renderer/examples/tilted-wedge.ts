@@ -51,10 +51,10 @@ export const tiltedWedge: Example = {
   }),
   known: {
     source: "field between concentric spheres, by the wedge's analogy with axial symmetry (exact)",
-    shapeFactor: { value: (2 * SLOPE) / (CENTRE_DEPTH_MM * curvature), within: 2e-4 },
+    shapeFactor: { value: (2 * SLOPE) / (CENTRE_DEPTH_MM * curvature), within: 5e-5 },
     currents: [],
     conductors: [],
     places: [at(45, 0), at(5, 60), at(40, 50), at(90, -60), at(30, -100)],
-    voltsWithin: 2e-4,
+    voltsWithin: 5e-5,
   },
 };

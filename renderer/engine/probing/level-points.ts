@@ -61,7 +61,7 @@ function noteOf(
   const why = most === undefined ? "" : `; the rest is too near to ${most[0]}`;
   if (found === 0)
     return most === undefined
-      ? "No point: the line of this level is too short to follow."
+      ? "No point: no line of this level runs through the water."
       : `No point: all of this line is too near to ${most[0]}.`;
   return `Only ${found} of ${asked(wanted)}: the probe reaches ${reachableMm.toFixed(1)} mm of this line and points must be ${leastMm} mm apart${why}.`;
 }

@@ -29,6 +29,10 @@ describe.each(EXAMPLES.map((example) => [example.title, example] as const))("the
     if (known.shapeFactor !== null) {
       expect(Math.abs(shapeFactorOf(setup, field) / known.shapeFactor.value - 1)).toBeLessThanOrEqual(known.shapeFactor.within);
     }
+    if (known.shapeFactor !== null) {
+      const share = Math.abs(shapeFactorOf(setup, field) / known.shapeFactor.value - 1);
+      expect(share, "beyond the program's own bound").toBeLessThanOrEqual(field.totalFlux.error / field.totalFlux.value);
+    }
     const flux = (id: string): number => {
       const conductors = field.conductors.map(({ currentA }) => Math.abs(currentA)).reduce((sum, each) => sum + each, 0) / 2;
       const amperes = field.conductors.find((each) => each.id === id)?.currentA ?? Number.NaN;
@@ -41,6 +45,10 @@ describe.each(EXAMPLES.map((example) => [example.title, example] as const))("the
     }
     expect(known.places.length).toBeGreaterThanOrEqual(5);
     for (const { xMm, yMm, volts } of known.places) {
+      const reading = field.read(xMm, yMm);
+      // The source's last digit is 1e-7 V.
+      const error = Math.abs((reading.volts ?? Number.NaN) - volts);
+      expect(error, `beyond the program's own bound at ${xMm}, ${yMm}`).toBeLessThanOrEqual(reading.voltsError + 1e-6);
       expect(Math.abs((field.read(xMm, yMm).volts ?? Number.NaN) - volts), `at ${xMm}, ${yMm}`).toBeLessThanOrEqual(
         known.voltsWithin * span,
       );
