@@ -8,7 +8,7 @@ import { type Box, boxGapMm, outlined } from "../geometry/overlap";
 import { traySizeMm } from "../geometry/tray-outline";
 import { directionFromPicture, directionFromReadings, type FieldDirection } from "./field-direction";
 import { leavesWaterAt } from "./line-ends";
-import { lineSeeds } from "./line-seeds";
+import { lineStarts } from "./line-starts";
 import { type SurfacePlace, surfaceFieldFromPicture, surfaceFieldFromReadings } from "./surface-field";
 
 /** Longest step along a line, mm, and the turns (cosines of 3° and 8°) between which a step is neither lengthened nor halved. */
@@ -62,10 +62,10 @@ function meanDirection(
   return [(first[0] + 2 * second[0] + 2 * third[0] + fourth[0]) / 6, (first[1] + 2 * second[1] + 2 * third[1] + fourth[1]) / 6];
 }
 
-function traced(seed: SurfacePlace, offMm: number, water: Water): FieldLine {
-  const places = [seed.x, seed.y];
-  let x = seed.x + offMm * seed.outX;
-  let y = seed.y + offMm * seed.outY;
+function traced(start: SurfacePlace, offMm: number, water: Water): FieldLine {
+  const places = [start.x, start.y];
+  let x = start.x + offMm * start.outX;
+  let y = start.y + offMm * start.outY;
   let step = water.shortestStepMm * 2;
   let direction = water.directionAt(x, y);
   for (let count = 0; count < MOST_STEPS && direction !== null; count++) {
@@ -110,6 +110,6 @@ export function fieldLinesOf(field: PotentialField, setup: Setup, lines: number,
   };
   const offMm = OFF_SURFACE_CELLS * pitchMm;
   const surfaceField = (quality === "live" ? surfaceFieldFromPicture : surfaceFieldFromReadings)(field, holdsWater, offMm);
-  const seeds = lineSeeds(field, setup, lines, surfaceField, quality === "live" ? 2 * pitchMm : pitchMm);
-  return seeds.map((seed) => traced(seed, offMm, water)).filter((line) => line.length > 4);
+  const starts = lineStarts(field, setup, lines, surfaceField, quality === "live" ? 2 * pitchMm : pitchMm);
+  return starts.map((start) => traced(start, offMm, water)).filter((line) => line.length > 4);
 }

@@ -127,8 +127,8 @@ describe("equipotentials of random setups", () => {
   const levelsOf = ({ spanV: [low, high] }: PotentialField): number[] => [1, 2, 3, 4, 5, 6, 7].map((k) => low + ((high - low) * k) / 8);
   const inMetal = (setup: Setup, [x, y]: Pair): boolean => setup.parts.some((part) => covers(part, x, y));
 
-  it.each([1, 2, 3, 4, 5, 6, 7, 8, 9, 10])("(%i) lie in the water, at their level, and end only where the water does", (seed) => {
-    const setup = randomSetup(seed, water);
+  it.each([1, 2, 3, 4, 5, 6, 7, 8, 9, 10])("(%i) lie in the water, at their level, and end only where the water does", (number) => {
+    const setup = randomSetup(number, water);
     const field = solved(setup, "live");
     const holdsWater = openWaterOf(setup);
     const cellMm = Math.hypot(field.picture.pitchXMm, field.picture.pitchYMm);

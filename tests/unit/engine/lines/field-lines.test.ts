@@ -51,8 +51,8 @@ describe("field lines", () => {
     expect(lines.length - leaving).toBe(24);
   });
 
-  it.each([11, 12, 13, 14, 15, 16])("of random setups fall all the way and end at metal (%i)", (seed) => {
-    const setup = randomSetup(seed, { insulators: true, slabs: false, tilt: false });
+  it.each([11, 12, 13, 14, 15, 16])("of random setups fall all the way and end at metal (%i)", (number) => {
+    const setup = randomSetup(number, { insulators: true, slabs: false, tilt: false });
     const field = solved(setup, "live");
     const lines = fieldLinesOf(field, setup, 24, "print");
     expect(lines.length).toBeGreaterThanOrEqual(20);

@@ -218,9 +218,9 @@ describe("a small move of a part", () => {
 });
 
 describe("probe plans of random setups", () => {
-  it.each([31, 32, 33, 34, 35, 36, 37, 38, 39, 40, 41, 42])("(%i) are sound", (seed) => {
-    const plain = randomSetup(seed, { insulators: true, slabs: seed % 3 === 0, tilt: seed % 2 === 0 });
-    const setup = soundSetup({ ...plain, probing: { ...plain.probing, levels: 3 + (seed % 9), pointsPerLevel: 1 + (seed % 11) } });
+  it.each([31, 32, 33, 34, 35, 36, 37, 38, 39, 40, 41, 42])("(%i) are sound", (number) => {
+    const plain = randomSetup(number, { insulators: true, slabs: number % 3 === 0, tilt: number % 2 === 0 });
+    const setup = soundSetup({ ...plain, probing: { ...plain.probing, levels: 3 + (number % 9), pointsPerLevel: 1 + (number % 11) } });
     const field = solved(setup, "live");
     const plan = planned(setup, field);
     expectSound(setup, field, plan);

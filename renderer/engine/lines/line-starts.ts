@@ -67,19 +67,19 @@ function fromWeakest(outflows: readonly Outflow[]): Outflow[] {
 
 const totalOf = (outflows: readonly Outflow[]): number => outflows.reduce((sum, { flux }) => sum + flux, 0);
 
-function seedsOf(outflows: readonly Outflow[], count: number): SurfacePlace[] {
+function startsOf(outflows: readonly Outflow[], count: number): SurfacePlace[] {
   const total = totalOf(outflows);
-  const seeds: SurfacePlace[] = [];
+  const starts: SurfacePlace[] = [];
   let passed = 0;
   for (const { piece, fromShare, toShare, flux } of outflows) {
     // A line in the middle of each equal portion of the current.
-    while (seeds.length < count && ((seeds.length + 0.5) / count) * total <= passed + flux) {
-      const within = (((seeds.length + 0.5) / count) * total - passed) / flux;
-      seeds.push(placeOn(piece, fromShare + within * (toShare - fromShare)));
+    while (starts.length < count && ((starts.length + 0.5) / count) * total <= passed + flux) {
+      const within = (((starts.length + 0.5) / count) * total - passed) / flux;
+      starts.push(placeOn(piece, fromShare + within * (toShare - fromShare)));
     }
     passed += flux;
   }
-  return seeds;
+  return starts;
 }
 
 /**
@@ -87,7 +87,7 @@ function seedsOf(outflows: readonly Outflow[], count: number): SurfacePlace[] {
  * @param lines how many lines the electrodes send out together, nearly.
  * @param stepMm length of the stretches in which the current is summed.
  */
-export function lineSeeds(
+export function lineStarts(
   field: PotentialField,
   setup: Setup,
   lines: number,
@@ -104,5 +104,5 @@ export function lineSeeds(
   });
   const sent = surfaces.reduce((sum, { role, flux }) => sum + (role === "electrode" ? flux : 0), 0);
   if (!(sent > 0)) return [];
-  return surfaces.flatMap(({ outflows, flux }) => seedsOf(outflows, Math.round((lines * flux) / sent)));
+  return surfaces.flatMap(({ outflows, flux }) => startsOf(outflows, Math.round((lines * flux) / sent)));
 }
