@@ -68,13 +68,7 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
   const x = xOfHz(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, frequencyHz)));
   const text = `${hzText(frequencyHz)}, about ${percentText(shareLost.typical)} lost`;
   return (
-    <svg
-      ref={svg}
-      className="bench-chart"
-      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
-      role="group"
-      aria-label="Share lost at the electrodes' surfaces along frequency"
-    >
+    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="presentation">
       <defs>
         <clipPath id={`${id}-clip`}>
           <rect x={FRAME.left} y={FRAME.top} width={FRAME.width} height={FRAME.height} />
@@ -121,7 +115,6 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
           frequency, Hz
         </text>
       </g>
-      {/* biome-ignore lint/a11y/useSemanticElements: the mark sits on a curve, which no input element draws */}
       <g
         className={shareLost.typical > NAMED_SHARE ? "bench-chart-dot bench-chart-dot-forbidden" : "bench-chart-dot"}
         role="slider"

@@ -98,13 +98,7 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
 
   const { left, top, width, height } = frame;
   return (
-    <svg
-      ref={svg}
-      className="bench-chart"
-      viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
-      role="group"
-      aria-label="Depth of water against supply voltage"
-    >
+    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="presentation">
       <defs>
         <pattern id={`${id}-hatch`} width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
           <line className="bench-chart-hatch" x1="0" y1="0" x2="0" y2="7" />
@@ -125,8 +119,9 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
           />
         ))}
       </g>
+      <CoarseDigits frame={frame} region={region} />
       <Axes frame={frame} waveform={waveform} />
-      <g clipPath={`url(#${id}-clip)`} aria-hidden="true">
+      <g clipPath={`url(#${id}-clip)`}>
         <line className="bench-chart-cross" x1={x} y1={y} x2={x} y2={top + height} />
         <line className="bench-chart-cross" x1={left} y1={y} x2={x} y2={y} />
       </g>
@@ -151,7 +146,6 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
           <title>{`Suggestion: ${region.suggestion[0]} mm, ${region.suggestion[1]} V`}</title>
         </path>
       )}
-      {/* biome-ignore lint/a11y/useSemanticElements: a dot in a plane has two values, which no input element holds */}
       <g
         className={allowed ? "bench-chart-dot" : "bench-chart-dot bench-chart-dot-forbidden"}
         role="slider"
@@ -178,6 +172,27 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
       </g>
     </svg>
   );
+}
+
+/** Just above a change of the meter's range a digit is too coarse: the bands above the lowest readable volts. */
+function CoarseDigits({ frame, region }: { readonly frame: ChartFrame; readonly region: OperatingRegion }) {
+  const right = frame.left + frame.width;
+  const bands = region.unreadableVolts.filter(([low]) => low > 0 && low < frame.voltsEnd);
+  return bands.map(([low, high]) => {
+    const bottom = yOfVolts(frame, low);
+    const top = yOfVolts(frame, Math.min(high, frame.voltsEnd));
+    return (
+      <g key={low}>
+        <line className="bench-chart-edge bench-chart-edge-below" x1={frame.left} x2={right} y1={bottom} y2={bottom} />
+        {high < frame.voltsEnd && <line className="bench-chart-edge bench-chart-edge-below" x1={frame.left} x2={right} y1={top} y2={top} />}
+        {bottom - top >= 14 && (
+          <text className="bench-chart-name" x={right - 6} y={bottom - 4} textAnchor="end">
+            digit too coarse
+          </text>
+        )}
+      </g>
+    );
+  });
 }
 
 function Axes({ frame, waveform }: { readonly frame: ChartFrame; readonly waveform: "ac" | "dc" }) {
