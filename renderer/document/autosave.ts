@@ -1,17 +1,9 @@
-import type { Setup } from "../../shared-types/setup";
-import { type Document, isDirty, type OpenFile } from "./document";
+import type { Host } from "../../shared-types/host";
+import { setupText } from "../../shared-types/parse-setup";
+import { type Document, isDirty } from "./document";
 
-/** What is kept in case the window goes down: the setup, and the file that it belongs to. */
-export interface Draft {
-  readonly setup: Setup;
-  readonly file: OpenFile | null;
-}
-
-/** Where drafts are kept; the host provides it. */
-export interface DraftStore {
-  readonly write: (draft: Draft) => Promise<void>;
-  readonly clear: () => Promise<void>;
-}
+/** Where the draft of this window's setup is kept in case the window goes down: the host is one. */
+export type DraftStore = Pick<Host, "writeDraft" | "clearDraft">;
 
 /** Runs something later. @returns a way to call it off. */
 export type Later = (run: () => void, afterMs: number) => () => void;
@@ -42,7 +34,10 @@ export function keepDraft(
     callOff?.();
     callOff = null;
     const state = document.getState();
-    const task = (): Promise<void> => (isDirty(state) ? drafts.write({ setup: state.setup, file: state.file }) : drafts.clear());
+    const task = (): Promise<void> =>
+      isDirty(state)
+        ? drafts.writeDraft({ title: state.setup.title, handle: state.file?.handle ?? null, text: setupText(state.setup) })
+        : drafts.clearDraft();
     // One after the other, so that an older draft can never overtake a newer one.
     writing = writing.then(task).catch(onFault);
     return writing;

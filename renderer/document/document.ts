@@ -1,4 +1,5 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
+import type { FileHandle } from "../../shared-types/host";
 import { parseSetup } from "../../shared-types/parse-setup";
 import type { Problem, Result } from "../../shared-types/result";
 import type { Setup } from "../../shared-types/setup";
@@ -11,15 +12,9 @@ import { inWords } from "./problem-wording";
  * The result of each is validated; a refused edit changes nothing and its reasons are returned and kept in `refused`.
  */
 
-/** A file that the setup was read from or saved to. `handle` is the host's own business. */
-export interface OpenFile {
-  readonly name: string;
-  readonly handle: unknown;
-}
-
 /** Where the setup came from: its file, and what that file holds. */
 interface Origin {
-  readonly file: OpenFile | null;
+  readonly file: FileHandle | null;
   /** The setup that needs no saving: as it is on disk, or as it was opened; null for one brought back from a draft. */
   readonly saved: Setup | null;
 }
@@ -43,7 +38,7 @@ export interface DocumentState {
   readonly setup: Setup;
   /** Ids of the selected parts and slabs, in the order in which they were selected. */
   readonly selection: readonly string[];
-  readonly file: OpenFile | null;
+  readonly file: FileHandle | null;
   readonly saved: Setup | null;
   readonly past: readonly Step[];
   readonly future: readonly Step[];
@@ -75,9 +70,9 @@ export interface Document extends Pick<StoreApi<DocumentState>, "getState" | "su
    * Replaces the whole setup: a file, an example, a new tray, or (`unsaved`) a draft brought back after a crash.
    * Can be undone too, and brings the old file back then.
    */
-  readonly replace: (setup: Setup, from: { readonly label: string; readonly file: OpenFile | null; readonly unsaved?: boolean }) => void;
+  readonly replace: (setup: Setup, from: { readonly label: string; readonly file: FileHandle | null; readonly unsaved?: boolean }) => void;
   /** Notes that `setup` has been written to `file`. */
-  readonly markSaved: (setup: Setup, file: OpenFile) => void;
+  readonly markSaved: (setup: Setup, file: FileHandle) => void;
 }
 
 /** Steps kept for undo. Setups share what did not change, so that a step costs little. */
@@ -101,7 +96,7 @@ function selectionAfter(before: Setup, after: Setup, selection: readonly string[
 }
 
 /** @returns a document that holds `setup`, with nothing to undo. */
-export function createDocument(setup: Setup, file: OpenFile | null = null): Document {
+export function createDocument(setup: Setup, file: FileHandle | null = null): Document {
   const store = createStore<DocumentState>(() => ({
     setup,
     selection: [],
@@ -195,7 +190,7 @@ export function createDocument(setup: Setup, file: OpenFile | null = null): Docu
     });
   }
 
-  function replace(next: Setup, from: { label: string; file: OpenFile | null; unsaved?: boolean }): void {
+  function replace(next: Setup, from: { label: string; file: FileHandle | null; unsaved?: boolean }): void {
     cancelDrag();
     const { setup: before, file: oldFile, saved, past } = getState();
     setState({

@@ -3,6 +3,8 @@ import { DRAFT_AFTER_MS, type Draft, keepDraft } from "../../../renderer/documen
 import { setTitle } from "../../../renderer/document/commands/bench";
 import { moveThings } from "../../../renderer/document/commands/placing";
 import { BUSY_AFTER_MS, createPlanning, isCurrent, type PlanSource } from "../../../renderer/document/planning";
+import type { Draft } from "../../../shared-types/host";
+import { parseSetupText } from "../../../shared-types/parse-setup";
 import type { Plan, PlanOutcome, Quality } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import { handClock, looseRing, openDocument } from "./fixtures";
@@ -12,11 +14,11 @@ describe("the draft", () => {
     const kept: { draft: Draft | null; writes: number } = { draft: null, writes: 0 };
     return {
       kept,
-      write: async (draft: Draft) => {
+      writeDraft: async (draft: Draft) => {
         kept.draft = draft;
         kept.writes++;
       },
-      clear: async () => {
+      clearDraft: async () => {
         kept.draft = null;
       },
     };
@@ -34,7 +36,7 @@ describe("the draft", () => {
     }
     await stop();
     expect(DRAFT_AFTER_MS).toBeLessThanOrEqual(2000);
-    expect(drafts.kept.draft?.setup).toBe(document.getState().setup);
+    expect(parseSetupText(drafts.kept.draft?.text ?? "")).toEqual({ ok: true, value: document.getState().setup });
     expect(drafts.kept.writes).toBe(1);
   });
 
@@ -43,9 +45,9 @@ describe("the draft", () => {
     const stop = keepDraft(document, drafts, fail, clock.later);
     document.run(setTitle("Ring"));
     await stop();
-    expect(drafts.kept.draft?.setup.title).toBe("Ring");
+    expect(drafts.kept.draft?.title).toBe("Ring");
     const again = keepDraft(document, drafts, fail, clock.later);
-    document.markSaved(document.getState().setup, { name: "ring.fieldtray.json", handle: null });
+    document.markSaved(document.getState().setup, { name: "ring.fieldtray.json", handle: "h1", place: "" });
     await again();
     expect(drafts.kept.draft).toBeNull();
   });
@@ -53,7 +55,7 @@ describe("the draft", () => {
   it("reports a store that fails and keeps trying at the next change", async () => {
     const [document, clock] = [openDocument(), handClock()];
     const faults: unknown[] = [];
-    const full = { write: () => Promise.reject(new Error("disk full")), clear: () => Promise.resolve() };
+    const full = { writeDraft: () => Promise.reject(new Error("disk full")), clearDraft: () => Promise.resolve() };
     const stop = keepDraft(document, full, (reason) => faults.push(reason), clock.later);
     document.run(setTitle("one"));
     clock.pass(DRAFT_AFTER_MS);

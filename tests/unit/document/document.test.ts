@@ -67,9 +67,9 @@ describe("undo", () => {
   });
 
   it("brings back the setup before an opened file, with its own file and its unsaved state", () => {
-    const document = createDocument(looseRing, { name: "ring.fieldtray.json", handle: 1 });
+    const document = createDocument(looseRing, { name: "ring.fieldtray.json", handle: "h1", place: "" });
     document.run(setTitle("Ring, first try"));
-    document.replace(twoBars.setup, { label: "open bars", file: { name: "bars.fieldtray.json", handle: 2 } });
+    document.replace(twoBars.setup, { label: "open bars", file: { name: "bars.fieldtray.json", handle: "h2", place: "" } });
     expect(document.getState().file?.name).toBe("bars.fieldtray.json");
     expect(isDirty(document.getState())).toBe(false);
     document.undo();
@@ -143,7 +143,7 @@ describe("unsaved work", () => {
     expect(isDirty(document.getState())).toBe(false);
     document.run(setName(looseRing, "A", "West bar"));
     expect(isDirty(document.getState())).toBe(true);
-    document.markSaved(document.getState().setup, { name: "west.fieldtray.json", handle: null });
+    document.markSaved(document.getState().setup, { name: "west.fieldtray.json", handle: "hnull", place: "" });
     expect(isDirty(document.getState())).toBe(false);
     document.undo();
     expect(isDirty(document.getState())).toBe(true);
