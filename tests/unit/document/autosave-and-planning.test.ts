@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { DRAFT_AFTER_MS, type Draft, keepDraft } from "../../../renderer/document/autosave";
+import { DRAFT_AFTER_MS, keepDraft } from "../../../renderer/document/autosave";
 import { setTitle } from "../../../renderer/document/commands/bench";
 import { moveThings } from "../../../renderer/document/commands/placing";
 import { BUSY_AFTER_MS, createPlanning, isCurrent, type PlanSource } from "../../../renderer/document/planning";
