@@ -1,136 +1,86 @@
-import {
-  type Draft,
-  draftSchema,
-  type ExportOutcome,
-  type Host,
-  type LogEntry,
-  type PickedFile,
-  type RecentFile,
-  type SaveOutcome,
-  type Settings,
-  settingsSchema,
-} from "../../shared-types/host";
-import { type BrowserFile, download, pickFile, pickTarget, readFileHandle, SETUP_TYPE, writeFileHandle } from "./browser-files";
-import { type BrowserStore, browserStore } from "./browser-store";
+import { type Host, type HostEvent, type LogEntry, type Settings, type Surroundings, settingsSchema } from "../../shared-types/host";
+import { listenForCommandKeys } from "./browser-commands";
+import { exportDocument, importDocument, printDocument } from "./browser-documents";
+import { browserDrafts, type WindowLocks, windowLocks } from "./browser-drafts";
+import { listenForDrops } from "./browser-drops";
+import { canOverwriteFiles } from "./browser-files";
+import { browserSetups } from "./browser-setups";
+import { indexedStore } from "./indexed-store";
+import { firstOf, type KeyStore } from "./key-store";
+import { serverStore, serverStoreAddress } from "./server-store";
 
-const EXPORT_TYPES = {
-  pdf: { description: "PDF document", mime: "application/pdf" },
-  svg: { description: "SVG drawing", mime: "image/svg+xml" },
-  dxf: { description: "DXF drawing", mime: "image/vnd.dxf" },
-  csv: { description: "Table (CSV)", mime: "text/csv" },
-  png: { description: "PNG picture", mime: "image/png" },
-} as const;
-
-const RECENT_KEPT = 10;
 const LOG_KEPT = 200;
+/** How often the open file is looked at for changes by another program, ms. */
+const LOOK_AT_FILE_MS = 4000;
 
-interface KnownFile {
-  readonly name: string;
-  readonly fileHandle: FileSystemFileHandle | null;
-  readonly lastModified: number;
+function systemOf(page: Window): Surroundings["system"] {
+  const name = page.navigator.userAgent;
+  return /Windows/.test(name) ? "windows" : /Mac OS/.test(name) ? "mac" : /Linux|X11|CrOS/.test(name) ? "linux" : "other";
 }
 
-interface KeptRecent extends RecentFile {
-  readonly fileHandle: FileSystemFileHandle;
+/** What a test may put in place of the browser's own. */
+export interface BrowserParts {
+  readonly ownStore: KeyStore;
+  readonly locks: WindowLocks;
+  readonly now: () => number;
 }
-
-const wording = (error: unknown): string => (error instanceof Error ? error.message : String(error));
 
 /**
- * The plain browser as surroundings: files through the File System Access API or by upload and download, drafts and
- * settings in IndexedDB.
+ * The plain browser as surroundings: files through the File System Access API or by upload and download, drafts and settings behind the
+ * local window server where there is one, else in the browser's own store.
  */
-export function browserHost(page: Window, version: string, store: BrowserStore = browserStore("fieldtray")): Host {
-  const known = new Map<string, KnownFile>();
+export function browserHost(page: Window, version: string, parts: Partial<BrowserParts> = {}): Host {
+  const { ownStore = indexedStore("fieldtray"), locks = windowLocks(page), now = Date.now } = parts;
+  const address = serverStoreAddress(page);
+  const store = address === null ? ownStore : firstOf(serverStore(page, address), ownStore);
+  const setups = browserSetups(page, ownStore, now);
+  const drafts = browserDrafts(store, setups, page.crypto.randomUUID(), locks, now);
+  const surroundings: Surroundings = { system: systemOf(page), version, canOverwrite: canOverwriteFiles(page), hasMenuBar: false };
   const log: string[] = [];
   let unsaved = false;
-  let nextHandle = 1;
+  let openHandle: string | null = null;
 
-  function remember(file: KnownFile): string {
-    const handle = `file-${nextHandle++}`;
-    known.set(handle, file);
-    return handle;
-  }
-
-  async function noteRecent(handle: string, { name, fileHandle }: KnownFile): Promise<void> {
-    if (fileHandle === null) return;
-    const before = await keptRecent();
-    const others = [];
-    for (const entry of before) if (!(await entry.fileHandle.isSameEntry(fileHandle))) others.push(entry);
-    const entry: KeptRecent = { handle, name, openedAt: new Date().toISOString(), fileHandle };
-    await store.write("recent", [entry, ...others].slice(0, RECENT_KEPT)).catch(() => {});
-  }
-
-  const keptRecent = async (): Promise<readonly KeptRecent[]> => {
-    const kept = await store.read("recent").catch(() => undefined);
-    return Array.isArray(kept) ? kept : [];
+  const note = ({ level, message }: LogEntry): void => {
+    log.push(`${new Date(now()).toISOString()} ${level} ${message}`);
+    if (log.length > LOG_KEPT) log.shift();
   };
 
-  async function taken(file: BrowserFile | null): Promise<PickedFile | null> {
-    if (file === null) return null;
-    const handle = remember(file);
-    await noteRecent(handle, file);
-    return { handle, name: file.name, text: file.text };
+  page.addEventListener("beforeunload", (event) => {
+    if (unsaved) event.preventDefault();
+  });
+
+  /** Tells of a change on disk once, and again only when it changes anew. */
+  function watchOpenFile(take: (event: HostEvent) => void): () => void {
+    let told: string | null = null;
+    const look = async (): Promise<void> => {
+      if (openHandle === null || page.document.visibilityState === "hidden") return;
+      const change = await setups.changedOnDisk(openHandle);
+      const sign = change === null ? null : `${openHandle} ${change.gone}`;
+      if (change !== null && sign !== told) take({ kind: "changed-on-disk", ...change });
+      told = sign;
+    };
+    const timer = page.setInterval(() => void look(), LOOK_AT_FILE_MS);
+    const focus = (): void => void look();
+    page.addEventListener("focus", focus);
+    return () => {
+      page.clearInterval(timer);
+      page.removeEventListener("focus", focus);
+    };
   }
 
-  async function saveFile({ handle, suggestedName, text, overwrite }: Parameters<Host["saveFile"]>[0]): Promise<SaveOutcome> {
-    const content = new Blob([text], { type: "application/json" });
-    try {
-      const file = handle === null ? undefined : known.get(handle);
-      let target = file?.fileHandle ?? null;
-      if (handle !== null && file !== undefined && target !== null) {
-        const onDisk = await target.getFile().catch(() => null);
-        if (!overwrite && onDisk !== null && onDisk.lastModified !== file.lastModified) return { kind: "changed", name: file.name };
-      } else {
-        const picked = await pickTarget(page, suggestedName, SETUP_TYPE);
-        if (picked === null) return { kind: "cancelled" };
-        target = picked ?? null;
-      }
-      if (target === null) {
-        download(page, suggestedName, content);
-        return { kind: "saved", handle: remember({ name: suggestedName, fileHandle: null, lastModified: 0 }), name: suggestedName };
-      }
-      const entry = { name: target.name, fileHandle: target, lastModified: await writeFileHandle(target, content) };
-      const saved = handle !== null && file !== undefined ? handle : remember(entry);
-      known.set(saved, entry);
-      await noteRecent(saved, entry);
-      return { kind: "saved", handle: saved, name: target.name };
-    } catch (error) {
-      return { kind: "failed", message: `${suggestedName} could not be saved: ${wording(error)}` };
-    }
-  }
-
-  async function exportFile({ suggestedName, kind, bytes }: Parameters<Host["exportFile"]>[0]): Promise<ExportOutcome> {
-    const { description, mime } = EXPORT_TYPES[kind];
-    const content = new Blob([bytes.slice()], { type: mime });
-    try {
-      const target = await pickTarget(page, suggestedName, { description, accept: { [mime]: [`.${kind}`] } });
-      if (target === null) return { kind: "cancelled" };
-      if (target === undefined) download(page, suggestedName, content);
-      else await writeFileHandle(target, content);
-      return { kind: "saved", name: target?.name ?? suggestedName };
-    } catch (error) {
-      return { kind: "failed", message: `${suggestedName} could not be written: ${wording(error)}` };
-    }
-  }
-
-  /** The browser's own PDF view prints at actual size (the file asks for it); an inner frame would be fitted to the page. */
-  async function printPdf({ title, bytes }: Parameters<Host["printPdf"]>[0]): Promise<ExportOutcome> {
-    const address = URL.createObjectURL(new Blob([bytes.slice()], { type: "application/pdf" }));
-    const opened = page.open(address, "_blank");
-    page.setTimeout(() => URL.revokeObjectURL(address), 600_000);
-    if (opened !== null) return { kind: "saved", name: title };
-    return exportFile({ suggestedName: `${title}.pdf`, kind: "pdf", bytes });
-  }
-
-  async function drafts(): Promise<readonly Draft[]> {
-    const found: Draft[] = [];
-    for (const key of await store.keys().catch(() => [])) {
-      if (!key.startsWith("draft ")) continue;
-      const parsed = draftSchema.safeParse(await store.read(key));
-      if (parsed.success) found.push({ ...parsed.data, handle: null });
-    }
-    return found.sort((a, b) => (a.writtenAt < b.writtenAt ? 1 : -1));
+  function listen(take: (event: HostEvent) => void): () => void {
+    const stops = [
+      listenForCommandKeys(page, surroundings.system === "mac", (command) => take({ kind: "command", command })),
+      listenForDrops(page, async (file, fileHandle) => {
+        const outcome = await setups.arrived(file, fileHandle);
+        if (outcome.kind === "opened") take({ kind: "file-arrived", file: outcome.file, text: outcome.text });
+        else if (outcome.kind === "failed") take({ kind: "file-refused", message: outcome.message });
+      }),
+      watchOpenFile(take),
+    ];
+    return () => {
+      for (const stop of stops) stop();
+    };
   }
 
   async function readSettings(): Promise<Settings> {
@@ -138,66 +88,39 @@ export function browserHost(page: Window, version: string, store: BrowserStore =
     return parsed.success ? parsed.data : settingsSchema.parse({});
   }
 
-  page.addEventListener("beforeunload", (event) => {
-    if (unsaved) event.preventDefault();
-  });
-
-  const note = ({ level, message }: LogEntry): void => {
-    log.push(`${new Date().toISOString()} ${level} ${message}`);
-    if (log.length > LOG_KEPT) log.shift();
-  };
-
   return {
     kind: "browser",
-    openFile: async () => taken(await pickFile(page)),
-    openRecent: async (handle) => {
-      const entry = (await keptRecent()).find((one) => one.handle === handle);
-      if (entry === undefined) return null;
-      try {
-        return await taken(await readFileHandle(entry.fileHandle));
-      } catch (error) {
-        note({ level: "warning", message: `a recent file could not be read: ${wording(error)}` });
-        return null;
-      }
-    },
-    recentFiles: async () => (await keptRecent()).map(({ handle, name, openedAt }) => ({ handle, name, openedAt })),
-    saveFile,
-    exportFile,
-    printPdf,
-    drafts,
-    writeDraft: (draft) => store.write(`draft ${draft.id}`, draft),
-    discardDraft: (id) => store.remove(`draft ${id}`),
+    surroundings,
+    listen,
+    openFile: setups.open,
+    readFile: setups.read,
+    saveFile: setups.save,
+    exportFile: (request) => exportDocument(page, request),
+    importText: (kind) => importDocument(page, kind),
+    printPdf: (request) => printDocument(page, request, address),
+    recentFiles: setups.recent,
+    forgetRecent: setups.forget,
+    writeDraft: drafts.write,
+    clearDraft: drafts.clear,
+    keptDrafts: drafts.kept,
+    discardDraft: drafts.discard,
     readSettings,
     writeSettings: (settings) => store.write("settings", settings),
     setTitle: (title) => {
       unsaved = title.unsaved;
+      openHandle = title.handle;
       page.document.title = `${title.unsaved ? "• " : ""}${title.name} – Fieldtray`;
     },
+    closeWindow: () => {
+      unsaved = false;
+      page.close();
+    },
+    copyText: (text) =>
+      page.navigator.clipboard.writeText(text).then(
+        () => true,
+        () => false,
+      ),
     log: note,
     details: async () => [`Fieldtray ${version} in a browser`, page.navigator.userAgent, ...log].join("\n"),
-    onFileArrived: (take) =>
-      listenForDrops(page, async (file) => take({ handle: remember({ ...file, fileHandle: null }), name: file.name, text: file.text })),
-    onMenuCommand: () => () => {},
-    onCloseAsked: () => () => {},
-  };
-}
-
-/** Files dropped on the window. @returns a way to stop listening. */
-function listenForDrops(page: Window, take: (file: { name: string; text: string; lastModified: number }) => void): () => void {
-  const hasFiles = (event: DragEvent): boolean => event.dataTransfer?.types.includes("Files") ?? false;
-  const over = (event: DragEvent): void => {
-    if (hasFiles(event)) event.preventDefault();
-  };
-  const drop = (event: DragEvent): void => {
-    const file = event.dataTransfer?.files[0];
-    if (!hasFiles(event) || file === undefined) return;
-    event.preventDefault();
-    void file.text().then((text) => take({ name: file.name, text, lastModified: file.lastModified }));
-  };
-  page.addEventListener("dragover", over);
-  page.addEventListener("drop", drop);
-  return () => {
-    page.removeEventListener("dragover", over);
-    page.removeEventListener("drop", drop);
   };
 }

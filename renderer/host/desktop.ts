@@ -1,38 +1,67 @@
-import type { z } from "zod";
-import { type Bridge, EVENT_CHANNELS, type Host, INVOKE_CHANNELS, type InvokeChannel } from "../../shared-types/host";
+import { type Host, type HostEvent, hostEventSchema, type Surroundings } from "../../shared-types/host";
+import type { Bridge, ChannelName } from "../../shared-types/host-channel-names";
+import { type Answer, CHANNELS, type Request } from "../../shared-types/host-channels";
+import type { Command } from "../../shared-types/host-commands";
+import { listenForDrops } from "./browser-drops";
 
-type Answer<Channel extends InvokeChannel> = z.output<(typeof INVOKE_CHANNELS)[Channel]["answer"]>;
+const SYSTEMS: Readonly<Record<string, Surroundings["system"]>> = { linux: "linux", win32: "windows", darwin: "mac" };
 
-/** @returns the desktop's surroundings over the preload's bridge; answers that do not fit their schema reject. */
-export function desktopHost(bridge: Bridge): Host {
-  async function ask<Channel extends InvokeChannel>(channel: Channel, request: unknown): Promise<Answer<Channel>> {
-    const answer = await bridge.invoke(channel, request);
-    return INVOKE_CHANNELS[channel].answer.parse(answer ?? (channel in ANSWERS_NULL ? null : undefined)) as Answer<Channel>;
-  }
-  return {
-    kind: "desktop",
-    openFile: () => ask("openFile", undefined),
-    openRecent: (handle) => ask("openRecent", handle),
-    recentFiles: () => ask("recentFiles", undefined),
-    saveFile: (request) => ask("saveFile", request),
-    exportFile: (request) => ask("exportFile", request),
-    printPdf: (request) => ask("printPdf", request),
-    drafts: () => ask("drafts", undefined),
-    writeDraft: (draft) => ask("writeDraft", draft),
-    discardDraft: (id) => ask("discardDraft", id),
-    readSettings: () => ask("readSettings", undefined),
-    writeSettings: (settings) => ask("writeSettings", settings),
-    setTitle: (title) => bridge.send("setTitle", title),
-    log: (entry) => bridge.send("log", entry),
-    details: () => ask("details", undefined),
-    onFileArrived: (take) => bridge.listen("fileArrived", (message) => take(EVENT_CHANNELS.fileArrived.parse(message))),
-    onMenuCommand: (take) => bridge.listen("menuCommand", (message) => take(EVENT_CHANNELS.menuCommand.parse(message))),
-    onCloseAsked: (decide) =>
-      bridge.listen("closeAsked", () => {
-        void decide().then((answer) => bridge.send("closeAnswer", answer));
-      }),
-  };
+/** Menu commands that mean the text itself while a text field has the focus. */
+const TEXT_COMMANDS: ReadonlySet<Command> = new Set(["undo", "redo", "cut", "copy", "paste", "delete", "select-all"]);
+
+function textHasFocus(page: Window): boolean {
+  const element = page.document.activeElement;
+  if (element instanceof HTMLTextAreaElement) return true;
+  if (element instanceof HTMLInputElement) return !["checkbox", "radio", "range", "button", "color"].includes(element.type);
+  return element instanceof HTMLElement && element.isContentEditable;
 }
 
-/** Channels whose answer may be null; the bridge hands an absent answer on as undefined. */
-const ANSWERS_NULL: Readonly<Partial<Record<InvokeChannel, true>>> = { openFile: true, openRecent: true };
+/** @returns the desktop's surroundings over the preload's bridge; answers that do not fit their schema reject. */
+export function desktopHost(page: Window, bridge: Bridge, version: string): Host {
+  async function ask<Name extends ChannelName>(name: Name, request?: Request<Name>): Promise<Answer<Name>> {
+    return CHANNELS[name].answer.parse(await bridge.ask[name](request)) as Answer<Name>;
+  }
+  const tell = <Name extends ChannelName>(name: Name, request?: Request<Name>): void => {
+    void ask(name, request).catch(() => {});
+  };
+
+  function receive(event: HostEvent, take: (event: HostEvent) => void): void {
+    if (event.kind === "command" && TEXT_COMMANDS.has(event.command) && textHasFocus(page)) {
+      tell("editText", CHANNELS.editText.request.parse(event.command));
+    } else take(event);
+  }
+
+  return {
+    kind: "desktop",
+    surroundings: { system: SYSTEMS[bridge.platform] ?? "other", version, canOverwrite: true, hasMenuBar: true },
+    listen: (take) => {
+      const stops = [
+        bridge.onEvent((event) => receive(hostEventSchema.parse(event), take)),
+        listenForDrops(page, (file) => bridge.dropped(file)),
+      ];
+      tell("ready");
+      return () => {
+        for (const stop of stops) stop();
+      };
+    },
+    openFile: () => ask("openFile"),
+    readFile: (handle) => ask("readFile", handle),
+    saveFile: (request) => ask("saveFile", request),
+    exportFile: (request) => ask("exportFile", request),
+    importText: (kind) => ask("importText", kind),
+    printPdf: (request) => ask("printPdf", request),
+    recentFiles: () => ask("recentFiles"),
+    forgetRecent: (handle) => ask("forgetRecent", handle),
+    writeDraft: (draft) => ask("writeDraft", draft),
+    clearDraft: () => ask("clearDraft"),
+    keptDrafts: () => ask("keptDrafts"),
+    discardDraft: (id) => ask("discardDraft", id),
+    readSettings: () => ask("readSettings"),
+    writeSettings: (settings) => ask("writeSettings", settings),
+    setTitle: (title) => tell("setTitle", title),
+    closeWindow: () => tell("closeWindow"),
+    copyText: (text) => ask("copyText", text),
+    log: (entry) => tell("log", entry),
+    details: () => ask("details"),
+  };
+}
