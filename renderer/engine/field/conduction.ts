@@ -1,15 +1,19 @@
 import type { Setup } from "../../../shared-types/setup";
 import { radians } from "../../../shared-types/units";
 import type { Loop } from "../geometry/outline";
-import { covers } from "../geometry/signed-distance";
-import { traySizeMm } from "../geometry/tray-outline";
+import { covers, distanceToOutline } from "../geometry/signed-distance";
+import { depthFromWallMm, traySizeMm } from "../geometry/tray-outline";
 import { crossingsBetween, type ScanAxis } from "./crossings";
 import type { Grid } from "./grid";
+import { insulatorCorners, isNearPlain, type Place } from "./insulator-corners";
 import { type FieldLayout, type Solid, wallThicknessMm } from "./layout";
-import { markNear } from "./ownership";
+import { markDisc, markNear } from "./ownership";
 
 const NEAR_INSULATOR = 1;
 const NEAR_STEP = 2;
+const NEAR_CORNER = 4;
+/** Cells round an insulator's corner in which its own flow is fitted. */
+const MOST_REACH_CELLS = 16;
 /** Within so many cells of the waterline the depth changes too fast for local potentials to hold. */
 const WATERLINE_CELLS = 4;
 
@@ -109,7 +113,13 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
   for (const slab of layout.slabs) markNear(flags, NEAR_STEP, grid, slab.loops);
   const radius = Math.min(lengthMm, widthMm) / 2;
   const insideWall = (x: number, y: number): boolean => wall === null || Math.hypot(x - radius, y - radius) < radius;
-  const thin = layout.insulators.filter((one) => wallThicknessMm(one.placed.shape) < 2 * Math.max(pitchXMm, pitchYMm));
+  const pitch = Math.max(pitchXMm, pitchYMm);
+  const thin = layout.insulators.filter((one) => wallThicknessMm(one.placed.shape) < 2 * pitch);
+  const corners = insulatorCorners(layout.insulators, 2 * pitch, MOST_REACH_CELLS * pitch, (solid, [x, y]) => {
+    const others = [...layout.conductors, ...layout.insulators].filter((other) => other !== solid);
+    return Math.min(Math.max(0, depthFromWallMm(setup.tray, x, y)), ...others.map((other) => distanceToOutline(other.loops, x, y)));
+  });
+  for (const { x, y, reachMm } of corners.corners) markDisc(flags, NEAR_CORNER, grid, x, y, reachMm);
   const bedAt = (x: number, y: number): number => plane.at0 + plane.slopeX * x + plane.slopeY * y;
   const slabThicknessAt = (x: number, y: number): number => {
     let thickness = 0;
@@ -184,7 +194,9 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     }
     if (flag & NEAR_STEP) return steppedFlux(face, open);
     let flux = 0;
+    let width = 0;
     for (const [low, high] of open) {
+      width += high - low;
       const depth =
         layout.slabs.length > 0
           ? isRow
@@ -193,7 +205,15 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
           : meanWet(bed(low), bed(high));
       flux += (depth * (high - low)) / pitch;
     }
-    return flux;
+    return flag & NEAR_CORNER && flux > 0 ? flux * cornerFactor(face, width / pitch) : flux;
+  }
+
+  /** What a link next to an insulator's corner conducts, as a multiple of the plain finite volume. */
+  function cornerFactor({ axis, start, pitch, line, from, to }: Face, plainShape: number): number {
+    const place = (along: number, across: number): Place => (axis === "row" ? [along, across] : [across, along]);
+    const middle = start + pitch / 2;
+    const shape = corners.shapeOf(place(start, line), place(start + pitch, line), place(middle, from), place(middle, to));
+    return shape !== null && isNearPlain(shape, plainShape) ? shape / plainShape : 1;
   }
 
   return {

@@ -3,6 +3,7 @@ import { radians } from "../../../shared-types/units";
 import { type Bow, type Edge, type Loop, lengthOf, type Piece, pointAlong } from "../geometry/outline";
 import { distanceToPiece } from "../geometry/signed-distance";
 import { depthFromWallMm } from "../geometry/tray-outline";
+import { angleFromEdge, cornersOf } from "./corners";
 import type { Solid } from "./layout";
 import { stripEndPotential } from "./strip-end";
 
@@ -34,51 +35,22 @@ export interface LocalField {
   readonly widestReachMm: number;
 }
 
-/** Directions (unit vectors) in which a piece leaves its start and arrives at its end. */
-function tangents(piece: Piece): { leaving: readonly [number, number]; arriving: readonly [number, number] } {
-  if (piece.kind === "edge") {
-    const length = lengthOf(piece);
-    const d = [(piece.x1 - piece.x0) / length, (piece.y1 - piece.y0) / length] as const;
-    return { leaving: d, arriving: d };
-  }
-  const sense = Math.sign(piece.sweepRad);
-  const at = (angle: number): readonly [number, number] => [-sense * Math.sin(angle), sense * Math.cos(angle)];
-  return { leaving: at(piece.startRad), arriving: at(piece.startRad + piece.sweepRad) };
+function cornerFeatures(loop: Loop): Feature[] {
+  return cornersOf(loop).map(({ x, y, along, waterAngle, reachMm }) => ({
+    core: { kind: "edge", x0: x, y0: y, x1: x, y1: y },
+    reachMm,
+    potential: cornerPotential(x, y, along, waterAngle),
+  }));
 }
 
 /** r^(π/α)·sin(πθ/α) in the water of opening α at a corner (Jackson, Classical Electrodynamics, sect. 2.11). */
 function cornerPotential(x0: number, y0: number, along: number, waterAngle: number): LocalPotential {
   const exponent = Math.PI / waterAngle;
   return (x, y) => {
-    const dx = x - x0;
-    const dy = y - y0;
-    // θ runs clockwise from the leaving edge into the water, because the solid is on the left of the outline.
-    let theta = along - Math.atan2(dy, dx);
-    theta -= 2 * Math.PI * Math.floor((theta + 1e-9) / (2 * Math.PI));
+    const theta = angleFromEdge(along, x - x0, y - y0);
     if (theta >= waterAngle) return 0;
-    return Math.hypot(dx, dy) ** exponent * Math.sin(exponent * Math.max(0, theta));
+    return Math.hypot(x - x0, y - y0) ** exponent * Math.sin(exponent * Math.max(0, theta));
   };
-}
-
-function cornersOf(loop: Loop): Feature[] {
-  return loop.flatMap((piece, index): Feature[] => {
-    const before = loop[(index + loop.length - 1) % loop.length];
-    const arriving = tangents(before).arriving;
-    const leaving = tangents(piece).leaving;
-    const turn = Math.atan2(arriving[0] * leaving[1] - arriving[1] * leaving[0], arriving[0] * leaving[0] + arriving[1] * leaving[1]);
-    if (Math.abs(turn) < 1e-3) return [];
-    const [x, y] = pointAlong(piece, 0);
-    const bent = [before, piece].some((one) => one.kind === "bow");
-    const reachMm = Math.min(lengthOf(before), lengthOf(piece)) * (bent ? 0.25 : 0.45);
-    // The outline turns left by `turn` at the corner, so the water opens by π + turn.
-    return [
-      {
-        core: { kind: "edge", x0: x, y0: y, x1: x, y1: y },
-        reachMm,
-        potential: cornerPotential(x, y, Math.atan2(leaving[1], leaving[0]), Math.PI + turn),
-      },
-    ];
-  });
 }
 
 function barEnds(placed: Solid["placed"], lengthMm: number, thicknessMm: number, turnDeg: number): Feature[] {
@@ -131,7 +103,7 @@ function featuresOf(solid: Solid): Feature[] {
   ) {
     return arcEnds(placed, shape.outerMm, shape.innerMm, shape.sweepDeg);
   }
-  return solid.loops.flatMap(cornersOf);
+  return solid.loops.flatMap(cornerFeatures);
 }
 
 function distanceToCore(core: Edge, x: number, y: number): number {

@@ -86,3 +86,12 @@ export function markNear(flags: Uint8Array, bit: number, grid: Grid, loops: read
     }
   }
 }
+
+/** Marks with `bit` all nodes within `radiusMm` and a cell of a place. */
+export function markDisc(flags: Uint8Array, bit: number, grid: Grid, x: number, y: number, radiusMm: number): void {
+  const { columns, pitchXMm, pitchYMm } = grid;
+  const reach = radiusMm + Math.max(pitchXMm, pitchYMm);
+  eachNodeIn(grid, [x - reach, y - reach, x + reach, y + reach], (column, row) => {
+    if (Math.hypot(column * pitchXMm - x, row * pitchYMm - y) <= reach) flags[row * columns + column] |= bit;
+  });
+}
