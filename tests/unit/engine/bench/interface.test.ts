@@ -142,7 +142,7 @@ describe("readings that allow for the loss", () => {
     const circuit = circuitNumbers(setup, channelFacts(setup));
     const surface = alternatingInterface(setup, circuit);
     const readings = [0, 0.25, 0.5, 0.75, 1].map((share) => readingWithInterfaceVolts(surface, circuit, share));
-    readings.slice(1).forEach((volts, index) => expect(volts).toBeGreaterThan(readings[index]));
+    for (const [index, volts] of readings.slice(1).entries()) expect(volts).toBeGreaterThan(readings[index]);
     expect(readings[4]).toBeLessThanOrEqual(6);
     expect(readings[2]).toBeCloseTo(3, 3);
   });
