@@ -13,13 +13,13 @@ import type { FieldSolution, SolvedGrid } from "./solve-field";
  * Share of the grids' typical difference over the whole tray that every bound contains beside the difference at its own
  * place: where the two grids happen to agree the error need not vanish. Calibrated on random setups (tests/reference/bounds).
  */
-const TYPICAL_SHARE = 0.06;
+const TYPICAL_SHARE = 0.05;
 /**
  * What the grids' difference is multiplied by where they do not converge evenly: plates a few cells thick are seen one way
  * by one grid and another way by the other, and next to depth steps nothing is fitted. Calibrated like the share above.
  */
-const THIN_PLATE_FACTOR = 2;
-const DEPTH_STEP_FACTOR = 1.5;
+const THIN_PLATE_FACTOR = 1.5;
+const DEPTH_STEP_FACTOR = 2;
 const THIN_PLATE_CELLS = 4;
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
 const FLOOR_SHARE = 1e-6;
