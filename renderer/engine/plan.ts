@@ -41,6 +41,8 @@ export interface Planner {
 const REFUSING_CODES: ReadonlySet<string> = new Set(["overlap", "short-circuit", "no-potential-difference"]);
 /** Field lines that the electrodes send out together. */
 const FIELD_LINES = 24;
+/** Qualities that may answer, best first: a finer field at hand serves a drag too, so that turning a knob starts no solve. */
+const SERVING: Readonly<Record<Quality, readonly Quality[]>> = { live: ["print", "live"], print: ["print"], reference: ["reference"] };
 /** Solved geometries kept: enough for undo and redo to be instant. */
 const KEPT_SOLUTIONS = 4;
 
@@ -142,14 +144,16 @@ export function createPlanner(): Planner {
   async function plan(setup: Setup, quality: Quality, options: PlanOptions = {}): Promise<PlanOutcome> {
     const refusal = refusalOf(geometryFindings(setup));
     if (refusal !== null) return { ok: false, refusal };
-    const key = `${quality} ${geometryKey(setup)}`;
+    const geometry = geometryKey(setup);
+    const serving = SERVING[quality].find((one) => kept.has(`${one} ${geometry}`)) ?? quality;
+    const key = `${serving} ${geometry}`;
     const started = options.now?.() ?? 0;
     const solved = kept.get(key) ?? {
-      superposed: superposerOf(await drive(solveField(fieldLayout(setup), quality, options.onProgress), options)),
+      superposed: superposerOf(await drive(solveField(fieldLayout(setup), serving, options.onProgress), options)),
       lines: null,
     };
     keep(key, solved);
-    return { ok: true, plan: planOf(setup, solved, quality, (options.now?.() ?? 0) - started) };
+    return { ok: true, plan: planOf(setup, solved, serving, (options.now?.() ?? 0) - started) };
   }
 
   function sample(setup: Setup, placesMm: readonly (readonly [number, number])[]): readonly FieldReading[] | null {

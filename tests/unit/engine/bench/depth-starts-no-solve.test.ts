@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { createPlanner } from "../../../../renderer/engine/plan";
-import type { Plan } from "../../../../shared-types/plan";
+import type { Plan, Quality } from "../../../../shared-types/plan";
 import type { Setup } from "../../../../shared-types/setup";
 import { channel } from "./trays";
 
@@ -8,9 +8,10 @@ import { channel } from "./trays";
 async function planned(
   planner: ReturnType<typeof createPlanner>,
   setup: Setup,
+  quality: Quality = "live",
 ): Promise<{ readonly plan: Plan; readonly solved: boolean }> {
   let solved = false;
-  const outcome = await planner.plan(setup, "live", { onProgress: () => (solved = true) });
+  const outcome = await planner.plan(setup, quality, { onProgress: () => (solved = true) });
   if (!outcome.ok) throw new Error(outcome.refusal.message);
   return { plan: outcome.plan, solved };
 }
@@ -29,6 +30,14 @@ describe("depth and volts on a level tray", () => {
     expect(scaled.plan.currentA.value).toBeCloseTo(fresh.plan.currentA.value, 12);
     expect(scaled.plan.bench.circuit.largestCurrentDensityAPerM2).toBeCloseTo(fresh.plan.bench.circuit.largestCurrentDensityAPerM2, 6);
     expect(scaled.plan.bench.region.suggestion).toEqual(fresh.plan.bench.region.suggestion);
+  });
+
+  it("are dragged on the field that is there, be it the careful one", async () => {
+    const planner = createPlanner();
+    await planned(planner, channel(), "print");
+    const dragged = await planned(planner, channel({ water: { depthMm: 8 }, supply: { volts: 3 } }));
+    expect(dragged.solved).toBe(false);
+    expect(dragged.plan.quality).toBe("print");
   });
 
   it("of a tilted tray do: another depth bends the field", async () => {

@@ -1,0 +1,62 @@
+import "./bench.css";
+import { useRef } from "react";
+import { useStore } from "zustand";
+import type { Finding } from "../../../shared-types/plan";
+import { applyRemedy } from "../../document/commands/bench";
+import type { Document } from "../../document/document";
+import type { Planning } from "../../document/planning";
+import { ChartCard } from "./chart-card";
+import { remedyWords } from "./dot";
+import { FindingsList } from "./findings-list";
+import { MeterCard, SessionCard, SupplyCard, SurfaceCard, WaterCard } from "./setting-cards";
+
+export interface BenchDeskProps {
+  readonly document: Document;
+  readonly planning: Planning;
+}
+
+/** The Bench desk: the depth–voltage chart, what the rules found, and the cards of water, supply, surfaces, meter, heat and gas. */
+export function BenchDesk({ document, planning }: BenchDeskProps) {
+  const setup = useStore(document, (state) => state.setup);
+  const plan = useStore(planning, (state) => state.plan);
+  const refusal = useStore(planning, (state) => state.refusal);
+  const desk = useRef<HTMLDivElement>(null);
+  const bench = refusal === null ? (plan?.bench ?? null) : null;
+  const findings = refusal?.findings ?? plan?.findings ?? [];
+
+  const show = (finding: Finding): void => {
+    if (finding.partIds.length > 0) document.select(finding.partIds);
+    const field = desk.current?.querySelector<HTMLElement>(`[data-setting="${finding.about ?? ""}"]`);
+    field?.focus();
+    field?.scrollIntoView({ block: "nearest" });
+  };
+  const apply = (finding: Finding): void => {
+    if (finding.edit === null) return;
+    document.run({ ...applyRemedy(finding.edit), label: remedyWords(finding.edit).toLowerCase() });
+  };
+
+  const cards = { document, setup, bench };
+  return (
+    <div className="bench-desk" ref={desk}>
+      {bench === null ? (
+        <section className="bench-card">
+          <h2>Depth and voltage</h2>
+          <p className="bench-quiet">
+            {refusal === null ? "The field is being solved." : `There is no field to judge by: ${refusal.message}`}
+          </p>
+        </section>
+      ) : (
+        <ChartCard document={document} setup={setup} bench={bench} />
+      )}
+      <section className="bench-card" aria-labelledby="bench-findings-title">
+        <h2 id="bench-findings-title">Findings</h2>
+        <FindingsList findings={findings} onShow={show} onApply={apply} />
+      </section>
+      <WaterCard {...cards} />
+      <SupplyCard {...cards} />
+      <SurfaceCard {...cards} />
+      <MeterCard {...cards} />
+      <SessionCard {...cards} />
+    </div>
+  );
+}
