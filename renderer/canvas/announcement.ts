@@ -1,0 +1,40 @@
+import type { DocumentState } from "../document/document";
+import { thingById, thingName, thingsOf } from "../document/edit";
+import { placeWords } from "./describe-thing";
+import { sizeText } from "./number-text";
+
+const capital = (text: string): string => `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
+
+/** The one thing whose place or size a step changed, in its new state; "" where it was another kind of step. */
+function newState(now: DocumentState, before: DocumentState): string {
+  const changed = thingsOf(now.setup).filter((thing) => thingById(before.setup, thing.id) !== thing);
+  const [only] = changed;
+  if (only === undefined || changed.length > 1) return "";
+  const old = thingById(before.setup, only.id);
+  const resized = old !== undefined && old.shape !== only.shape;
+  return `: ${resized ? `${sizeText(only.shape)}, ` : ""}${placeWords(only)}`;
+}
+
+/**
+ * What a listener should hear after the document changed: finished steps, undo and redo, refusals, and what is selected.
+ * Previews of a drag are silent; its end is heard.
+ * @returns a sentence, or null when there is nothing to say.
+ */
+export function announcement(now: DocumentState, before: DocumentState): string | null {
+  const [refusal] = now.refused;
+  if (refusal !== undefined && now.refused !== before.refused) return `Refused. ${refusal.message}`;
+  if (now.drag !== null) return null;
+  const start = before.drag === null ? before : { ...before, setup: before.drag.before };
+  if (now.setup !== start.setup) {
+    const undone = now.future.length > start.future.length;
+    const label = undone ? now.future.at(-1)?.label : now.past.at(-1)?.label;
+    if (label === undefined) return null;
+    const redone = !undone && now.future.length < start.future.length && start.future.at(-1)?.label === label;
+    return `${undone ? "Undone: " : redone ? "Redone: " : ""}${undone || redone ? label : capital(label)}${undone ? "" : newState(now, start)}`;
+  }
+  if (now.selection === before.selection) return null;
+  const [id] = now.selection;
+  const thing = id === undefined ? undefined : thingById(now.setup, id);
+  if (thing === undefined) return "Nothing selected";
+  return now.selection.length === 1 ? `${thingName(thing)} selected, ${placeWords(thing)}` : `${now.selection.length} selected`;
+}

@@ -1,0 +1,46 @@
+import type { Shape } from "../../shared-types/setup";
+
+/** Numbers as the canvas writes them: the decimal sign of the user's language, never more digits than asked for. */
+const formats = new Map<number, Intl.NumberFormat>();
+
+/** @returns a number with exactly so many decimals, such as "3.00"; a true minus sign. */
+export function fixed(value: number, decimals: number): string {
+  let format = formats.get(decimals);
+  if (format === undefined) {
+    format = new Intl.NumberFormat(undefined, { minimumFractionDigits: decimals, maximumFractionDigits: decimals, useGrouping: false });
+    formats.set(decimals, format);
+  }
+  const text = format.format(value);
+  return (/[1-9]/.test(text) ? text : text.replace("-", "")).replace("-", "−");
+}
+
+/** @returns a number with at most so many decimals, trailing zeros dropped, such as "6" or "0.5". */
+export function trimmed(value: number, decimals: number): string {
+  const text = fixed(value, decimals);
+  return /[.,]/.test(text) ? text.replace(/[.,]?0+$/, "") : text;
+}
+
+/** @returns the decimals that tell even steps of this size apart and give two digits of a step: 0.75 → 2, 1.5 → 1, 0.05 → 3. */
+export function decimalsForStep(step: number): number {
+  if (!(step > 0)) return 2;
+  return Math.min(6, Math.max(1, 1 - Math.floor(Math.log10(step))));
+}
+
+/** @returns the sizes that a hand cares about while resizing, such as "120 × 10 mm". */
+export function sizeText(shape: Shape): string {
+  const mm = (value: number): string => trimmed(value, 2);
+  switch (shape.kind) {
+    case "bar":
+      return `${mm(shape.lengthMm)} × ${mm(shape.widthMm)} mm`;
+    case "disc":
+      return `⌀ ${mm(shape.diameterMm)} mm`;
+    case "ring":
+      return `⌀ ${mm(shape.outerMm)} outside, ${mm(shape.innerMm)} inside mm`;
+    case "arc":
+      return `⌀ ${mm(shape.outerMm)} / ${mm(shape.innerMm)} mm, ${mm(shape.sweepDeg)}°`;
+    case "frame":
+      return `${mm(shape.lengthMm)} × ${mm(shape.widthMm)} mm, wall ${mm(shape.wallMm)} mm`;
+    case "polygon":
+      return `${shape.pointsMm.length} corners`;
+  }
+}

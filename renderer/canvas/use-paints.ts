@@ -1,0 +1,172 @@
+import { useMemo } from "react";
+import type { Finding, Plan, ProbePoint } from "../../shared-types/plan";
+import type { Setup } from "../../shared-types/setup";
+import { signedDistance } from "../engine/geometry/signed-distance";
+import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
+import { fieldPixels, imageOf } from "./field-image";
+import { outlinedThing } from "./hit";
+import { placeLabels, type Taken } from "./line-labels";
+import { decimalsForStep, fixed } from "./number-text";
+import { paintBench, paintSlabs, paintWallEdge } from "./paint/bench";
+import { type FieldParts, labelFont, paintEquipotentials, paintFieldLines, paintPicture } from "./paint/field";
+import { paintEmphasis, paintTags, tagFont } from "./paint/hand";
+import { paintParts } from "./paint/parts";
+import type { Pen } from "./paint/pen";
+import { numberFont, paintPoints } from "./paint/points";
+import { paintOrigin, paintRules } from "./paint/rules";
+import { createCrowd, placeNumbers } from "./point-numbers";
+import { placeTags } from "./tags";
+import { widthIn } from "./text-width";
+import type { CanvasTheme } from "./theme";
+import { toTray, type View } from "./view";
+
+/** What is painted on each sheet of the stage, remade only when what it shows changes: under a drag the field's sheet rests. */
+
+export interface Shown extends FieldParts {
+  readonly points: boolean;
+  readonly tags: boolean;
+}
+
+/** A plan with the setup that it belongs to. */
+export interface PlannedField {
+  readonly plan: Plan;
+  readonly setup: Setup;
+  /** It no longer belongs to what lies in the tray: shown pale. */
+  readonly outOfDate: boolean;
+}
+
+export type Paint = (pen: Pen) => void;
+
+const NOTHING: Paint = () => undefined;
+
+/** @returns every probe point of a plan, those that check floating conductors last. */
+export const pointsOf = (plan: Plan): readonly ProbePoint[] => [
+  ...plan.probing.levels.flatMap(({ points }) => points),
+  ...plan.probing.checks,
+];
+
+/** What labels along lines must leave free: points with their numbers, tags, and metal. */
+function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: ReturnType<typeof placeNumbers>, tags: boolean): Taken {
+  const crowd = createCrowd();
+  for (const { x, y, number } of placed) {
+    crowd.add([x - 7, y - 7, x + 7, y + 7]);
+    if (number !== null) crowd.add(number);
+  }
+  if (tags) for (const { box } of placeTags(field.setup, field.plan, view, widthIn(tagFont(theme)), new Set())) crowd.add(box);
+  const parts = field.setup.parts.map(outlinedThing);
+  return (x, y, radius) => {
+    if (crowd.meets([x - radius, y - radius, x + radius, y + radius])) return true;
+    const [xMm, yMm] = toTray(view, x, y);
+    const reach = radius / view.scale;
+    return parts.some(
+      ({ placed: part, box, loops }) =>
+        xMm > box[0] - reach &&
+        xMm < box[2] + reach &&
+        yMm > box[1] - reach &&
+        yMm < box[3] + reach &&
+        signedDistance(part, xMm, yMm, loops) < reach,
+    );
+  };
+}
+
+/** @returns the sheet of bench, tray and rules. */
+export function useBenchPaint(setup: Setup, view: View, theme: CanvasTheme): Paint {
+  const { tray, water } = setup;
+  // biome-ignore lint/correctness/useExhaustiveDependencies: a dragged part changes the setup, but not the bench.
+  return useMemo(
+    () => (pen: Pen) => {
+      paintBench(pen, setup, view, theme);
+      paintSlabs(pen, setup, view, theme);
+      paintRules(pen, tray, view, theme);
+    },
+    [tray, water, view, theme],
+  );
+}
+
+/** @returns the sheets of the field (picture, lines, labels) and of the probe points over the parts. */
+export function useFieldPaint(
+  field: PlannedField | null,
+  setup: Setup,
+  view: View,
+  theme: CanvasTheme,
+  shown: Shown,
+  markedPoints: ReadonlySet<number>,
+): { readonly field: Paint; readonly points: Paint } {
+  const scale = theme.dark ? DARK_SCALE : LIGHT_SCALE;
+  const { plan, outOfDate } = field ?? { plan: null, outOfDate: false };
+  const plannedSetup = field?.setup ?? null;
+  const { tray } = setup;
+  const plannedTray = plannedSetup?.tray ?? tray;
+  const { picture, fieldLines, equipotentials, points, tags } = shown;
+  const picturePlan = picture ? plan : null;
+  const image = useMemo(
+    () => (picturePlan === null ? null : imageOf(fieldPixels(picturePlan.picture, picturePlan.spanV, plannedTray, scale))),
+    [picturePlan, plannedTray, scale],
+  );
+  const placed = useMemo(
+    () => (plan === null || !points ? [] : placeNumbers(pointsOf(plan), view, widthIn(numberFont(theme)))),
+    [plan, points, view, theme],
+  );
+  const labels = useMemo(() => {
+    if (plan === null || plannedSetup === null || !equipotentials) return [];
+    const [first, second] = plan.equipotentials;
+    const step = first === undefined ? 1 : Math.abs((second?.volts ?? plan.spanV[0]) - first.volts);
+    const decimals = decimalsForStep(step);
+    const taken = takenBy({ plan, setup: plannedSetup, outOfDate: false }, view, theme, placed, tags);
+    return placeLabels(
+      plan.equipotentials,
+      view,
+      (volts) => [`${fixed(volts, decimals)} V`, fixed(volts, decimals)],
+      widthIn(labelFont(theme)),
+      taken,
+    );
+  }, [plan, plannedSetup, equipotentials, view, theme, placed, tags]);
+  // biome-ignore lint/correctness/useExhaustiveDependencies: a dragged part changes the setup, but not its water.
+  const fieldPaint = useMemo(
+    () => (pen: Pen) => {
+      if (plan !== null) {
+        if (image !== null) paintPicture(pen, plan, image, tray, view, outOfDate);
+        if (image !== null) paintSlabs(pen, setup, view, { ...theme, slab: "transparent" });
+        if (fieldLines) paintFieldLines(pen, plan, view, theme, outOfDate);
+        if (equipotentials) paintEquipotentials(pen, plan, labels, view, theme, image === null ? null : scale, outOfDate);
+      }
+      paintWallEdge(pen, tray, view, theme);
+      paintOrigin(pen, view, theme);
+    },
+    [plan, image, tray, setup.water, view, theme, outOfDate, fieldLines, equipotentials, labels, scale],
+  );
+  const pointsPaint = useMemo(
+    () => (placed.length === 0 || outOfDate ? NOTHING : (pen: Pen) => paintPoints(pen, placed, theme, markedPoints)),
+    [placed, outOfDate, theme, markedPoints],
+  );
+  return { field: fieldPaint, points: pointsPaint };
+}
+
+/** @returns the sheet of the parts themselves. */
+export function usePartsPaint(setup: Setup, view: View, theme: CanvasTheme): Paint {
+  return useMemo(() => (pen: Pen) => paintParts(pen, setup, view, theme), [setup, view, theme]);
+}
+
+/** @returns the sheet of what is said about parts: edges of selected and faulty ones, tags. */
+export function useMarksPaint(
+  setup: Setup,
+  plan: Plan | null,
+  view: View,
+  theme: CanvasTheme,
+  selection: readonly string[],
+  hovered: string | null,
+  findings: readonly Finding[],
+  tagsShown: boolean,
+): Paint {
+  const tags = useMemo(
+    () => (tagsShown ? placeTags(setup, plan, view, widthIn(tagFont(theme)), new Set(selection)) : []),
+    [setup, plan, view, theme, selection, tagsShown],
+  );
+  return useMemo(
+    () => (pen: Pen) => {
+      paintEmphasis(pen, setup, view, theme, { selection, hovered, findings });
+      paintTags(pen, tags, theme);
+    },
+    [setup, view, theme, selection, hovered, findings, tags],
+  );
+}
