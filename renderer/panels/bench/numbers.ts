@@ -5,7 +5,8 @@ import type { Bounded } from "../../../shared-types/plan";
 /** @returns a number with so many significant digits. */
 export function shownNumber(value: number, digits = 3): string {
   if (!Number.isFinite(value)) return "–";
-  return new Intl.NumberFormat(undefined, { maximumSignificantDigits: digits, useGrouping: Math.abs(value) >= 10_000 }).format(value);
+  const text = new Intl.NumberFormat(undefined, { maximumSignificantDigits: digits, useGrouping: Math.abs(value) >= 10_000 }).format(value);
+  return text.replace("-", "−");
 }
 
 const MOST_DIGITS = 6;

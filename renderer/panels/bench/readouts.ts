@@ -56,7 +56,7 @@ export function waterReadouts(setup: Setup, { water, geometry }: BenchNumbers): 
 }
 
 /** @returns the circuit: resistance, current, power, each electrode's current. */
-export function circuitReadouts({ circuit }: BenchNumbers): readonly Readout[] {
+export function circuitReadouts(setup: Setup, { circuit }: BenchNumbers): readonly Readout[] {
   const { resistanceOhm, currentA, powerW, electrodes } = circuit;
   return [
     ...(resistanceOhm === null ? [] : [{ term: "Resistance", value: `${shownBounded(resistanceOhm)} Ω` }]),
@@ -67,7 +67,7 @@ export function circuitReadouts({ circuit }: BenchNumbers): readonly Readout[] {
     },
     { term: "Power", value: withPrefix(powerW.value, "W") },
     ...electrodes.map((electrode) => ({
-      term: `Electrode ${electrode.id}`,
+      term: setup.parts.find((part) => part.id === electrode.id)?.name || `Electrode ${electrode.id}`,
       value: withPrefix(electrode.currentA, "A"),
       // 1 mA/cm² is 10 A/m².
       note: `at the most ${shownNumber(electrode.largestCurrentDensityAPerM2 / 10, 2)} mA/cm²`,

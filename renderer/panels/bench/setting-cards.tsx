@@ -99,7 +99,7 @@ export function SupplyCard({ document, setup, bench }: SettingCardProps) {
   const { supply } = setup;
   const set = (change: Parameters<typeof changeSupply>[0]) => trying(document, changeSupply(change));
   return (
-    <Card title="Supply and circuit" lines={bench === null ? [] : circuitReadouts(bench)}>
+    <Card title="Supply and circuit" lines={bench === null ? [] : circuitReadouts(setup, bench)}>
       <ChoiceSetting
         label="Current"
         value={supply.waveform}

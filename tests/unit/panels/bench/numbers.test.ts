@@ -33,7 +33,7 @@ describe("the cards of the bench", () => {
     const bench = benchOf(setup, channelFacts(setup));
     return [
       waterReadouts(setup, bench),
-      circuitReadouts(bench),
+      circuitReadouts(setup, bench),
       surfaceReadouts(bench),
       meterReadouts(bench),
       heatAndGasReadouts(setup, bench),
