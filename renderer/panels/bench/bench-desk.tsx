@@ -32,7 +32,8 @@ export function BenchDesk({ document, planning }: BenchDeskProps) {
   };
   const apply = (finding: Finding): void => {
     if (finding.edit === null) return;
-    document.run({ ...applyRemedy(finding.edit), label: remedyWords(finding.edit).toLowerCase() });
+    const words = remedyWords(finding.edit);
+    document.run({ ...applyRemedy(finding.edit), label: words.charAt(0).toLowerCase() + words.slice(1) });
   };
 
   const cards = { document, setup, bench };

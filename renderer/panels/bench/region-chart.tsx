@@ -20,6 +20,8 @@ const LEAST_DEPTH_MM = 0.5;
 const LEAST_VOLTS = 0.1;
 const DEPTH_STEP_MM = 0.5;
 const VOLTS_STEP = 0.1;
+/** A dot let go so near to the suggestion takes it, in units of the drawing. */
+const CATCHES_WITHIN = 8;
 /** Steps that a key with Shift makes. */
 const LEAPS = 5;
 
@@ -60,6 +62,11 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
     const matrix = svg.current?.getScreenCTM();
     if (!matrix) return null;
     const point = new DOMPoint(event.clientX, event.clientY).matrixTransform(matrix.inverse());
+    const { suggestion } = region;
+    if (suggestion !== null) {
+      const away = Math.hypot(point.x - xOfDepth(frame, suggestion[0]), point.y - yOfVolts(frame, suggestion[1]));
+      if (away < CATCHES_WITHIN) return suggestion;
+    }
     const depth = Math.min(frame.depthEndMm, depthOfX(frame, point.x));
     const height = Math.min(frame.voltsEnd, voltsOfY(frame, point.y));
     return [snapped(depth, DEPTH_STEP_MM, LEAST_DEPTH_MM), snapped(height, VOLTS_STEP, LEAST_VOLTS)];
