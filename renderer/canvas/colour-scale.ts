@@ -15,10 +15,11 @@ interface Stops {
   readonly high: Triple;
 }
 
-const LIGHT: Stops = { low: [0.74, 0.08, 252], middle: [0.865, 0.062, 192], high: [0.965, 0.075, 95] };
-const DARK: Stops = { low: [0.28, 0.075, 262], middle: [0.41, 0.062, 205], high: [0.56, 0.085, 85] };
+const LIGHT: Stops = { low: [0.74, 0.08, 252], middle: [0.865, 0.062, 192], high: [0.96, 0.07, 95] };
+const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.57, 0.085, 82] };
 
-const SHADES = 256;
+/** More than a channel's 256 steps: the three channels step at different places, which hides the steps. */
+const SHADES = 1024;
 
 const lab = ([lightness, chroma, hueDeg]: Triple): Triple => {
   const hue = (hueDeg * Math.PI) / 180;
@@ -77,7 +78,7 @@ const tableOf = (dark: boolean): readonly Triple[] =>
     return [encoded(r), encoded(g), encoded(b)] as const;
   });
 
-/** A scale ready for use: red, green, blue (0 to 255) of each of 256 shades, from the lowest potential to the highest. */
+/** A scale ready for use: red, green, blue (0 to 255) of each shade, from the lowest potential to the highest. */
 export interface ColourScale {
   readonly shades: readonly Triple[];
   /** The same as one 32-bit number a shade, in the byte order of ImageData. */

@@ -14,7 +14,7 @@ export interface PlacedLabel {
 export type Taken = (x: number, y: number, radiusPx: number) => boolean;
 
 /** Half of a label's height with a little air, px. */
-const HALF_HEIGHT_PX = 9;
+const HALF_HEIGHT_PX = 7;
 /** Places along a line are tried this far apart, px. */
 const STEP_PX = 24;
 /** A label lies straight: the line may stray from it by no more, px. */
@@ -101,9 +101,14 @@ function discsOf(x: number, y: number, angleRad: number, widthPx: number): reado
   });
 }
 
-/** Brings a direction to within a quarter turn of upright reading. */
-const upright = (angleRad: number): number =>
-  angleRad > Math.PI / 2 ? angleRad - Math.PI : angleRad <= -Math.PI / 2 ? angleRad + Math.PI : angleRad;
+/** Lines lean to either side of upright within this; their labels should all read the same way, radians. */
+const LEAN_RAD = 0.2;
+
+/** Brings a direction to one that reads without turning the head: left to right, or upwards on upright lines. */
+const readable = (angleRad: number): number => {
+  if (angleRad > Math.PI / 2 - LEAN_RAD) return angleRad - Math.PI;
+  return angleRad <= -Math.PI / 2 - LEAN_RAD ? angleRad + Math.PI : angleRad;
+};
 
 /**
  * Finds a place for one label on each equipotential, on its longest path first: straight enough, in sight, and hiding neither
@@ -138,7 +143,7 @@ export function placeLabels(
         if (!free(x, y) || strayPx(line, at - width / 2, at + width / 2) > STRAY_PX) continue;
         const [x0, y0] = placeAlong(line, at - width / 2);
         const [x1, y1] = placeAlong(line, at + width / 2);
-        const angleRad = upright(Math.atan2(y1 - y0, x1 - x0));
+        const angleRad = readable(Math.atan2(y1 - y0, x1 - x0));
         const own = discsOf(x, y, angleRad, width);
         if (!own.every(([dx, dy]) => free(dx, dy))) continue;
         labels.push({ text, volts, x, y, angleRad });

@@ -1,9 +1,11 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Part, Setup } from "../../shared-types/setup";
+import { radians } from "../../shared-types/units";
+import { covers } from "../engine/geometry/signed-distance";
 import { outlinedThing } from "./hit";
 import { trimmed } from "./number-text";
-import type { PixelBox } from "./point-numbers";
-import { toScreen, type View } from "./view";
+import type { Crowd, PixelBox } from "./point-numbers";
+import { toScreen, toTray, type View } from "./view";
 
 /** The small sign beside a conductor: which lead it is on and its volts, or that it floats. */
 export interface Tag {
@@ -19,6 +21,8 @@ export const TAG_HEIGHT_PX = 20;
 const SIGN_PX = 18;
 const PADDING_PX = 6;
 const GAP_PX = 6;
+/** Further off while the handles of a selected part are shown, px. */
+const HANDLES_PX = 14;
 
 function signOf(part: Part): Tag["sign"] {
   if (part.role !== "electrode") return null;
@@ -31,31 +35,79 @@ function textOf(part: Part, setup: Setup, plan: Plan | null): string {
   return reading === undefined ? "floats" : `floats ${trimmed(reading.volts, 2)} V`;
 }
 
+/** Room that a tag inside a part leaves to the part's edge, px. */
+const INSIDE_PX = 5;
+
+/** From a bar's middle to its ends, the upper one first, then to its long sides: direction on the tray and distance, mm. */
+function barSides({ turnDeg, shape }: Part): readonly (readonly [dx: number, dy: number, reachMm: number])[] {
+  if (shape.kind !== "bar") return [];
+  const [c, s] = [Math.cos(radians(turnDeg)), Math.sin(radians(turnDeg))];
+  const end = s > -1e-9 ? 1 : -1;
+  const side = c > -1e-9 ? 1 : -1;
+  const [half, across] = [shape.lengthMm / 2, shape.widthMm / 2];
+  return [
+    [end * c, end * s, half],
+    [-end * c, -end * s, half],
+    [-side * s, side * c, across],
+    [side * s, -side * c, across],
+  ];
+}
+
+/** Places for a tag of this width, the best first: on the metal itself where it is broad enough, else beside the part. */
+function* placesOf(part: Part, view: View, width: number, selected: boolean): Generator<PixelBox> {
+  const [leftMm, bottomMm, rightMm, topMm] = outlinedThing(part).box;
+  const [left, top] = toScreen(view, leftMm, topMm);
+  const [right, bottom] = toScreen(view, rightMm, bottomMm);
+  const boxAt = (x: number, y: number): PixelBox => {
+    const [tagLeft, tagTop] = [Math.round(x - width / 2), Math.round(y - TAG_HEIGHT_PX / 2)];
+    return [tagLeft, tagTop, tagLeft + width, tagTop + TAG_HEIGHT_PX];
+  };
+  const [x, y] = [(left + right) / 2, (top + bottom) / 2];
+  const off = GAP_PX + TAG_HEIGHT_PX / 2 + (selected ? HANDLES_PX : 0);
+  const inside = boxAt(x, y);
+  const corners = [
+    [inside[0] - INSIDE_PX, inside[1] - INSIDE_PX],
+    [inside[2] + INSIDE_PX, inside[1] - INSIDE_PX],
+    [inside[0] - INSIDE_PX, inside[3] + INSIDE_PX],
+    [inside[2] + INSIDE_PX, inside[3] + INSIDE_PX],
+  ] as const;
+  const solid = part.shape.kind === "bar" || part.shape.kind === "disc" || part.shape.kind === "polygon";
+  if (solid && corners.every((corner) => covers(part, ...toTray(view, ...corner)))) yield inside;
+  if (part.shape.kind === "bar") {
+    for (const [dx, dy, reachMm] of barSides(part)) {
+      const reach = reachMm * view.scale + GAP_PX + (selected ? HANDLES_PX : 0) + (Math.abs(dx) * width + Math.abs(dy) * TAG_HEIGHT_PX) / 2;
+      const box = boxAt(x + dx * reach, y - dy * reach);
+      if (box[1] > 4) yield box;
+    }
+    return;
+  }
+  if (top - off - TAG_HEIGHT_PX / 2 > 4) yield boxAt(x, top - off);
+  yield boxAt(x, bottom + off);
+  yield boxAt(left - GAP_PX - (selected ? HANDLES_PX : 0) - width / 2, y);
+  yield boxAt(right + GAP_PX + (selected ? HANDLES_PX : 0) + width / 2, y);
+}
+
 /**
- * Places the tags: above a part, or below it where the tray's top edge is near or `below` says so (a handle needs the place).
+ * Places the tags so that they hide no probe point, and stand clear of the handles of what is selected.
  * @param plan the newest plan, for the potential that a floating part takes; null while there is none for this setup.
  * @param widthOf how wide a text is, px.
+ * @param points the rings and numbers of probe points.
  */
 export function placeTags(
   setup: Setup,
   plan: Plan | null,
   view: View,
   widthOf: (text: string) => number,
-  below: ReadonlySet<string>,
+  selection: ReadonlySet<string>,
+  points: Crowd,
 ): readonly Tag[] {
   return setup.parts.flatMap((part): readonly Tag[] => {
     if (part.role === "insulator") return [];
     const sign = signOf(part);
     const text = textOf(part, setup, plan);
-    const width = widthOf(text) + 2 * PADDING_PX + (sign === null ? 0 : SIGN_PX - PADDING_PX / 2);
-    const [left, bottom, right, top] = outlinedThing(part).box;
-    const [middle, upper] = toScreen(view, (left + right) / 2, top);
-    const [, lower] = toScreen(view, 0, bottom);
-    const under = below.has(part.id) || upper - TAG_HEIGHT_PX - GAP_PX < 4;
-    const y = under ? lower + GAP_PX : upper - TAG_HEIGHT_PX - GAP_PX;
-    const x = Math.round(middle - width / 2);
-    return [
-      { partId: part.id, sign, text, dashed: part.role === "floating", box: [x, Math.round(y), x + width, Math.round(y) + TAG_HEIGHT_PX] },
-    ];
+    const width = Math.ceil(widthOf(text)) + 2 * PADDING_PX + (sign === null ? 0 : SIGN_PX - PADDING_PX / 2);
+    const places = [...placesOf(part, view, width, selection.has(part.id))];
+    const box = places.find((place) => !points.meets(place)) ?? places[0];
+    return box === undefined ? [] : [{ partId: part.id, sign, text, dashed: part.role === "floating", box }];
   });
 }

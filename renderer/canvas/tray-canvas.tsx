@@ -14,7 +14,7 @@ import { PaintedLayer } from "./painted-layer";
 import { PartNotes } from "./part-notes";
 import { PartsList } from "./parts-list";
 import type { CanvasTheme } from "./theme";
-import { type PlannedField, type Shown, useBenchPaint, useFieldPaint, useMarksPaint, usePartsPaint } from "./use-paints";
+import { type PlannedField, type Shown, useBenchPaint, useFieldPaint, usePartsPaint } from "./use-paints";
 import { type Place, type TrayView, toTray, viewOf } from "./view";
 
 export interface TrayCanvasProps {
@@ -109,10 +109,8 @@ export function TrayCanvas(props: TrayCanvasProps) {
 
   function onPointerDown(event: PointerEvent<HTMLDivElement>): void {
     if (event.button > 1) return;
-    surface.current?.focus({ preventScroll: true });
     event.currentTarget.setPointerCapture(event.pointerId);
     hand.press(placeOf(event), modifiersOf(event));
-    event.preventDefault();
   }
   function onPointerMove(event: PointerEvent): void {
     const at = placeOf(event);
@@ -166,16 +164,20 @@ export function TrayCanvas(props: TrayCanvasProps) {
 
   const bench = useBenchPaint(setup, view, theme);
   const paints = useFieldPaint(field, setup, view, theme, shown, props.markedPoints);
-  const parts = usePartsPaint(setup, view, theme);
-  const marks = useMarksPaint(setup, planForTags(field), view, theme, selection, look.hovered, findings, shown.tags);
-  const handles = useMemo(() => shownHandles({ setup, selection, view, editable }), [setup, selection, view, editable]);
+  const { hovered } = look;
+  const emphasis = useMemo(() => ({ selection, hovered, findings }), [selection, hovered, findings]);
+  const parts = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed);
+  const moving = look.live !== null && look.activeHandle === null;
+  const handles = useMemo(
+    () => (moving ? [] : shownHandles({ setup, selection, view, editable })),
+    [setup, selection, view, editable, moving],
+  );
   const handPaint = useCallback(
     (pen: Pen) => {
-      marks(pen);
       paintHandles(pen, handles, view, theme, look.activeHandle);
       if (look.frame !== null) paintFrame(pen, look.frame[0], look.frame[1], theme);
     },
-    [marks, handles, view, theme, look.activeHandle, look.frame],
+    [handles, view, theme, look.activeHandle, look.frame],
   );
   const attended = useMemo(() => new Set([...selection, ...(look.hovered === null ? [] : [look.hovered])]), [selection, look.hovered]);
   const count = setup.parts.length;

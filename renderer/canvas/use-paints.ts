@@ -1,20 +1,20 @@
 import { useMemo } from "react";
-import type { Finding, Plan, ProbePoint } from "../../shared-types/plan";
+import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { signedDistance } from "../engine/geometry/signed-distance";
 import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
 import { fieldPixels, imageOf } from "./field-image";
 import { outlinedThing } from "./hit";
 import { placeLabels, type Taken } from "./line-labels";
-import { decimalsForStep, fixed } from "./number-text";
+import { decimalsForStep, fixed, trimmed } from "./number-text";
 import { paintBench, paintSlabs, paintWallEdge } from "./paint/bench";
 import { type FieldParts, labelFont, paintEquipotentials, paintFieldLines, paintPicture } from "./paint/field";
-import { paintEmphasis, paintTags, tagFont } from "./paint/hand";
+import { type Emphasis, paintEmphasis, paintTags, tagFont } from "./paint/hand";
 import { paintParts } from "./paint/parts";
 import type { Pen } from "./paint/pen";
 import { numberFont, paintPoints } from "./paint/points";
 import { paintOrigin, paintRules } from "./paint/rules";
-import { createCrowd, placeNumbers } from "./point-numbers";
+import { type Crowd, createCrowd, type PlacedPoint, placeNumbers, RING_PX } from "./point-numbers";
 import { placeTags } from "./tags";
 import { widthIn } from "./text-width";
 import type { CanvasTheme } from "./theme";
@@ -37,22 +37,26 @@ export interface PlannedField {
 
 export type Paint = (pen: Pen) => void;
 
-const NOTHING: Paint = () => undefined;
-
 /** @returns every probe point of a plan, those that check floating conductors last. */
 export const pointsOf = (plan: Plan): readonly ProbePoint[] => [
   ...plan.probing.levels.flatMap(({ points }) => points),
   ...plan.probing.checks,
 ];
 
-/** What labels along lines must leave free: points with their numbers, tags, and metal. */
-function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: ReturnType<typeof placeNumbers>, tags: boolean): Taken {
+function crowdOf(placed: readonly PlacedPoint[]): Crowd {
   const crowd = createCrowd();
   for (const { x, y, number } of placed) {
-    crowd.add([x - 7, y - 7, x + 7, y + 7]);
+    crowd.add([x - RING_PX - 1, y - RING_PX - 1, x + RING_PX + 1, y + RING_PX + 1]);
     if (number !== null) crowd.add(number);
   }
-  if (tags) for (const { box } of placeTags(field.setup, field.plan, view, widthIn(tagFont(theme)), new Set())) crowd.add(box);
+  return crowd;
+}
+
+/** What labels along lines must leave free: points with their numbers, tags, and metal. */
+function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: readonly PlacedPoint[], tags: boolean): Taken {
+  const crowd = crowdOf(placed);
+  if (tags)
+    for (const { box } of placeTags(field.setup, field.plan, view, widthIn(tagFont(theme)), new Set(), crowdOf(placed))) crowd.add(box);
   const parts = field.setup.parts.map(outlinedThing);
   return (x, y, radius) => {
     if (crowd.meets([x - radius, y - radius, x + radius, y + radius])) return true;
@@ -69,7 +73,7 @@ function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: Re
   };
 }
 
-/** @returns the sheet of bench, tray and rules. */
+/** @returns the sheet of bench and tray. */
 export function useBenchPaint(setup: Setup, view: View, theme: CanvasTheme): Paint {
   const { tray, water } = setup;
   // biome-ignore lint/correctness/useExhaustiveDependencies: a dragged part changes the setup, but not the bench.
@@ -77,13 +81,12 @@ export function useBenchPaint(setup: Setup, view: View, theme: CanvasTheme): Pai
     () => (pen: Pen) => {
       paintBench(pen, setup, view, theme);
       paintSlabs(pen, setup, view, theme);
-      paintRules(pen, tray, view, theme);
     },
     [tray, water, view, theme],
   );
 }
 
-/** @returns the sheets of the field (picture, lines, labels) and of the probe points over the parts. */
+/** @returns the sheets of the field (picture, lines, labels) and of what lies over the parts: probe points and rules. */
 export function useFieldPaint(
   field: PlannedField | null,
   setup: Setup,
@@ -91,7 +94,7 @@ export function useFieldPaint(
   theme: CanvasTheme,
   shown: Shown,
   markedPoints: ReadonlySet<number>,
-): { readonly field: Paint; readonly points: Paint } {
+): { readonly field: Paint; readonly points: Paint; readonly placed: readonly PlacedPoint[] } {
   const scale = theme.dark ? DARK_SCALE : LIGHT_SCALE;
   const { plan, outOfDate } = field ?? { plan: null, outOfDate: false };
   const plannedSetup = field?.setup ?? null;
@@ -116,7 +119,7 @@ export function useFieldPaint(
     return placeLabels(
       plan.equipotentials,
       view,
-      (volts) => [`${fixed(volts, decimals)} V`, fixed(volts, decimals)],
+      (volts) => [`${fixed(volts, decimals)} V`, fixed(volts, decimals), trimmed(volts, decimals)],
       widthIn(labelFont(theme)),
       taken,
     );
@@ -136,37 +139,37 @@ export function useFieldPaint(
     [plan, image, tray, setup.water, view, theme, outOfDate, fieldLines, equipotentials, labels, scale],
   );
   const pointsPaint = useMemo(
-    () => (placed.length === 0 || outOfDate ? NOTHING : (pen: Pen) => paintPoints(pen, placed, theme, markedPoints)),
-    [placed, outOfDate, theme, markedPoints],
+    () => (pen: Pen) => {
+      if (!outOfDate) paintPoints(pen, placed, theme, markedPoints);
+      paintRules(pen, tray, view, theme);
+    },
+    [placed, outOfDate, theme, markedPoints, tray, view],
   );
-  return { field: fieldPaint, points: pointsPaint };
+  return { field: fieldPaint, points: pointsPaint, placed };
 }
 
-/** @returns the sheet of the parts themselves. */
-export function usePartsPaint(setup: Setup, view: View, theme: CanvasTheme): Paint {
-  return useMemo(() => (pen: Pen) => paintParts(pen, setup, view, theme), [setup, view, theme]);
-}
-
-/** @returns the sheet of what is said about parts: edges of selected and faulty ones, tags. */
-export function useMarksPaint(
+/** @returns the sheet of the parts, with the edges of selected and faulty ones, and their tags. */
+export function usePartsPaint(
   setup: Setup,
   plan: Plan | null,
   view: View,
   theme: CanvasTheme,
-  selection: readonly string[],
-  hovered: string | null,
-  findings: readonly Finding[],
+  emphasis: Emphasis,
   tagsShown: boolean,
+  points: readonly PlacedPoint[],
 ): Paint {
+  const crowd = useMemo(() => crowdOf(points), [points]);
+  const { selection } = emphasis;
   const tags = useMemo(
-    () => (tagsShown ? placeTags(setup, plan, view, widthIn(tagFont(theme)), new Set(selection)) : []),
-    [setup, plan, view, theme, selection, tagsShown],
+    () => (tagsShown ? placeTags(setup, plan, view, widthIn(tagFont(theme)), new Set(selection), crowd) : []),
+    [setup, plan, view, theme, selection, tagsShown, crowd],
   );
   return useMemo(
     () => (pen: Pen) => {
-      paintEmphasis(pen, setup, view, theme, { selection, hovered, findings });
+      paintParts(pen, setup, view, theme);
+      paintEmphasis(pen, setup, view, theme, emphasis);
       paintTags(pen, tags, theme);
     },
-    [setup, view, theme, selection, hovered, findings, tags],
+    [setup, view, theme, emphasis, tags],
   );
 }

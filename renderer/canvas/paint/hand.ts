@@ -63,18 +63,15 @@ function outline(pen: Pen, setup: Setup, id: string, view: View): boolean {
   return true;
 }
 
+export interface Emphasis {
+  readonly selection: readonly string[];
+  /** The thing under the pointer. */
+  readonly hovered: string | null;
+  readonly findings: readonly Finding[];
+}
+
 /** The edges of selected things, of the one under the pointer, and of those that something is wrong with. */
-export function paintEmphasis(
-  pen: Pen,
-  setup: Setup,
-  view: View,
-  theme: CanvasTheme,
-  {
-    selection,
-    hovered,
-    findings,
-  }: { readonly selection: readonly string[]; readonly hovered: string | null; readonly findings: readonly Finding[] },
-): void {
+export function paintEmphasis(pen: Pen, setup: Setup, view: View, theme: CanvasTheme, { selection, hovered, findings }: Emphasis): void {
   pen.save();
   pen.lineJoin = "round";
   for (const id of new Set(findings.filter(({ severity }) => severity === "stop").flatMap(({ partIds }) => partIds))) {

@@ -9,6 +9,8 @@ import type { Pen } from "./pen";
 
 const RULE_PX = 26;
 const GAP_PX = 8;
+/** Room for the name and unit at a rule's far end. */
+const NAME_PX = 48;
 const STEPS_MM = [1, 2, 5, 10, 20, 50, 100, 200, 500, 1000];
 
 /** The smallest step (mm) that looks at least so wide. */
@@ -76,13 +78,13 @@ export function paintRules(pen: Pen, tray: Tray, view: View, theme: CanvasTheme)
     const x = Math.round(left + mm * scale) + 0.5;
     pen.moveTo(x, ruleTop);
     pen.lineTo(x, ruleTop + tick);
-    if (numbered && x < right - 26) pen.fillText(String(mm), x, ruleTop + 18);
+    if (numbered && x < right - NAME_PX) pen.fillText(String(mm), x, ruleTop + 18);
   });
   everyMark(widthMm, (bottom - heightPx) / scale, bottom / scale, marks, (mm, tick, numbered) => {
     const y = Math.round(bottom - mm * scale) + 0.5;
     pen.moveTo(ruleRight, y);
     pen.lineTo(ruleRight - tick, y);
-    if (!numbered || y < top + 26) return;
+    if (!numbered || y < top + NAME_PX) return;
     pen.save();
     pen.translate(ruleRight - 18, y);
     pen.rotate(-Math.PI / 2);
