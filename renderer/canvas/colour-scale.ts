@@ -16,10 +16,12 @@ interface Stops {
 }
 
 const LIGHT: Stops = { low: [0.74, 0.08, 252], middle: [0.865, 0.062, 192], high: [0.96, 0.07, 95] };
-const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.57, 0.085, 82] };
+const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.555, 0.083, 82] };
 
 /** More than a channel's 256 steps: the three channels step at different places, which hides the steps. */
 const SHADES = 1024;
+/** Steps in which the curve is walked to space the shades evenly. */
+const FINE = 32 * SHADES;
 
 const lab = ([lightness, chroma, hueDeg]: Triple): Triple => {
   const hue = (hueDeg * Math.PI) / 180;
@@ -57,7 +59,7 @@ function along({ low, middle, high }: Stops, share: number): Triple {
 /** The scale's shades in Oklab, spaced evenly along the curve. */
 export function shadesInOklab(dark: boolean): readonly Triple[] {
   const stops = dark ? DARK : LIGHT;
-  const fine = Array.from({ length: 4097 }, (_, index) => along(stops, index / 4096));
+  const fine = Array.from({ length: FINE + 1 }, (_, index) => along(stops, index / FINE));
   const walked = [0];
   fine.slice(1).forEach((shade, index) => {
     const before = fine[index] as Triple;
@@ -67,7 +69,7 @@ export function shadesInOklab(dark: boolean): readonly Triple[] {
   let next = 0;
   return Array.from({ length: SHADES }, (_, index) => {
     const wanted = (total * index) / (SHADES - 1);
-    while (next < 4096 && (walked[next] as number) < wanted) next++;
+    while (next < FINE && (walked[next] as number) < wanted) next++;
     return fine[next] as Triple;
   });
 }

@@ -9,6 +9,11 @@ const NOTE_WIDTH_PX = 250;
 /** Clear of a part's tag and handles, px. */
 const BELOW_PX = 34;
 
+/** More words than this would hide the tray; the rest stand in the list of findings. */
+const MOST_NOTES = 4;
+
+const sameParts = (a: readonly string[], b: readonly string[]): boolean => a.length === b.length && a.every((id) => b.includes(id));
+
 /** The shapes that stand for a severity (as in ISO 3864: octagon, triangle, circle), the word beside them. */
 export function SeverityMark({ severity }: { readonly severity: Severity }) {
   return (
@@ -27,23 +32,27 @@ export function SeverityMark({ severity }: { readonly severity: Severity }) {
 /** The findings that are about parts, with where on the stage their words stand: below the parts, kept in sight. */
 function placedNotes(findings: readonly Finding[], setup: Setup, view: View, attended: ReadonlySet<string>) {
   let nextFree = 0;
-  return findings
-    .filter(({ severity, partIds }) => partIds.length > 0 && (severity === "stop" || partIds.some((id) => attended.has(id))))
-    .sort((a, b) => WORST_FIRST.indexOf(a.severity) - WORST_FIRST.indexOf(b.severity))
-    .slice(0, 4)
-    .flatMap((finding) => {
-      const boxes = finding.partIds.flatMap((id) => {
-        const thing = thingById(setup, id);
-        return thing === undefined ? [] : [outlinedThing(thing).box];
-      });
-      if (boxes.length === 0) return [];
-      const middleMm = boxes.reduce((sum, box) => sum + (box[0] + box[2]) / 2, 0) / boxes.length;
-      const [x, y] = toScreen(view, middleMm, Math.min(...boxes.map((box) => box[1])));
-      const left = Math.round(Math.min(view.widthPx - NOTE_WIDTH_PX - 8, Math.max(8, x - NOTE_WIDTH_PX / 2)));
-      const top = Math.round(Math.max(nextFree, Math.min(view.heightPx - 96, y + BELOW_PX)));
-      nextFree = top + 72;
-      return [{ finding, left, top }];
-    });
+  return (
+    findings
+      .filter(({ severity, partIds }) => partIds.length > 0 && (severity === "stop" || partIds.some((id) => attended.has(id))))
+      .sort((a, b) => WORST_FIRST.indexOf(a.severity) - WORST_FIRST.indexOf(b.severity))
+      // Of several findings about the same parts the first says it: an overlap also touches.
+      .filter(({ partIds }, index, all) => all.findIndex((other) => sameParts(other.partIds, partIds)) === index)
+      .slice(0, MOST_NOTES)
+      .flatMap((finding) => {
+        const boxes = finding.partIds.flatMap((id) => {
+          const thing = thingById(setup, id);
+          return thing === undefined ? [] : [outlinedThing(thing).box];
+        });
+        if (boxes.length === 0) return [];
+        const middleMm = boxes.reduce((sum, box) => sum + (box[0] + box[2]) / 2, 0) / boxes.length;
+        const [x, y] = toScreen(view, middleMm, Math.min(...boxes.map((box) => box[1])));
+        const left = Math.round(Math.min(view.widthPx - NOTE_WIDTH_PX - 8, Math.max(8, x - NOTE_WIDTH_PX / 2)));
+        const top = Math.round(Math.max(nextFree, Math.min(view.heightPx - 96, y + BELOW_PX)));
+        nextFree = top + 72;
+        return [{ finding, left, top }];
+      })
+  );
 }
 
 /** What is wrong, in words, where it is: "stop" findings always, the others while their part is selected or under the pointer. */

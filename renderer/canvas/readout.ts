@@ -33,6 +33,8 @@ export function createReadout(source: SampleSource, report: (readout: PointerRea
   let next: { readonly setup: Setup; readonly place: Place } | null = null;
   let here: Place | null = null;
   let last: FieldReading | null = null;
+  /** Counts the moments from which an answer still on its way says nothing any more. */
+  let voided = 0;
 
   function tell(): void {
     if (here === null) {
@@ -56,26 +58,30 @@ export function createReadout(source: SampleSource, report: (readout: PointerRea
     const { setup, place } = next;
     next = null;
     asking = true;
-    try {
-      last = (await source.sample(setup, [place]))?.[0] ?? null;
-    } catch {
-      // The plan itself reports a worker that fails; here there is just nothing to read.
-      last = null;
-    }
+    const asked = voided;
+    // The plan itself reports a worker that fails; here there is just nothing to read.
+    const readings = await source.sample(setup, [place]).catch(() => null);
     asking = false;
-    tell();
+    if (asked === voided) {
+      last = readings?.[0] ?? null;
+      tell();
+    }
     void ask();
   }
 
   return {
     at: (setup, place) => {
       here = place;
-      if (setup === null) last = null;
-      else next = { setup, place };
-      if (setup === null) tell();
+      if (setup === null) {
+        voided++;
+        next = null;
+        last = null;
+      } else next = { setup, place };
+      tell();
       void ask();
     },
     leave: () => {
+      voided++;
       here = null;
       next = null;
       last = null;

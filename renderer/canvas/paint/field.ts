@@ -86,7 +86,8 @@ export function paintEquipotentials(
   pen.textAlign = "center";
   pen.textBaseline = "middle";
   const [low, high] = plan.spanV;
-  for (const { text, volts, x, y, angleRad } of labels) {
+  // A label is a statement; a field that is out of date states nothing.
+  for (const { text, volts, x, y, angleRad } of outOfDate ? [] : labels) {
     pen.save();
     pen.translate(x, y);
     pen.rotate(angleRad);

@@ -100,6 +100,13 @@ export function paintRules(pen: Pen, tray: Tray, view: View, theme: CanvasTheme)
   pen.rotate(-Math.PI / 2);
   pen.fillText("y mm", 0, 0);
   pen.restore();
+  paintCorner(pen, ruleTop, ruleRight, left, bottom, theme);
+}
+
+/** Where both rules have slid to the stage's edges, the corner belongs to neither. */
+function paintCorner(pen: Pen, ruleTop: number, ruleRight: number, left: number, bottom: number, theme: CanvasTheme): void {
+  if (ruleTop > bottom || ruleRight < left) return;
+  body(pen, theme, ruleRight - RULE_PX, ruleTop, RULE_PX, RULE_PX);
 }
 
 /** The origin: a ring with a cross, as on a drawing. */
