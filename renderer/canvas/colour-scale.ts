@@ -16,7 +16,7 @@ interface Stops {
 }
 
 const LIGHT: Stops = { low: [0.74, 0.08, 252], middle: [0.865, 0.062, 192], high: [0.96, 0.07, 95] };
-const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.555, 0.083, 82] };
+const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.545, 0.082, 82] };
 
 /** More than a channel's 256 steps: the three channels step at different places, which hides the steps. */
 const SHADES = 1024;
