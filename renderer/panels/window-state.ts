@@ -1,0 +1,73 @@
+import { createStore, type StoreApi } from "zustand/vanilla";
+import type { PointerReadout } from "../canvas/readout";
+import type { Shown } from "../canvas/use-paints";
+
+/** The places of work round the tray. */
+export type Desk = "lay-out" | "bench" | "probe-plan" | "sheets";
+
+export const DESKS: readonly { readonly desk: Desk; readonly name: string }[] = [
+  { desk: "lay-out", name: "Lay out" },
+  { desk: "bench", name: "Bench" },
+  { desk: "probe-plan", name: "Probe plan" },
+  { desk: "sheets", name: "Sheets" },
+];
+
+/** Something to tell the user that stays until it is dismissed or answered. */
+export interface Message {
+  readonly id: number;
+  readonly tone: "problem" | "question" | "done";
+  readonly title: string;
+  readonly lines: readonly string[];
+  readonly choices: readonly { readonly label: string; readonly choose: () => void }[];
+}
+
+export interface WindowState {
+  readonly desk: Desk;
+  readonly startPage: boolean;
+  readonly keysShown: boolean;
+  readonly findingsShown: boolean;
+  readonly shown: Shown;
+  readonly readout: PointerReadout | null;
+  readonly markedPoints: ReadonlySet<number>;
+  readonly messages: readonly Message[];
+}
+
+/** What the window shows beside the document: no part of a setup. */
+export interface WindowStore extends Pick<StoreApi<WindowState>, "getState" | "subscribe" | "getInitialState"> {
+  readonly set: (change: Partial<WindowState>) => void;
+  readonly goTo: (desk: Desk) => void;
+  /** Shows a message. @returns how to take it away again. */
+  readonly tell: (message: Omit<Message, "id">) => () => void;
+  readonly dismiss: (id: number) => void;
+}
+
+/** @returns the state of a window that opens with its start page. */
+export function createWindowStore(): WindowStore {
+  const store = createStore<WindowState>(() => ({
+    desk: "lay-out",
+    startPage: true,
+    keysShown: false,
+    findingsShown: false,
+    shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
+    readout: null,
+    markedPoints: new Set(),
+    messages: [],
+  }));
+  const { getState, setState } = store;
+  let next = 1;
+  const dismiss = (id: number): void => setState({ messages: getState().messages.filter((message) => message.id !== id) });
+  return {
+    getState,
+    subscribe: store.subscribe,
+    getInitialState: store.getInitialState,
+    set: setState,
+    goTo: (desk) =>
+      setState(({ shown }) => ({ desk, startPage: false, shown: { ...shown, points: desk === "probe-plan" || shown.points } })),
+    tell: (message) => {
+      const id = next++;
+      setState({ messages: [...getState().messages.slice(-3), { ...message, id }] });
+      return () => dismiss(id);
+    },
+    dismiss,
+  };
+}
