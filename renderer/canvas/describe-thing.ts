@@ -1,4 +1,3 @@
-import type { Setup } from "../../shared-types/setup";
 import { isPart, type Thing, thingName } from "../document/edit";
 import { sizeText, trimmed } from "./number-text";
 
@@ -9,11 +8,11 @@ export function placeWords({ xMm, yMm, turnDeg, shape }: Thing): string {
 }
 
 /** @returns what a thing does in the tray: "electrode at 6 V", "floating conductor", "insulator", "slab 4 mm thick". */
-export function roleWords(thing: Thing, setup: Setup): string {
+export function roleWords(thing: Thing, supplyVolts: number): string {
   if (!isPart(thing)) return `slab ${trimmed(thing.thicknessMm, 2)} mm thick`;
   switch (thing.role) {
     case "electrode":
-      return `electrode at ${trimmed(thing.tap * setup.supply.volts, 3)} V`;
+      return `electrode at ${trimmed(thing.tap * supplyVolts, 3)} V`;
     case "floating":
       return "floating conductor";
     case "insulator":
@@ -22,5 +21,5 @@ export function roleWords(thing: Thing, setup: Setup): string {
 }
 
 /** @returns a thing in one line: name, role, kind and sizes, place. */
-export const describeThing = (thing: Thing, setup: Setup): string =>
-  `${thingName(thing)}: ${roleWords(thing, setup)}, ${thing.shape.kind} ${sizeText(thing.shape)}, ${placeWords(thing)}`;
+export const describeThing = (thing: Thing, supplyVolts: number): string =>
+  `${thingName(thing)}: ${roleWords(thing, supplyVolts)}, ${thing.shape.kind} ${sizeText(thing.shape)}, ${placeWords(thing)}`;

@@ -1,7 +1,31 @@
-import { type KeyboardEvent, useId, useState } from "react";
+import { type KeyboardEvent, memo, useId, useState } from "react";
 import type { Setup } from "../../shared-types/setup";
-import { thingsOf } from "../document/edit";
+import { type Thing, thingsOf } from "../document/edit";
 import { describeThing } from "./describe-thing";
+
+/** One thing; drawn again only when it changes itself, since a drag changes one of many in every frame. */
+const Row = memo(function Row(props: {
+  readonly id: string;
+  readonly thing: Thing;
+  readonly supplyVolts: number;
+  readonly selected: boolean;
+  readonly active: boolean;
+  readonly onSelect: (ids: readonly string[]) => void;
+}) {
+  const { thing } = props;
+  return (
+    <div
+      id={props.id}
+      role="option"
+      tabIndex={-1}
+      aria-selected={props.selected}
+      className={props.active ? "active" : undefined}
+      onPointerDown={() => props.onSelect([thing.id])}
+    >
+      {describeThing(thing, props.supplyVolts)}
+    </div>
+  );
+});
 
 /**
  * The tray's contents as a list, for eyes that listen and hands without a pointer. It shares the selection with the canvas, stays
@@ -63,17 +87,15 @@ export function PartsList(props: {
         onFocus={() => setActiveId(selection[0] ?? null)}
       >
         {things.map((thing) => (
-          <div
+          <Row
             key={thing.id}
             id={`${prefix}-${thing.id}`}
-            role="option"
-            tabIndex={-1}
-            aria-selected={selection.includes(thing.id)}
-            className={thing === activeThing ? "active" : undefined}
-            onPointerDown={() => onSelect([thing.id])}
-          >
-            {describeThing(thing, setup)}
-          </div>
+            thing={thing}
+            supplyVolts={setup.supply.volts}
+            selected={selection.includes(thing.id)}
+            active={thing === activeThing}
+            onSelect={onSelect}
+          />
         ))}
         {things.length === 0 && (
           <div role="option" tabIndex={-1} aria-selected="false" aria-disabled="true">

@@ -4,7 +4,7 @@ import { radians } from "../../shared-types/units";
 import { covers } from "../engine/geometry/signed-distance";
 import { outlinedThing } from "./hit";
 import { trimmed } from "./number-text";
-import type { Crowd, PixelBox } from "./point-numbers";
+import { type Crowd, createCrowd, type PixelBox } from "./point-numbers";
 import { toScreen, toTray, type View } from "./view";
 
 /** The small sign beside a conductor: which lead it is on and its volts, or that it floats. */
@@ -29,10 +29,13 @@ function signOf(part: Part): Tag["sign"] {
   return part.tap === 0 ? "−" : part.tap === 1 ? "+" : null;
 }
 
-function textOf(part: Part, setup: Setup, plan: Plan | null): string {
-  if (part.role === "electrode") return `${trimmed(part.tap * setup.supply.volts, 3)} V`;
+/** What a tag may say, the best first, shorter ones for where it finds no room. The dashed edge alone says that a part floats. */
+function textsOf(part: Part, setup: Setup, plan: Plan | null): readonly string[] {
+  if (part.role === "electrode") return [`${trimmed(part.tap * setup.supply.volts, 3)} V`];
   const reading = plan?.conductors.find(({ id }) => id === part.id);
-  return reading === undefined ? "floats" : `floats ${trimmed(reading.volts, 2)} V`;
+  if (reading === undefined) return ["floats"];
+  const volts = `${trimmed(reading.volts, 2)} V`;
+  return [`floats ${volts}`, volts];
 }
 
 /** Room that a tag inside a part leaves to the part's edge, px. */
@@ -87,8 +90,19 @@ function* placesOf(part: Part, view: View, width: number, selected: boolean): Ge
   yield boxAt(right + GAP_PX + (selected ? HANDLES_PX : 0) + width / 2, y);
 }
 
+/** Whether a tag's box (px) would lie on a part, told by its corners, the middles of its sides and its own middle. */
+function liesOn(part: Part, [left, top, right, bottom]: PixelBox, view: View): boolean {
+  const [boxLeft, boxBottom, boxRight, boxTop] = outlinedThing(part).box;
+  const [tagLeft, tagTop] = toTray(view, left, top);
+  const [tagRight, tagBottom] = toTray(view, right, bottom);
+  if (tagLeft > boxRight || tagRight < boxLeft || tagBottom > boxTop || tagTop < boxBottom) return false;
+  const across = [tagLeft, (tagLeft + tagRight) / 2, tagRight];
+  return [tagBottom, (tagBottom + tagTop) / 2, tagTop].some((y) => across.some((x) => covers(part, x, y)));
+}
+
 /**
- * Places the tags so that they hide no probe point, and stand clear of the handles of what is selected.
+ * Places the tags so that they hide no probe point, no other part and no other tag, and stand clear of the handles of what is
+ * selected. In a crowd a floating part's tag gets shorter, then stays away; an electrode's is always there.
  * @param plan the newest plan, for the potential that a floating part takes; null while there is none for this setup.
  * @param widthOf how wide a text is, px.
  * @param points the rings and numbers of probe points.
@@ -101,13 +115,22 @@ export function placeTags(
   selection: ReadonlySet<string>,
   points: Crowd,
 ): readonly Tag[] {
-  return setup.parts.flatMap((part): readonly Tag[] => {
-    if (part.role === "insulator") return [];
+  const placed = createCrowd();
+  const conductors = setup.parts.filter(({ role }) => role !== "insulator");
+  // Electrodes choose first: their tags say how the tray is wired.
+  const inTurn = [...conductors.filter(({ role }) => role === "electrode"), ...conductors.filter(({ role }) => role === "floating")];
+  return inTurn.flatMap((part): readonly Tag[] => {
     const sign = signOf(part);
-    const text = textOf(part, setup, plan);
-    const width = Math.ceil(widthOf(text)) + 2 * PADDING_PX + (sign === null ? 0 : SIGN_PX - PADDING_PX / 2);
-    const places = [...placesOf(part, view, width, selection.has(part.id))];
-    const box = places.find((place) => !points.meets(place)) ?? places[0];
-    return box === undefined ? [] : [{ partId: part.id, sign, text, dashed: part.role === "floating", box }];
+    const free = (box: PixelBox): boolean =>
+      !points.meets(box) && !placed.meets(box) && !setup.parts.some((other) => other !== part && liesOn(other, box, view));
+    const choices = textsOf(part, setup, plan).flatMap((text) => {
+      const width = Math.ceil(widthOf(text)) + 2 * PADDING_PX + (sign === null ? 0 : SIGN_PX - PADDING_PX / 2);
+      return [...placesOf(part, view, width, selection.has(part.id))].map((box) => ({ text, box }));
+    });
+    const wanted = part.role === "electrode" || selection.has(part.id);
+    const choice = choices.find(({ box }) => free(box)) ?? (wanted ? choices[0] : undefined);
+    if (choice === undefined) return [];
+    placed.add(choice.box);
+    return [{ partId: part.id, sign, dashed: part.role === "floating", ...choice }];
   });
 }

@@ -16,7 +16,7 @@ import { numberFont, paintPoints } from "./paint/points";
 import { paintOrigin, paintRules } from "./paint/rules";
 import { type Crowd, createCrowd, type PlacedPoint, placeNumbers, RING_PX } from "./point-numbers";
 import { placeTags } from "./tags";
-import { widthIn } from "./text-width";
+import { type WidthOf, widthIn } from "./text-width";
 import type { CanvasTheme } from "./theme";
 import { toTray, type View } from "./view";
 
@@ -53,10 +53,9 @@ function crowdOf(placed: readonly PlacedPoint[]): Crowd {
 }
 
 /** What labels along lines must leave free: points with their numbers, tags, and metal. */
-function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: readonly PlacedPoint[], tags: boolean): Taken {
+function takenBy(field: PlannedField, view: View, tagWidthOf: WidthOf, placed: readonly PlacedPoint[], tags: boolean): Taken {
   const crowd = crowdOf(placed);
-  if (tags)
-    for (const { box } of placeTags(field.setup, field.plan, view, widthIn(tagFont(theme)), new Set(), crowdOf(placed))) crowd.add(box);
+  if (tags) for (const { box } of placeTags(field.setup, field.plan, view, tagWidthOf, new Set(), crowdOf(placed))) crowd.add(box);
   const parts = field.setup.parts.map(outlinedThing);
   return (x, y, radius) => {
     if (crowd.meets([x - radius, y - radius, x + radius, y + radius])) return true;
@@ -72,6 +71,10 @@ function takenBy(field: PlannedField, view: View, theme: CanvasTheme, placed: re
     );
   };
 }
+
+/** @returns the measures of the theme's fonts. */
+const useWidths = (theme: CanvasTheme) =>
+  useMemo(() => ({ tag: widthIn(tagFont(theme)), label: widthIn(labelFont(theme)), number: widthIn(numberFont(theme)) }), [theme]);
 
 /** @returns the sheet of bench and tray. */
 export function useBenchPaint(setup: Setup, view: View, theme: CanvasTheme): Paint {
@@ -95,6 +98,7 @@ export function useFieldPaint(
   shown: Shown,
   markedPoints: ReadonlySet<number>,
 ): { readonly field: Paint; readonly points: Paint; readonly placed: readonly PlacedPoint[] } {
+  const widths = useWidths(theme);
   const scale = theme.dark ? DARK_SCALE : LIGHT_SCALE;
   const { plan, outOfDate } = field ?? { plan: null, outOfDate: false };
   const plannedSetup = field?.setup ?? null;
@@ -107,23 +111,23 @@ export function useFieldPaint(
     [picturePlan, plannedTray, scale],
   );
   const placed = useMemo(
-    () => (plan === null || !points ? [] : placeNumbers(pointsOf(plan), view, widthIn(numberFont(theme)))),
-    [plan, points, view, theme],
+    () => (plan === null || !points ? [] : placeNumbers(pointsOf(plan), view, widths.number)),
+    [plan, points, view, widths],
   );
   const labels = useMemo(() => {
     if (plan === null || plannedSetup === null || !equipotentials) return [];
     const [first, second] = plan.equipotentials;
     const step = first === undefined ? 1 : Math.abs((second?.volts ?? plan.spanV[0]) - first.volts);
     const decimals = decimalsForStep(step);
-    const taken = takenBy({ plan, setup: plannedSetup, outOfDate: false }, view, theme, placed, tags);
+    const taken = takenBy({ plan, setup: plannedSetup, outOfDate: false }, view, widths.tag, placed, tags);
     return placeLabels(
       plan.equipotentials,
       view,
       (volts) => [`${fixed(volts, decimals)} V`, fixed(volts, decimals), trimmed(volts, decimals)],
-      widthIn(labelFont(theme)),
+      widths.label,
       taken,
     );
-  }, [plan, plannedSetup, equipotentials, view, theme, placed, tags]);
+  }, [plan, plannedSetup, equipotentials, view, widths, placed, tags]);
   // biome-ignore lint/correctness/useExhaustiveDependencies: a dragged part changes the setup, but not its water.
   const fieldPaint = useMemo(
     () => (pen: Pen) => {
@@ -158,11 +162,12 @@ export function usePartsPaint(
   tagsShown: boolean,
   points: readonly PlacedPoint[],
 ): Paint {
+  const widths = useWidths(theme);
   const crowd = useMemo(() => crowdOf(points), [points]);
   const { selection } = emphasis;
   const tags = useMemo(
-    () => (tagsShown ? placeTags(setup, plan, view, widthIn(tagFont(theme)), new Set(selection), crowd) : []),
-    [setup, plan, view, theme, selection, tagsShown, crowd],
+    () => (tagsShown ? placeTags(setup, plan, view, widths.tag, new Set(selection), crowd) : []),
+    [setup, plan, view, widths, selection, tagsShown, crowd],
   );
   return useMemo(
     () => (pen: Pen) => {
