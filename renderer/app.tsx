@@ -32,7 +32,7 @@ const FIRST_CHOICE: SheetChoice = { pages: ["template", "probe-table"], paper: "
 
 function made(host: Host) {
   const client = createFieldClient(startWorker);
-  const document = createDocument(emptyTray());
+  const document = createDocument(EXAMPLES[1]?.setup ?? emptyTray());
   const window = createWindowStore();
   const planning = createPlanning(document, client);
   return {
@@ -134,6 +134,14 @@ export function App({ host }: { readonly host: Host }) {
     return host.listen(take);
   }, [host, act, files, window]);
 
+  useEffect(() => {
+    host.keptDrafts().then(
+      (drafts) => {
+        if (drafts.length > 0) window.tell(files.offerKept(drafts[0], drafts.length));
+      },
+      () => {},
+    );
+  }, [host, window, files]);
   useEffect(() => {
     host.readSettings().then(setSettings, () => {});
   }, [host]);

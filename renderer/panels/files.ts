@@ -2,7 +2,7 @@ import type { FileHandle, Host, KeptDraft, OpenOutcome } from "../../shared-type
 import { parseSetup, parseSetupText, setupText } from "../../shared-types/parse-setup";
 import type { Setup } from "../../shared-types/setup";
 import type { Document } from "../document/document";
-import type { WindowStore } from "./window-state";
+import type { Message, WindowStore } from "./window-state";
 
 /** Opening and saving: what host, document and window do together. */
 export interface Files {
@@ -15,6 +15,8 @@ export interface Files {
   readonly take: (file: FileHandle, text: string) => void;
   readonly showExample: (title: string, setup: Setup) => void;
   readonly bringBack: (draft: KeptDraft) => void;
+  /** @returns the question that a start after a crash asks about the newest of `count` kept drafts. */
+  readonly offerKept: (draft: KeptDraft, count: number) => Omit<Message, "id">;
 }
 
 const EMPTY_TRAY: unknown = {
@@ -108,6 +110,34 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
     }
   }
 
+  function bringBack(draft: KeptDraft): void {
+    const parsed = parseSetupText(draft.text);
+    if (parsed.ok) {
+      replaceBy(parsed.value, `bring back ${draft.title}`, draft.file, true);
+      void host.discardDraft(draft.id);
+    } else
+      fail(
+        "The kept work cannot be read.",
+        parsed.problems.slice(0, 3).map(({ message }) => message),
+      );
+  }
+
+  function offerKept(draft: KeptDraft, count: number): Omit<Message, "id"> {
+    const name = draft.title === "" ? "An untitled tray" : draft.title;
+    const at = new Date(draft.keptAtMs).toLocaleString(undefined, { dateStyle: "medium", timeStyle: "short" });
+    return {
+      tone: "question",
+      title: `${name} was left behind unsaved`,
+      lines: [
+        `Kept ${at}${draft.file === null ? ", never saved" : `, from ${draft.file.name}`}.${count > 1 ? ` ${count - 1} more on the start page.` : ""}`,
+      ],
+      choices: [
+        { label: "Bring it back", choose: () => bringBack(draft) },
+        { label: "Not wanted", choose: () => void host.discardDraft(draft.id) },
+      ],
+    };
+  }
+
   return {
     newSetup: () => replaceBy(emptyTray(), "new tray", null),
     open: async () => takeOutcome(await host.openFile()),
@@ -115,14 +145,7 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
     save,
     take,
     showExample: (title, setup) => replaceBy(setup, `open example ${title}`, null),
-    bringBack: (draft) => {
-      const parsed = parseSetupText(draft.text);
-      if (parsed.ok) replaceBy(parsed.value, `bring back ${draft.title}`, draft.file, true);
-      else
-        fail(
-          "The kept work cannot be read.",
-          parsed.problems.slice(0, 3).map(({ message }) => message),
-        );
-    },
+    bringBack,
+    offerKept,
   };
 }

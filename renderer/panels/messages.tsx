@@ -21,7 +21,14 @@ export function Messages({ window }: { readonly window: WindowStore }) {
           {choices.length > 0 && (
             <div className="choices">
               {choices.map(({ label, choose }) => (
-                <button key={label} type="button" onClick={choose}>
+                <button
+                  key={label}
+                  type="button"
+                  onClick={() => {
+                    choose();
+                    window.dismiss(id);
+                  }}
+                >
                   {label}
                 </button>
               ))}

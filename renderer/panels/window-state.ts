@@ -41,11 +41,11 @@ export interface WindowStore extends Pick<StoreApi<WindowState>, "getState" | "s
   readonly dismiss: (id: number) => void;
 }
 
-/** @returns the state of a window that opens with its start page. */
+/** @returns the state of a window that opens on the tray. */
 export function createWindowStore(): WindowStore {
   const store = createStore<WindowState>(() => ({
     desk: "lay-out",
-    startPage: true,
+    startPage: false,
     keysShown: false,
     findingsShown: false,
     shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
