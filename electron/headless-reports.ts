@@ -1,0 +1,93 @@
+import type { Bounded, FieldReading, Finding, Plan, ProbePoint } from "../shared-types/plan";
+
+/** What the headless command prints: the contract's keys, numbers with the digits that their bound is worth. */
+
+/** @returns the number with two digits beyond its bound; null for what is no number. */
+function worth(value: number | null, error: number): number | null {
+  if (value === null || !Number.isFinite(value)) return null;
+  if (!(error > 0) || value === 0) return value;
+  const decimals = 3 - Math.floor(Math.log10(error));
+  return decimals > 20 || decimals < -20 ? value : Number(`${Math.round(Number(`${value}e${decimals}`))}e${-decimals}`);
+}
+
+/** @returns a bound rounded to three figures. */
+const bound = (error: number): number | null => (Number.isFinite(error) ? Number(error.toPrecision(3)) : null);
+
+const boundedOf = (bounded: Bounded | null): { value: number | null; error: number | null } =>
+  bounded === null ? { value: null, error: null } : { value: worth(bounded.value, bounded.error), error: bound(bounded.error) };
+
+/** @returns the report of `solve`. */
+export function solveReport(plan: Plan, readings: readonly FieldReading[]): object {
+  const resistance = boundedOf(plan.resistanceOhm);
+  const shape = boundedOf(plan.shapeFactor);
+  const current = boundedOf(plan.currentA);
+  const { pitchMm, unknowns, iterations, relativeResidual, elapsedMs } = plan.numerics;
+  return {
+    setupId: plan.setupId,
+    quality: plan.quality,
+    numerics: { pitchMm, unknowns, iterations, relativeResidual: bound(relativeResidual), elapsedMs: Math.round(elapsedMs) },
+    resistanceOhm: resistance.value,
+    resistanceErrorOhm: resistance.error,
+    currentA: current.value,
+    currentErrorA: current.error,
+    shapeFactor: shape.value,
+    shapeFactorError: shape.error,
+    conductors: plan.conductors.map((conductor) => ({
+      id: conductor.id,
+      role: conductor.role,
+      volts: worth(conductor.volts, conductor.voltsError),
+      voltsError: bound(conductor.voltsError),
+      currentA: worth(conductor.currentA, conductor.currentErrorA),
+      currentErrorA: bound(conductor.currentErrorA),
+    })),
+    at: readings.map(({ xMm, yMm, inside, volts, voltsError, fieldVPerM, directionDeg }) => ({
+      xMm,
+      yMm,
+      inside,
+      volts: worth(volts, voltsError),
+      voltsError: volts === null ? null : bound(voltsError),
+      fieldVPerM: volts === null ? null : Number(fieldVPerM.toPrecision(7)),
+      directionDeg: volts === null ? null : Number(directionDeg.toFixed(4)),
+    })),
+  };
+}
+
+const pointOf = ({ n, xMm, yMm, inside, volts, voltsError, voltsPerMm, bandV }: ProbePoint, withInside: boolean): object => ({
+  n,
+  xMm,
+  yMm,
+  ...(withInside ? { inside } : {}),
+  volts: worth(volts, voltsError),
+  voltsError: bound(voltsError),
+  voltsPerMm: Number(voltsPerMm.toPrecision(5)),
+  bandV: Number(bandV.toPrecision(4)),
+});
+
+/** @returns the report of `probes`. */
+export function probesReport({ setupId, probing }: Plan): object {
+  return {
+    setupId,
+    spanV: probing.spanV,
+    levels: probing.levels.map(({ volts, note, points }) => ({ volts, note, points: points.map((point) => pointOf(point, false)) })),
+    checks: probing.checks.map((point) => pointOf(point, true)),
+  };
+}
+
+/** @returns the report of `check`. */
+export function checkReport(setupId: string, findings: readonly Finding[]) {
+  const count = (severity: Finding["severity"]): number => findings.filter((finding) => finding.severity === severity).length;
+  return {
+    setupId,
+    counts: { stop: count("stop"), caution: count("caution"), note: count("note") },
+    findings: findings.map(({ code, severity, partIds, message, measured, limit, source, remedy }) => ({
+      code,
+      severity,
+      partIds,
+      message,
+      measured,
+      limit,
+      source,
+      remedy,
+    })),
+  };
+}
