@@ -5,7 +5,6 @@ import type { Finding, Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { addPart } from "../document/commands/parts";
 import { readShelfPart, SHELF_PART_TYPE } from "../document/shelf-part";
-import "./canvas.css";
 import { type CanvasActions, createHand, type HandWorld, IDLE, type Modifiers, shownHandles } from "./hand";
 import { meaningOf } from "./keys";
 import { paintFrame, paintHandles } from "./paint/hand";
@@ -14,8 +13,10 @@ import { PaintedLayer } from "./painted-layer";
 import { PartNotes } from "./part-notes";
 import { PartsList } from "./parts-list";
 import type { CanvasTheme } from "./theme";
+import { themeProperties, useLoadedTheme } from "./use-loaded-theme";
 import { type PlannedField, type Shown, useBenchPaint, useFieldPaint, usePartsPaint } from "./use-paints";
 import { type Place, type TrayView, toTray, viewOf } from "./view";
+import { VoltScale } from "./volt-scale";
 
 export interface TrayCanvasProps {
   readonly setup: Setup;
@@ -46,7 +47,8 @@ const planForTags = (field: PlannedField | null): Plan | null => (field === null
 
 /** The tray on its bench, drawn to scale, with everything that hands and keys can do to it. Takes data and callbacks only. */
 export function TrayCanvas(props: TrayCanvasProps) {
-  const { setup, selection, field, findings, trayView, theme, shown, editable, actions } = props;
+  const { setup, selection, field, findings, trayView, shown, editable, actions } = props;
+  const theme = useLoadedTheme(props.theme);
   const viewState = useStore(trayView);
   const view = useMemo(() => viewOf(viewState), [viewState]);
   const [look, setLook] = useState(IDLE);
@@ -183,7 +185,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const count = setup.parts.length;
 
   return (
-    <div className="tray-canvas">
+    <div className="tray-canvas" style={themeProperties(theme)}>
       <PartsList setup={setup} selection={selection} onSelect={actions.select} onEnter={() => surface.current?.focus()} onKey={takeKey} />
       <div
         ref={surface}
@@ -213,6 +215,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
           <PaintedLayer name="hand" paint={handPaint} />
         </Stage>
       </div>
+      {field !== null && shown.picture && !field.outOfDate && <VoltScale plan={field.plan} dark={theme.dark} />}
       {count === 0 && <p className="tray-empty">Drag a bar or a disc from the shelf onto the tray, or press Enter on one there.</p>}
       <PartNotes findings={findings} setup={setup} view={view} attended={attended} />
       {look.live !== null && pointer.current !== null && (
