@@ -23,15 +23,41 @@ export function run(command, args, options = {}) {
 
 const npm = process.platform === "win32" ? "npm.cmd" : "npm";
 const installedStamp = inRoot("node_modules", ".package-lock.json");
+const PROGRESS_EVERY_MS = 3000;
+
+function packagesUnder(folder) {
+  if (!existsSync(folder)) return 0;
+  let count = 0;
+  for (const name of readdirSync(folder)) {
+    if (name.startsWith("@")) count += packagesUnder(join(folder, name));
+    else if (!name.startsWith(".")) count += existsSync(join(folder, name, "package.json")) ? 1 : 0;
+  }
+  return count;
+}
+
+/** Says every few seconds how far an install has come. @returns a way to stop. */
+function sayProgress(total) {
+  const startedAt = Date.now();
+  const timer = setInterval(() => {
+    const seconds = Math.round((Date.now() - startedAt) / 1000);
+    say(`  ${seconds} s, ${packagesUnder(inRoot("node_modules"))} of about ${total} packages in place`);
+  }, PROGRESS_EVERY_MS);
+  return () => clearInterval(timer);
+}
 
 /** Installs the packages of the lock when they are missing or older than it. */
 export async function ensurePackages() {
   const lock = inRoot("package-lock.json");
   if (existsSync(installedStamp) && statSync(installedStamp).mtimeMs >= statSync(lock).mtimeMs) return;
-  if (existsSync(installedStamp) && readFileSync(installedStamp, "utf8").length > 0 && sameLock(lock)) return;
-  say("installing the packages named in package-lock.json (about 400, half a minute) …");
+  if (existsSync(installedStamp) && sameLock(lock)) return;
+  const named = Object.entries(JSON.parse(readFileSync(lock, "utf8")).packages);
+  const total = named.filter(([path, { optional }]) => /^node_modules\/(@[^/]+\/)?[^/]+$/.test(path) && !optional).length;
+  say(`installing the ${total} packages named in package-lock.json (about half a minute) …`);
+  const stop = sayProgress(total);
   const code = await run(npm, ["ci", "--no-audit", "--no-fund", "--loglevel=error"]);
+  stop();
   if (code !== 0) throw new Error("the packages could not be installed: see npm's message above");
+  say("the packages are in place.");
   mkdirSync(inRoot(".cache"), { recursive: true });
   writeFileSync(inRoot(".cache", "installed-lock"), digestOf(lock));
 }

@@ -1,5 +1,16 @@
 import type { FileHandle, OpenOutcome, RecentFile, SaveOutcome, SaveRequest } from "../../shared-types/host";
-import { download, inPlainWords, mayUse, pickFile, pickTarget, SETUP_TYPE, type SeenFile, textOf, writeThrough } from "./browser-files";
+import {
+  canOverwriteFiles,
+  download,
+  inPlainWords,
+  mayUse,
+  pickFile,
+  pickTarget,
+  SETUP_TYPE,
+  type SeenFile,
+  textOf,
+  writeThrough,
+} from "./browser-files";
 import type { KeyStore } from "./key-store";
 
 const RECENT_KEPT = 10;
@@ -115,11 +126,12 @@ export function browserSetups(page: Window, recentStore: KeyStore, now: () => nu
     const content = new Blob([text], { type: "application/json" });
     const file = handle === null ? undefined : known.get(handle);
     try {
-      if (handle !== null && file !== undefined) {
+      // A file that came without the browser's handle (dropped, handed over) can only be written where the user says.
+      if (handle !== null && file !== undefined && (file.fileHandle !== null || !canOverwriteFiles(page))) {
         const change = overwrite ? null : await changedOnDisk(handle);
         return change === null ? await saveTo(handle, file, content) : { kind: "changed", ...change };
       }
-      const target = await pickTarget(page, suggestedName, SETUP_TYPE);
+      const target = await pickTarget(page, file?.name ?? suggestedName, SETUP_TYPE);
       if (target === null) return { kind: "cancelled" };
       const fresh: SeenFile = { name: target?.name ?? suggestedName, fileHandle: target ?? null, lastModified: 0 };
       return await saveTo(await handleOf(fresh), fresh, content);

@@ -7,7 +7,7 @@ import { canOverwriteFiles } from "./browser-files";
 import { browserSetups } from "./browser-setups";
 import { indexedStore } from "./indexed-store";
 import { firstOf, type KeyStore } from "./key-store";
-import { serverStore, serverStoreAddress } from "./server-store";
+import { attendServer, serverStore, serverStoreAddress } from "./server-store";
 
 const LOG_KEPT = 200;
 /** How often the open file is looked at for changes by another program, ms. */
@@ -69,15 +69,23 @@ export function browserHost(page: Window, version: string, parts: Partial<Browse
   }
 
   function listen(take: (event: HostEvent) => void): () => void {
+    const arrived = async (file: File, fileHandle: FileSystemFileHandle | null): Promise<void> => {
+      const outcome = await setups.arrived(file, fileHandle);
+      if (outcome.kind === "opened") take({ kind: "file-arrived", file: outcome.file, text: outcome.text });
+      else if (outcome.kind === "failed") take({ kind: "file-refused", message: outcome.message });
+    };
     const stops = [
       listenForCommandKeys(page, surroundings.system === "mac", (command) => take({ kind: "command", command })),
-      listenForDrops(page, async (file, fileHandle) => {
-        const outcome = await setups.arrived(file, fileHandle);
-        if (outcome.kind === "opened") take({ kind: "file-arrived", file: outcome.file, text: outcome.text });
-        else if (outcome.kind === "failed") take({ kind: "file-refused", message: outcome.message });
-      }),
+      listenForDrops(page, (file, fileHandle) => void arrived(file, fileHandle)),
       watchOpenFile(take),
     ];
+    if (address !== null) {
+      const attend = attendServer(page, (arrival) => {
+        if ("refused" in arrival) take({ kind: "file-refused", message: arrival.refused });
+        else void arrived(new File([arrival.text], arrival.name), null);
+      });
+      stops.push(attend);
+    }
     return () => {
       for (const stop of stops) stop();
     };

@@ -1,3 +1,5 @@
+import { z } from "zod";
+import { fileTextSchema } from "../../shared-types/host";
 import type { KeyStore } from "./key-store";
 
 /**
@@ -16,7 +18,7 @@ export function serverStoreAddress(page: Window): string | null {
 
 async function asked(answer: Promise<Response>): Promise<Response> {
   const settled = await answer;
-  if (!settled.ok && settled.status !== 404) throw new Error(`the window server answered ${settled.status}: ${await settled.text()}`);
+  if (!settled.ok) throw new Error(`the window server answered ${settled.status}: ${await settled.text()}`);
   return settled;
 }
 
@@ -26,11 +28,10 @@ export function serverStore(page: Window, address: string): KeyStore {
   return {
     read: async (key) => {
       const answer = await asked(page.fetch(at(key), { cache: "no-store" }));
-      return answer.ok ? answer.json() : undefined;
+      return answer.status === 204 ? undefined : answer.json();
     },
     write: async (key, value) => {
-      const answer = await asked(page.fetch(at(key), { method: "PUT", body: JSON.stringify(value) }));
-      if (!answer.ok) throw new Error("the window server does not know its own store");
+      await asked(page.fetch(at(key), { method: "PUT", body: JSON.stringify(value) }));
     },
     remove: async (key) => {
       await asked(page.fetch(at(key), { method: "DELETE" }));
@@ -40,4 +41,22 @@ export function serverStore(page: Window, address: string): KeyStore {
       return Array.isArray(listed) ? listed.map(String) : [];
     },
   };
+}
+
+const arrivalSchema = z.union([
+  z.strictObject({ name: z.string().min(1).max(512), text: fileTextSchema }),
+  z.strictObject({ refused: z.string().max(2000) }),
+]);
+
+/**
+ * Keeps the window server told that this window lives, and takes the files that a later start of the program hands over.
+ * @returns a way to stop.
+ */
+export function attendServer(page: Window, take: (arrival: z.infer<typeof arrivalSchema>) => void): () => void {
+  const live = new EventSource(new URL("live", page.location.href));
+  live.onmessage = ({ data }: MessageEvent<string>) => {
+    const arrival = arrivalSchema.safeParse(JSON.parse(data));
+    if (arrival.success) take(arrival.data);
+  };
+  return () => live.close();
 }
