@@ -5,6 +5,7 @@ import { applyRemedy } from "../document/commands/bench";
 import type { Document } from "../document/document";
 import type { Planning } from "../document/planning";
 import { FindingsList, SeveritySign } from "./bench/findings-list";
+import { showFinding } from "./bench/show-finding";
 import type { WindowStore } from "./window-state";
 
 /** As many digits as the bound supports, at least three and at most six figures. */
@@ -105,9 +106,7 @@ export function Ledger({
         <section className="findings-sheet" aria-label="Findings">
           <FindingsList
             findings={findings}
-            onShow={(finding) => {
-              if (finding.partIds.length > 0) document.select(finding.partIds);
-            }}
+            onShow={(finding) => showFinding(document, finding, finding.partIds.length > 0 ? undefined : () => window.goTo("bench"))}
             onApply={(finding) => {
               if (finding.edit !== null) document.run(applyRemedy(finding.edit));
             }}

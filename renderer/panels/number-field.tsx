@@ -132,10 +132,11 @@ export interface ChoiceFieldProps<Value extends string> {
   readonly value: Value;
   readonly choices: readonly (readonly [value: Value, text: string])[];
   readonly onSet: (value: Value) => void;
+  readonly setting?: string;
 }
 
 /** A choice from a short list; a value that the list does not know stays and is shown. */
-export function ChoiceField<Value extends string>({ label, value, choices, onSet }: ChoiceFieldProps<Value>) {
+export function ChoiceField<Value extends string>({ label, value, choices, onSet, setting }: ChoiceFieldProps<Value>) {
   const id = useId();
   return (
     <div className="field">
@@ -143,6 +144,7 @@ export function ChoiceField<Value extends string>({ label, value, choices, onSet
       <select
         id={id}
         value={value}
+        data-setting={setting}
         onChange={(event) => {
           const chosen = choices.find(([choice]) => choice === event.target.value);
           if (chosen !== undefined) onSet(chosen[0]);
@@ -163,13 +165,14 @@ export interface SwitchProps {
   readonly label: string;
   readonly on: boolean;
   readonly onSet: (on: boolean) => void;
+  readonly setting?: string;
 }
 
 /** Something that is on or off. */
-export function Switch({ label, on, onSet }: SwitchProps) {
+export function Switch({ label, on, onSet, setting }: SwitchProps) {
   return (
     <label className="switch">
-      <input type="checkbox" checked={on} onChange={(event) => onSet(event.target.checked)} />
+      <input type="checkbox" checked={on} data-setting={setting} onChange={(event) => onSet(event.target.checked)} />
       <span>{label}</span>
     </label>
   );

@@ -1,5 +1,4 @@
 import "./bench.css";
-import { useRef } from "react";
 import { useStore } from "zustand";
 import type { Finding } from "../../../shared-types/plan";
 import { applyRemedy } from "../../document/commands/bench";
@@ -9,6 +8,7 @@ import { ChartCard } from "./chart-card";
 import { remedyWords } from "./dot";
 import { FindingsList } from "./findings-list";
 import { MeterCard, SessionCard, SupplyCard, SurfaceCard, WaterCard } from "./setting-cards";
+import { showFinding } from "./show-finding";
 
 export interface BenchDeskProps {
   readonly document: Document;
@@ -20,16 +20,9 @@ export function BenchDesk({ document, planning }: BenchDeskProps) {
   const setup = useStore(document, (state) => state.setup);
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
-  const desk = useRef<HTMLDivElement>(null);
   const bench = refusal === null ? (plan?.bench ?? null) : null;
   const findings = refusal?.findings ?? plan?.findings ?? [];
 
-  const show = (finding: Finding): void => {
-    if (finding.partIds.length > 0) document.select(finding.partIds);
-    const field = desk.current?.querySelector<HTMLElement>(`[data-setting="${finding.about ?? ""}"]`);
-    field?.focus();
-    field?.scrollIntoView({ block: "nearest" });
-  };
   const apply = (finding: Finding): void => {
     if (finding.edit === null) return;
     const words = remedyWords(finding.edit);
@@ -38,20 +31,18 @@ export function BenchDesk({ document, planning }: BenchDeskProps) {
 
   const cards = { document, setup, bench };
   return (
-    <div className="bench-desk" ref={desk}>
+    <div className="bench-desk">
       {bench === null ? (
-        <section className="bench-card">
+        <section className="card">
           <h2>Depth and voltage</h2>
-          <p className="bench-quiet">
-            {refusal === null ? "The field is being solved." : `There is no field to judge by: ${refusal.message}`}
-          </p>
+          <p className="hint">{refusal === null ? "The field is being solved." : `There is no field to judge by: ${refusal.message}`}</p>
         </section>
       ) : (
         <ChartCard document={document} setup={setup} bench={bench} />
       )}
-      <section className="bench-card" aria-labelledby="bench-findings-title">
+      <section className="card" aria-labelledby="bench-findings-title">
         <h2 id="bench-findings-title">Findings</h2>
-        <FindingsList findings={findings} onShow={show} onApply={apply} />
+        <FindingsList findings={findings} onShow={(finding) => showFinding(document, finding)} onApply={apply} />
       </section>
       <WaterCard {...cards} />
       <SupplyCard {...cards} />

@@ -53,7 +53,7 @@ export function ChartCard({ document, setup, bench }: ChartCardProps) {
   const onFrequency = useGestures(document, "frequency");
   const taken = suggestion !== null && suggestion[0] === setup.water.depthMm && suggestion[1] === setup.supply.volts;
   return (
-    <section className="bench-card" aria-labelledby="bench-chart-title">
+    <section className="card" aria-labelledby="bench-chart-title">
       <h2 id="bench-chart-title">Depth and voltage</h2>
       <RegionChart
         region={region}
@@ -64,7 +64,7 @@ export function ChartCard({ document, setup, bench }: ChartCardProps) {
       />
       <Verdict setup={setup} bench={bench} />
       {suggestion !== null && (
-        <button type="button" className="bench-primary" disabled={taken} onClick={() => document.run(moveDot(...suggestion))}>
+        <button type="button" className="strong" disabled={taken} onClick={() => document.run(moveDot(...suggestion))}>
           {taken ? "This is the suggestion" : `Take the suggestion: ${shownNumber(suggestion[0])} mm, ${shownNumber(suggestion[1])} V`}
         </button>
       )}
@@ -73,7 +73,7 @@ export function ChartCard({ document, setup, bench }: ChartCardProps) {
           <strong>No setting keeps every rule.</strong> {clash.message} Opens with: {clash.opensWith}
         </p>
       )}
-      {!region.exact && <p className="bench-note">The water is tilted or holds slabs: edges away from the present depth are estimates.</p>}
+      {!region.exact && <p className="hint">The water is tilted or holds slabs: edges away from the present depth are estimates.</p>}
       {bench.interface.waveform === "ac" && (
         <>
           <h3>Lost at the electrodes, along frequency</h3>

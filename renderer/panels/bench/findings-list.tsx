@@ -27,7 +27,7 @@ export interface FindingsListProps {
 
 /** What the rules found, gravest first: a click shows what it is about, a button applies the remedy where it is one value. */
 export function FindingsList({ findings, onShow, onApply }: FindingsListProps) {
-  if (findings.length === 0) return <p className="bench-quiet">Nothing found: the setup keeps every rule.</p>;
+  if (findings.length === 0) return <p className="hint">Nothing found: the setup keeps every rule.</p>;
   return (
     <ul className="bench-findings">
       {findings.map((finding) => (

@@ -5,7 +5,8 @@ import type { Setup } from "../../../shared-types/setup";
 import { changeInterface, changeMeter, changeProbing, changeSession, changeSupply, changeWater } from "../../document/commands/bench";
 import type { Document } from "../../document/document";
 import type { Edit } from "../../document/edit";
-import { ChoiceSetting, NumberSetting } from "./number-setting";
+import { ChoiceField, NumberField, Switch } from "../number-field";
+import { OptionalNumber } from "./optional-number";
 import { ReadoutList } from "./readout-list";
 import { circuitReadouts, heatAndGasReadouts, meterReadouts, type Readout, surfaceReadouts, waterReadouts } from "./readouts";
 
@@ -25,9 +26,9 @@ const trying = (document: Document, edit: Edit): readonly Problem[] => {
 function Card({ title, lines, children }: { readonly title: string; readonly lines: readonly Readout[]; readonly children: ReactNode }) {
   const id = `bench-${title.toLowerCase().replace(/\s/g, "-")}`;
   return (
-    <section className="bench-card" aria-labelledby={id}>
+    <section className="card" aria-labelledby={id}>
       <h2 id={id}>{title}</h2>
-      <div className="bench-settings">{children}</div>
+      <div className="grid-2 bench-settings">{children}</div>
       <ReadoutList lines={lines} />
     </section>
   );
@@ -46,39 +47,37 @@ export function WaterCard({ document, setup, bench }: SettingCardProps) {
   const set = (change: Parameters<typeof changeWater>[0]) => trying(document, changeWater(change));
   return (
     <Card title="Water" lines={bench === null ? [] : waterReadouts(setup, bench)}>
-      <NumberSetting
+      <NumberField
         label="Depth at the centre"
         unit="mm"
         value={water.depthMm}
         step={0.5}
         setting="water.depthMm"
-        onSet={(depthMm = 0) => set({ depthMm })}
+        onSet={(depthMm) => set({ depthMm })}
       />
-      <NumberSetting
+      <NumberField
         label="Conductivity at 25 °C"
         unit="µS/cm"
         value={water.conductivityUsPerCm}
         step={10}
         setting="water.conductivityUsPerCm"
-        onSet={(conductivityUsPerCm = 0) => set({ conductivityUsPerCm })}
+        onSet={(conductivityUsPerCm) => set({ conductivityUsPerCm })}
       />
-      <NumberSetting
+      <NumberField
         label="Temperature"
         unit="°C"
         value={water.temperatureC}
         step={0.5}
         setting="water.temperatureC"
-        onSet={(temperatureC = 0) => set({ temperatureC })}
+        onSet={(temperatureC) => set({ temperatureC })}
       />
-      <ChoiceSetting label="Salt" value={water.salt} setting="water.salt" choices={SALTS} onSet={(salt) => set({ salt })} />
-      <NumberSetting
+      <ChoiceField label="Salt" value={water.salt} setting="water.salt" choices={SALTS} onSet={(salt) => set({ salt })} />
+      <OptionalNumber
         label="Bring it to"
         unit="µS/cm"
         value={water.targetConductivityUsPerCm}
-        step={50}
         setting="water.targetConductivityUsPerCm"
-        placeholder="as it is"
-        optional
+        absent="as it is"
         onSet={(targetConductivityUsPerCm) => set({ targetConductivityUsPerCm })}
       />
     </Card>
@@ -100,50 +99,41 @@ export function SupplyCard({ document, setup, bench }: SettingCardProps) {
   const set = (change: Parameters<typeof changeSupply>[0]) => trying(document, changeSupply(change));
   return (
     <Card title="Supply and circuit" lines={bench === null ? [] : circuitReadouts(setup, bench)}>
-      <ChoiceSetting
+      <ChoiceField
         label="Current"
         value={supply.waveform}
         setting="supply.waveform"
         choices={WAVEFORMS}
-        onSet={(word) => set({ waveform: word === "dc" ? "dc" : "ac" })}
+        onSet={(waveform) => set({ waveform })}
       />
-      <NumberSetting
-        label="Voltage"
-        unit="V"
-        value={supply.volts}
-        step={0.1}
-        setting="supply.volts"
-        onSet={(volts = 0) => set({ volts })}
-      />
+      <NumberField label="Voltage" unit="V" value={supply.volts} step={0.1} setting="supply.volts" onSet={(volts) => set({ volts })} />
       {supply.waveform === "ac" && (
-        <NumberSetting
+        <NumberField
           label="Frequency"
           unit="Hz"
           value={supply.frequencyHz}
           step={1}
           setting="supply.frequencyHz"
-          onSet={(frequencyHz = 0) => set({ frequencyHz })}
+          onSet={(frequencyHz) => set({ frequencyHz })}
         />
       )}
-      <NumberSetting
+      <OptionalNumber
         label="With nothing connected"
         unit="V"
         value={supply.openCircuitVolts}
-        step={0.1}
         setting="supply.openCircuitVolts"
-        placeholder="not measured"
-        optional
+        absent="not measured"
         onSet={(openCircuitVolts) => set({ openCircuitVolts })}
       />
-      <NumberSetting
+      <NumberField
         label="Current limit"
         unit="A"
         value={supply.currentLimitA}
         step={0.1}
         setting="supply.currentLimitA"
-        onSet={(currentLimitA = 0) => set({ currentLimitA })}
+        onSet={(currentLimitA) => set({ currentLimitA })}
       />
-      <ChoiceSetting label="Source" value={supply.source} setting="supply.source" choices={SOURCES} onSet={(source) => set({ source })} />
+      <ChoiceField label="Source" value={supply.source} setting="supply.source" choices={SOURCES} onSet={(source) => set({ source })} />
     </Card>
   );
 }
@@ -154,37 +144,30 @@ export function SurfaceCard({ document, setup, bench }: SettingCardProps) {
   return (
     <Card title="Electrode surfaces" lines={bench === null ? [] : surfaceReadouts(bench)}>
       {setup.supply.waveform === "ac" ? (
-        <NumberSetting
+        <OptionalNumber
           label="Double layer"
           unit="µF/cm²"
           value={doubleLayerUfPerCm2}
-          step={1}
           setting="interface.doubleLayerUfPerCm2"
-          placeholder="by the metal"
-          optional
+          absent="by the metal"
           onSet={(value) => set({ doubleLayerUfPerCm2: value })}
         />
       ) : (
-        <NumberSetting
+        <OptionalNumber
           label="Measured drop, both"
           unit="V"
           value={electrodeDropVolts}
-          step={0.05}
           setting="interface.electrodeDropVolts"
-          placeholder="by the metal"
-          optional
+          absent="by the metal"
           onSet={(value) => set({ electrodeDropVolts: value })}
         />
       )}
-      <label className="bench-check">
-        <input
-          type="checkbox"
-          checked={inReadings}
-          data-setting="interface.inReadings"
-          onChange={(event) => set({ inReadings: event.target.checked })}
-        />
-        Expected readings allow for this loss
-      </label>
+      <Switch
+        label="Expected readings allow for this loss"
+        on={inReadings}
+        setting="interface.inReadings"
+        onSet={(on) => set({ inReadings: on })}
+      />
     </Card>
   );
 }
@@ -194,69 +177,55 @@ export function MeterCard({ document, setup, bench }: SettingCardProps) {
   const set = (change: Parameters<typeof changeMeter>[0]) => trying(document, changeMeter(change));
   return (
     <Card title="Meter and probe" lines={bench === null ? [] : meterReadouts(bench)}>
-      <NumberSetting
+      <NumberField
         label="Input"
         unit="MΩ"
         value={meter.inputMegohm}
         step={1}
         setting="meter.inputMegohm"
-        onSet={(inputMegohm = 0) => set({ inputMegohm })}
+        onSet={(inputMegohm) => set({ inputMegohm })}
       />
-      <NumberSetting
+      <NumberField
         label="Input"
         unit="pF"
         value={meter.inputPicofarad}
         step={10}
         setting="meter.inputPicofarad"
-        onSet={(inputPicofarad = 0) => set({ inputPicofarad })}
+        onSet={(inputPicofarad) => set({ inputPicofarad })}
       />
-      <NumberSetting
-        label="Counts"
-        unit=""
-        value={meter.counts}
-        step={1000}
-        setting="meter.counts"
-        onSet={(counts = 0) => set({ counts })}
-      />
-      <NumberSetting
+      <NumberField label="Counts" unit="" value={meter.counts} step={1000} setting="meter.counts" onSet={(counts) => set({ counts })} />
+      <NumberField
         label="Accuracy"
         unit="%"
         value={meter.accuracyPercent}
         step={0.1}
         setting="meter.accuracyPercent"
-        onSet={(accuracyPercent = 0) => set({ accuracyPercent })}
+        onSet={(accuracyPercent) => set({ accuracyPercent })}
       />
-      <NumberSetting
+      <NumberField
         label="and"
         unit="digits"
         value={meter.accuracyDigits}
         step={1}
         setting="meter.accuracyDigits"
-        onSet={(accuracyDigits = 0) => set({ accuracyDigits })}
+        onSet={(accuracyDigits) => set({ accuracyDigits })}
       />
-      <NumberSetting
-        label="AC from"
-        unit="Hz"
-        value={meter.acLowHz}
-        step={5}
-        setting="meter.acLowHz"
-        onSet={(acLowHz = 0) => set({ acLowHz })}
-      />
-      <NumberSetting
+      <NumberField label="AC from" unit="Hz" value={meter.acLowHz} step={5} setting="meter.acLowHz" onSet={(acLowHz) => set({ acLowHz })} />
+      <NumberField
         label="AC to"
         unit="Hz"
         value={meter.acHighHz}
         step={50}
         setting="meter.acHighHz"
-        onSet={(acHighHz = 0) => set({ acHighHz })}
+        onSet={(acHighHz) => set({ acHighHz })}
       />
-      <NumberSetting
+      <NumberField
         label="Probe's tip"
         unit="mm"
         value={probing.probeTipMm}
         step={0.1}
         setting="probing.probeTipMm"
-        onSet={(probeTipMm = 0) => trying(document, changeProbing({ probeTipMm }))}
+        onSet={(probeTipMm) => trying(document, changeProbing({ probeTipMm }))}
       />
     </Card>
   );
@@ -267,32 +236,32 @@ export function SessionCard({ document, setup, bench }: SettingCardProps) {
   const set = (change: Parameters<typeof changeSession>[0]) => trying(document, changeSession(change));
   return (
     <Card title="Heat and gas" lines={bench === null ? [] : heatAndGasReadouts(setup, bench)}>
-      <NumberSetting
+      <NumberField
         label="Session"
         unit="min"
         value={session.minutes}
         step={5}
         setting="session.minutes"
-        onSet={(minutes = 0) => set({ minutes })}
+        onSet={(minutes) => set({ minutes })}
       />
-      <NumberSetting label="Trays" unit="" value={session.trays} step={1} setting="session.trays" onSet={(trays = 0) => set({ trays })} />
+      <NumberField label="Trays" unit="" value={session.trays} step={1} setting="session.trays" onSet={(trays) => set({ trays })} />
       {supply.waveform === "dc" && (
         <>
-          <NumberSetting
+          <NumberField
             label="Air over one tray"
             unit="L"
             value={session.hoodLitres}
             step={10}
             setting="session.hoodLitres"
-            onSet={(hoodLitres = 0) => set({ hoodLitres })}
+            onSet={(hoodLitres) => set({ hoodLitres })}
           />
-          <NumberSetting
+          <NumberField
             label="Room"
             unit="m³"
             value={session.roomCubicMetres}
             step={10}
             setting="session.roomCubicMetres"
-            onSet={(roomCubicMetres = 0) => set({ roomCubicMetres })}
+            onSet={(roomCubicMetres) => set({ roomCubicMetres })}
           />
         </>
       )}
