@@ -1,9 +1,12 @@
 import type { Setup } from "../../shared-types/setup";
-import { moveThings, placeThing, resizeThing } from "../document/commands/placing";
+import { boxOfAll, moveThings, placeThing, resizeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
-import { type BoxMm, namesOf, type Thing, thingById, tidyMm } from "../document/edit";
+import { type BoxMm, isPart, namesOf, type Thing, thingById, thingsById, thingsOf, tidyMm } from "../document/edit";
+import { traySizeMm } from "../engine/geometry/tray-outline";
+import { type Gap, gapsAround } from "./gaps";
+import { type Guide, snappedMove } from "./guides";
 import { draggedHandle, type Handle, handlesOf, type Placed } from "./handles";
-import { handleAt, thingAt, thingsWithin } from "./hit";
+import { boxOfThing, handleAt, thingAt, thingsWithin } from "./hit";
 import { sizeText, trimmed } from "./number-text";
 import { type Place, toTray, type View } from "./view";
 
@@ -40,6 +43,10 @@ export interface HandLook {
   /** The frame being pulled up, between two places of the stage (px). */
   readonly frame: readonly [Place, Place] | null;
   readonly activeHandle: Handle["kind"] | null;
+  /** Lines that a moved part has snapped to. */
+  readonly guides: readonly Guide[];
+  /** Clear gaps round a moved part. */
+  readonly gaps: readonly Gap[];
   /** The number that changes under the hand, such as "45°". */
   readonly live: string | null;
 }
@@ -53,7 +60,7 @@ export interface Hand {
   readonly leave: () => void;
 }
 
-export const IDLE: HandLook = { hovered: null, cursor: "default", frame: null, activeHandle: null, live: null };
+export const IDLE: HandLook = { hovered: null, cursor: "default", frame: null, activeHandle: null, guides: [], gaps: [], live: null };
 
 /** A press that strays less is a click, px. */
 const CLICK_PX = 3;
@@ -62,6 +69,9 @@ const REACH_PX = 6;
 const GRID_MM = 1;
 /** With snapping off, a hand still places no finer than it can see. */
 const FREE_MM = 0.1;
+/** An edge or a middle draws a part to itself from so far away: never so far that the next millimetre cannot be had. */
+const LINE_REACH_PX = 4;
+const LINE_REACH_MM = 0.9;
 const GRID_DEG = 5;
 const FREE_DEG = 0.1;
 
@@ -72,6 +82,8 @@ type Doing =
   | { readonly kind: "handling"; readonly handle: Handle; readonly thing: Thing; readonly off: Place; readonly before: Setup }
   | { readonly kind: "framing"; readonly from: Place; readonly kept: readonly string[] }
   | { readonly kind: "panning"; readonly last: Place };
+
+const trayBox = ({ tray }: Setup): BoxMm => [0, 0, ...traySizeMm(tray)];
 
 const RESIZE_CURSORS = ["ew-resize", "nesw-resize", "ns-resize", "nwse-resize"] as const;
 
@@ -147,20 +159,28 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
   }
 
   function moveOn(at: Place, { from, lead, ids, before }: Extract<Doing, { kind: "moving" }>, modifiers: Modifiers): void {
-    const { actions } = world();
+    const { actions, view } = world();
     const [fromX, fromY] = onTray(from);
     const [x, y] = onTray(at);
     const step = snaps(modifiers) ? GRID_MM : FREE_MM;
     const alongX = Math.abs(x - fromX) >= Math.abs(y - fromY);
-    const by = (start: number, shift: number, held: boolean): number =>
-      modifiers.shift && held ? 0 : tidyMm(Math.round((start + shift) / step) * step - start);
-    const [byX, byY] = [by(lead.xMm, x - fromX, !alongX), by(lead.yMm, y - fromY, alongX)];
-    actions.dragTo(moveThings(before, ids, byX, byY));
+    const shift: Place = [modifiers.shift && !alongX ? 0 : x - fromX, modifiers.shift && alongX ? 0 : y - fromY];
+    const start = boxOfAll(thingsById(before, ids), boxOfThing) ?? boxOfThing(lead);
+    const others = thingsOf(before).filter(({ id }) => !ids.includes(id));
+    const reach = snaps(modifiers) ? Math.min(LINE_REACH_MM, LINE_REACH_PX / view.scale) : -1;
+    const snapped = snappedMove(start, [lead.xMm, lead.yMm], shift, others.map(boxOfThing), trayBox(before), step, reach);
+    const [byX, byY] = [
+      shift[0] === 0 && modifiers.shift ? 0 : tidyMm(snapped.byXMm),
+      shift[1] === 0 && modifiers.shift ? 0 : tidyMm(snapped.byYMm),
+    ];
+    const moved = actions.dragTo(moveThings(before, ids, byX, byY));
+    const alone = ids.length === 1 && moved.ok ? thingById(moved.value, lead.id) : undefined;
+    const gaps = alone === undefined || !isPart(alone) ? [] : gapsAround(alone, before);
     const live =
       ids.length === 1
         ? `x ${trimmed(lead.xMm + byX, 2)}, y ${trimmed(lead.yMm + byY, 2)} mm`
         : `by ${trimmed(byX, 2)}, ${trimmed(byY, 2)} mm`;
-    show({ ...IDLE, cursor: "move", live });
+    show({ ...IDLE, cursor: "move", live, guides: reach < 0 ? [] : snapped.guides, gaps });
   }
 
   function handleOn(at: Place, { handle, thing, off, before }: Extract<Doing, { kind: "handling" }>, modifiers: Modifiers): void {

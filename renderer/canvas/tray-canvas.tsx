@@ -7,6 +7,7 @@ import { addPart } from "../document/commands/parts";
 import { readShelfPart, SHELF_PART_TYPE } from "../document/shelf-part";
 import { type CanvasActions, createHand, type HandWorld, IDLE, type Modifiers, shownHandles } from "./hand";
 import { meaningOf } from "./keys";
+import { paintGaps, paintGuides } from "./paint/guides";
 import { paintFrame, paintHandles } from "./paint/hand";
 import type { Pen } from "./paint/pen";
 import { PaintedLayer } from "./painted-layer";
@@ -177,9 +178,11 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const handPaint = useCallback(
     (pen: Pen) => {
       paintHandles(pen, handles, view, theme, look.activeHandle);
+      paintGuides(pen, look.guides, view, theme);
+      paintGaps(pen, look.gaps, view, theme);
       if (look.frame !== null) paintFrame(pen, look.frame[0], look.frame[1], theme);
     },
-    [handles, view, theme, look.activeHandle, look.frame],
+    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.gaps],
   );
   const attended = useMemo(() => new Set([...selection, ...(look.hovered === null ? [] : [look.hovered])]), [selection, look.hovered]);
   const count = setup.parts.length;
