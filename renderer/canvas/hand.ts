@@ -13,7 +13,7 @@ import { type Place, toTray, type View } from "./view";
 /** What the pointer does on the tray: select, frame, move, turn, resize, pan. No DOM: places in px of the stage come in, edits go out. */
 
 /** The part of the document that a hand and a key use. */
-export type CanvasActions = Pick<Document, "run" | "startDrag" | "dragTo" | "finishDrag" | "cancelDrag" | "settle" | "select">;
+export type CanvasActions = Pick<Document, "run" | "startDrag" | "dragTo" | "finishDrag" | "cancelDrag" | "settle" | "select" | "refuse">;
 
 /** What the hand looks at; asked afresh at every event. */
 export interface HandWorld {

@@ -1,9 +1,20 @@
-import { type DragEvent, type KeyboardEvent, type PointerEvent, useCallback, useEffect, useMemo, useRef, useState } from "react";
+import {
+  type ClipboardEvent,
+  type DragEvent,
+  type KeyboardEvent,
+  type PointerEvent,
+  useCallback,
+  useEffect,
+  useMemo,
+  useRef,
+  useState,
+} from "react";
 import { Stage } from "react-konva";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
-import { addPart } from "../document/commands/parts";
+import { pasteThings, thingsText } from "../document/clipboard";
+import { addPart, removeThings } from "../document/commands/parts";
 import { readShelfPart, SHELF_PART_TYPE } from "../document/shelf-part";
 import { type CanvasActions, createHand, type HandWorld, IDLE, type Modifiers, shownHandles } from "./hand";
 import { meaningOf } from "./keys";
@@ -148,6 +159,21 @@ export function TrayCanvas(props: TrayCanvasProps) {
     actions.settle();
   }
 
+  function onCopy(event: ClipboardEvent, cut: boolean): void {
+    const text = thingsText(setup, selection);
+    if (text === null) return;
+    event.clipboardData.setData("text/plain", text);
+    event.preventDefault();
+    if (cut && editable) actions.run(removeThings(setup, selection));
+  }
+  function onPaste(event: ClipboardEvent): void {
+    const pasted = editable ? pasteThings(event.clipboardData.getData("text/plain")) : null;
+    if (pasted === null) return;
+    event.preventDefault();
+    if (pasted.ok) actions.run(pasted.value);
+    else actions.refuse(pasted.problems);
+  }
+
   function onDragOver(event: DragEvent): void {
     if (!editable || !event.dataTransfer.types.includes(SHELF_PART_TYPE)) return;
     event.preventDefault();
@@ -206,6 +232,9 @@ export function TrayCanvas(props: TrayCanvasProps) {
         onKeyDown={onKeyDown}
         onKeyUp={onKeyUp}
         onBlur={() => actions.settle()}
+        onCopy={(event) => onCopy(event, false)}
+        onCut={(event) => onCopy(event, true)}
+        onPaste={onPaste}
         onDragOver={onDragOver}
         onDragLeave={() => setDropping(false)}
         onDrop={onDrop}
@@ -222,7 +251,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
       {count === 0 && <p className="tray-empty">Drag a bar or a disc from the shelf onto the tray, or press Enter on one there.</p>}
       <PartNotes findings={findings} setup={setup} view={view} attended={attended} />
       {look.live !== null && pointer.current !== null && (
-        <output className="live-number" style={{ left: pointer.current[0] + 18, top: pointer.current[1] - 30 }} aria-hidden="true">
+        <output className="live-number" style={{ left: pointer.current[0] + 16, top: pointer.current[1] + 22 }} aria-hidden="true">
           {look.live}
         </output>
       )}

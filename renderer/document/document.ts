@@ -60,6 +60,8 @@ export interface Document extends Pick<StoreApi<DocumentState>, "getState" | "su
   readonly finishDrag: () => void;
   /** Ends the drag and puts everything back. */
   readonly cancelDrag: () => void;
+  /** Notes why something could not become an edit at all (a damaged clipping). */
+  readonly refuse: (problems: readonly Problem[]) => void;
   /** Ends a run of joined edits (the arrow key was released). */
   readonly settle: () => void;
   readonly undo: () => void;
@@ -214,6 +216,7 @@ export function createDocument(setup: Setup, file: FileHandle | null = null): Do
     dragTo,
     finishDrag,
     cancelDrag,
+    refuse: (problems) => setState({ refused: problems }),
     settle,
     undo: () => travel("past", "future"),
     redo: () => travel("future", "past"),
