@@ -1,10 +1,14 @@
 import { type KeyboardEvent, type PointerEvent, useId, useRef } from "react";
 import type { AlternatingInterface, Estimate, SharePoint } from "../../../shared-types/bench";
 import type { Gesture } from "./region-chart";
+import { useWidth } from "./use-width";
 
-const WIDTH = 400;
+const FIRST_WIDTH = 400;
 const HEIGHT = 190;
-const FRAME = { left: 46, top: 10, width: 344, height: 144 };
+const MARGIN = { left: 46, right: 14 };
+/** Upper edge and height of the drawn field, px. */
+const TOP = 10;
+const FIELD_HEIGHT = 144;
 const LOWEST_HZ = 1;
 const HIGHEST_HZ = 1e5;
 const LOWEST_SHARE = 1e-4;
@@ -13,15 +17,13 @@ const DECADES_SHARE = [1e-4, 1e-3, 1e-2, 1e-1, 1];
 /** The share above which a finding speaks. */
 const NAMED_SHARE = 0.02;
 
-const xOfHz = (hz: number): number => FRAME.left + (Math.log(hz / LOWEST_HZ) / Math.log(HIGHEST_HZ / LOWEST_HZ)) * FRAME.width;
-const hzOfX = (x: number): number => LOWEST_HZ * (HIGHEST_HZ / LOWEST_HZ) ** ((x - FRAME.left) / FRAME.width);
+const shareOfHz = (hz: number): number => Math.log(hz / LOWEST_HZ) / Math.log(HIGHEST_HZ / LOWEST_HZ);
+const hzOfShare = (share: number): number => LOWEST_HZ * (HIGHEST_HZ / LOWEST_HZ) ** share;
 const yOfShare = (share: number): number =>
-  FRAME.top + (Math.log(Math.min(1, Math.max(LOWEST_SHARE, share))) / Math.log(LOWEST_SHARE)) * FRAME.height;
+  TOP + (Math.log(Math.min(1, Math.max(LOWEST_SHARE, share))) / Math.log(LOWEST_SHARE)) * FIELD_HEIGHT;
 
 /** Two digits are enough for a frequency that a hand sets. */
 const rounded = (hz: number): number => Number(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, hz)).toPrecision(2));
-const curve = (points: readonly SharePoint[], end: keyof Estimate): string[] =>
-  points.map((point) => `${xOfHz(point.frequencyHz).toFixed(1)} ${yOfShare(point.share[end]).toFixed(1)}`);
 const hzText = (hz: number): string => (hz >= 1000 ? `${hz / 1000} kHz` : `${hz} Hz`);
 const percentText = (share: number): string => `${Number((share * 100).toPrecision(2))} %`;
 
@@ -36,11 +38,18 @@ export interface FrequencyChartProps {
 export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: FrequencyChartProps) {
   const id = useId();
   const svg = useRef<SVGSVGElement>(null);
+  const figure = useRef<HTMLElement>(null);
+  const chartWidth = useWidth(figure, FIRST_WIDTH);
+  const width = chartWidth - MARGIN.left - MARGIN.right;
+  const xOfHz = (hz: number): number => MARGIN.left + shareOfHz(hz) * width;
+  const hzOfX = (x: number): number => hzOfShare((x - MARGIN.left) / width);
+  const curve = (points: readonly SharePoint[], end: keyof Estimate): string[] =>
+    points.map((point) => `${xOfHz(point.frequencyHz).toFixed(1)} ${yOfShare(point.share[end]).toFixed(1)}`);
   const dragging = useRef(false);
   const { alongFrequency, frequencyHz, shareLost } = surface;
   const low = xOfHz(Math.max(LOWEST_HZ, meterLowHz));
   const high = xOfHz(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, meterHighHz)));
-  const bottom = FRAME.top + FRAME.height;
+  const bottom = TOP + FIELD_HEIGHT;
 
   const place = (event: PointerEvent<SVGElement>): number | null => {
     const matrix = svg.current?.getScreenCTM();
@@ -68,74 +77,76 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
   const x = xOfHz(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, frequencyHz)));
   const text = `${hzText(frequencyHz)}, about ${percentText(shareLost.typical)} lost`;
   return (
-    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="presentation">
-      <defs>
-        <clipPath id={`${id}-clip`}>
-          <rect x={FRAME.left} y={FRAME.top} width={FRAME.width} height={FRAME.height} />
-        </clipPath>
-      </defs>
-      <rect className="bench-chart-ground" x={FRAME.left} y={FRAME.top} width={FRAME.width} height={FRAME.height} />
-      <rect className="bench-chart-meter" x={low} y={FRAME.top} width={Math.max(0, high - low)} height={FRAME.height} />
-      <text className="bench-chart-name" x={(low + high) / 2} y={FRAME.top + 13} textAnchor="middle">
-        meter
-      </text>
-      <g clipPath={`url(#${id}-clip)`}>
-        <path className="bench-chart-spread" d={band} />
-        <path className="bench-chart-curve" d={`M${curve(alongFrequency, "typical").join("L")}`} />
-        <line
-          className="bench-chart-edge"
-          x1={FRAME.left}
-          x2={FRAME.left + FRAME.width}
-          y1={yOfShare(NAMED_SHARE)}
-          y2={yOfShare(NAMED_SHARE)}
-        />
-      </g>
-      <text className="bench-chart-name" x={FRAME.left + FRAME.width - 6} y={yOfShare(NAMED_SHARE) - 4} textAnchor="end">
-        2 %
-      </text>
-      <g className="bench-chart-axes">
-        <path d={`M${FRAME.left} ${FRAME.top}V${bottom}H${FRAME.left + FRAME.width}`} />
-        {DECADES_HZ.map((hz) => (
-          <g key={hz}>
-            <line x1={xOfHz(hz)} y1={bottom} x2={xOfHz(hz)} y2={bottom + 4} />
-            <text x={Math.min(xOfHz(hz), WIDTH - 18)} y={bottom + 15} textAnchor="middle">
-              {hz >= 1000 ? `${hz / 1000}k` : hz}
-            </text>
-          </g>
-        ))}
-        {DECADES_SHARE.map((share) => (
-          <g key={share}>
-            <line x1={FRAME.left - 4} y1={yOfShare(share)} x2={FRAME.left} y2={yOfShare(share)} />
-            <text x={FRAME.left - 7} y={yOfShare(share) + 4} textAnchor="end">
-              {percentText(share)}
-            </text>
-          </g>
-        ))}
-        <text className="bench-chart-axis" x={FRAME.left + FRAME.width} y={bottom + 30} textAnchor="end">
-          frequency, Hz
+    <figure ref={figure} aria-label="Share lost at the electrodes' surfaces along frequency">
+      <svg ref={svg} className="bench-chart" viewBox={`0 0 ${chartWidth} ${HEIGHT}`} role="presentation">
+        <defs>
+          <clipPath id={`${id}-clip`}>
+            <rect x={MARGIN.left} y={TOP} width={width} height={FIELD_HEIGHT} />
+          </clipPath>
+        </defs>
+        <rect className="bench-chart-ground" x={MARGIN.left} y={TOP} width={width} height={FIELD_HEIGHT} />
+        <rect className="bench-chart-meter" x={low} y={TOP} width={Math.max(0, high - low)} height={FIELD_HEIGHT} />
+        <text className="bench-chart-name" x={(low + high) / 2} y={TOP + 13} textAnchor="middle">
+          meter
         </text>
-      </g>
-      <g
-        className={shareLost.typical > NAMED_SHARE ? "bench-chart-dot bench-chart-dot-forbidden" : "bench-chart-dot"}
-        role="slider"
-        tabIndex={0}
-        aria-label="Frequency of the supply"
-        aria-valuemin={LOWEST_HZ}
-        aria-valuemax={HIGHEST_HZ}
-        aria-valuenow={frequencyHz}
-        aria-valuetext={text}
-        transform={`translate(${x} ${yOfShare(shareLost.typical)})`}
-        onPointerDown={onPointerDown}
-        onPointerMove={(event) => onPointer(event, "move")}
-        onPointerUp={(event) => onPointer(event, "end")}
-        onPointerCancel={(event) => onPointer(event, "end")}
-        onKeyDown={onKeyDown}
-      >
-        <title>{text}</title>
-        <circle className="bench-chart-grip" r="16" />
-        <circle className="bench-chart-ring" r="7.5" />
-        <circle className="bench-chart-core" r="3" />
-      </g>
-    </svg>
+        <g clipPath={`url(#${id}-clip)`}>
+          <path className="bench-chart-spread" d={band} />
+          <path className="bench-chart-curve" d={`M${curve(alongFrequency, "typical").join("L")}`} />
+          <line
+            className="bench-chart-edge"
+            x1={MARGIN.left}
+            x2={MARGIN.left + width}
+            y1={yOfShare(NAMED_SHARE)}
+            y2={yOfShare(NAMED_SHARE)}
+          />
+        </g>
+        <text className="bench-chart-name" x={MARGIN.left + width - 6} y={yOfShare(NAMED_SHARE) - 4} textAnchor="end">
+          2 %
+        </text>
+        <g className="bench-chart-axes">
+          <path d={`M${MARGIN.left} ${TOP}V${bottom}H${MARGIN.left + width}`} />
+          {DECADES_HZ.map((hz) => (
+            <g key={hz}>
+              <line x1={xOfHz(hz)} y1={bottom} x2={xOfHz(hz)} y2={bottom + 4} />
+              <text x={xOfHz(hz)} y={bottom + 15} textAnchor="middle">
+                {hz >= 1000 ? `${hz / 1000}k` : hz}
+              </text>
+            </g>
+          ))}
+          {DECADES_SHARE.map((share) => (
+            <g key={share}>
+              <line x1={MARGIN.left - 4} y1={yOfShare(share)} x2={MARGIN.left} y2={yOfShare(share)} />
+              <text x={MARGIN.left - 7} y={yOfShare(share) + 4} textAnchor="end">
+                {percentText(share)}
+              </text>
+            </g>
+          ))}
+          <text className="bench-chart-axis" x={MARGIN.left + width} y={bottom + 30} textAnchor="end">
+            frequency, Hz
+          </text>
+        </g>
+        <g
+          className={shareLost.typical > NAMED_SHARE ? "bench-chart-dot bench-chart-dot-forbidden" : "bench-chart-dot"}
+          role="slider"
+          tabIndex={0}
+          aria-label="Frequency of the supply"
+          aria-valuemin={LOWEST_HZ}
+          aria-valuemax={HIGHEST_HZ}
+          aria-valuenow={frequencyHz}
+          aria-valuetext={text}
+          transform={`translate(${x} ${yOfShare(shareLost.typical)})`}
+          onPointerDown={onPointerDown}
+          onPointerMove={(event) => onPointer(event, "move")}
+          onPointerUp={(event) => onPointer(event, "end")}
+          onPointerCancel={(event) => onPointer(event, "end")}
+          onKeyDown={onKeyDown}
+        >
+          <title>{text}</title>
+          <circle className="bench-chart-grip" r="16" />
+          <circle className="bench-chart-ring" r="7.5" />
+          <circle className="bench-chart-core" r="3" />
+        </g>
+      </svg>
+    </figure>
   );
 }

@@ -12,9 +12,10 @@ import {
   xOfDepth,
   yOfVolts,
 } from "./region-geometry";
+import { useWidth } from "./use-width";
 
-const WIDTH = 400;
-const HEIGHT = 300;
+const FIRST_WIDTH = 400;
+const heightFor = (width: number): number => Math.round(Math.min(380, Math.max(260, 0.72 * width)));
 const MARGIN = { left: 42, right: 10, top: 10, bottom: 36 };
 const LEAST_DEPTH_MM = 0.5;
 const LEAST_VOLTS = 0.1;
@@ -45,13 +46,16 @@ const snapped = (value: number, step: number, least: number): number => Number(M
 export function RegionChart({ region, depthMm, volts, waveform, onChoose }: RegionChartProps) {
   const id = useId();
   const svg = useRef<SVGSVGElement>(null);
+  const figure = useRef<HTMLElement>(null);
+  const chartWidth = useWidth(figure, FIRST_WIDTH);
+  const chartHeight = heightFor(chartWidth);
   const dragging = useRef<ChartFrame | null>(null);
   // While a hand drags the dot the axes stand still under it.
   const frame: ChartFrame = dragging.current ?? {
     left: MARGIN.left,
     top: MARGIN.top,
-    width: WIDTH - MARGIN.left - MARGIN.right,
-    height: HEIGHT - MARGIN.top - MARGIN.bottom,
+    width: chartWidth - MARGIN.left - MARGIN.right,
+    height: chartHeight - MARGIN.top - MARGIN.bottom,
     ...chartEnds(region, [depthMm, volts]),
   };
   const allowed = allowsSetting(region, depthMm, volts);
@@ -105,79 +109,81 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
 
   const { left, top, width, height } = frame;
   return (
-    <svg ref={svg} className="bench-chart" viewBox={`0 0 ${WIDTH} ${HEIGHT}`} role="presentation">
-      <defs>
-        <pattern id={`${id}-hatch`} width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
-          <line className="bench-chart-hatch" x1="0" y1="0" x2="0" y2="7" />
-        </pattern>
-        <clipPath id={`${id}-clip`}>
-          <rect x={left} y={top} width={width} height={height} />
-        </clipPath>
-      </defs>
-      <rect className="bench-chart-ground" x={left} y={top} width={width} height={height} />
-      <rect x={left} y={top} width={width} height={height} fill={`url(#${id}-hatch)`} />
-      <g clipPath={`url(#${id}-clip)`}>
-        <path className="bench-chart-allowed" d={regionPath(frame, region)} />
-        {region.boundaries.map((boundary) => (
-          <polyline
-            key={boundary.rule}
-            className={`bench-chart-edge bench-chart-edge-${boundary.forbids}`}
-            points={edgePoints(frame, boundary)}
-          />
+    <figure ref={figure} aria-label="Depth of water against supply voltage">
+      <svg ref={svg} className="bench-chart" viewBox={`0 0 ${chartWidth} ${chartHeight}`} role="presentation">
+        <defs>
+          <pattern id={`${id}-hatch`} width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+            <line className="bench-chart-hatch" x1="0" y1="0" x2="0" y2="7" />
+          </pattern>
+          <clipPath id={`${id}-clip`}>
+            <rect x={left} y={top} width={width} height={height} />
+          </clipPath>
+        </defs>
+        <rect className="bench-chart-ground" x={left} y={top} width={width} height={height} />
+        <rect x={left} y={top} width={width} height={height} fill={`url(#${id}-hatch)`} />
+        <g clipPath={`url(#${id}-clip)`}>
+          <path className="bench-chart-allowed" d={regionPath(frame, region)} />
+          {region.boundaries.map((boundary) => (
+            <polyline
+              key={boundary.rule}
+              className={`bench-chart-edge bench-chart-edge-${boundary.forbids}`}
+              points={edgePoints(frame, boundary)}
+            />
+          ))}
+        </g>
+        <CoarseDigits frame={frame} region={region} />
+        <Axes frame={frame} waveform={waveform} />
+        <g clipPath={`url(#${id}-clip)`}>
+          <line className="bench-chart-cross" x1={x} y1={y} x2={x} y2={top + height} />
+          <line className="bench-chart-cross" x1={left} y1={y} x2={x} y2={y} />
+        </g>
+        {edgeLabels(frame, region).map((label) => (
+          <text
+            key={label.rule}
+            className="bench-chart-name"
+            x={label.x}
+            y={label.y}
+            textAnchor="end"
+            transform={label.upright ? `rotate(-90 ${label.x} ${label.y})` : undefined}
+          >
+            {label.text}
+          </text>
         ))}
-      </g>
-      <CoarseDigits frame={frame} region={region} />
-      <Axes frame={frame} waveform={waveform} />
-      <g clipPath={`url(#${id}-clip)`}>
-        <line className="bench-chart-cross" x1={x} y1={y} x2={x} y2={top + height} />
-        <line className="bench-chart-cross" x1={left} y1={y} x2={x} y2={y} />
-      </g>
-      {edgeLabels(frame, region).map((label) => (
-        <text
-          key={label.rule}
-          className="bench-chart-name"
-          x={label.x}
-          y={label.y}
-          textAnchor="end"
-          transform={label.upright ? `rotate(-90 ${label.x} ${label.y})` : undefined}
-        >
-          {label.text}
-        </text>
-      ))}
-      {region.suggestion !== null && (
-        <path
-          className="bench-chart-suggestion"
-          d="M0-8L8 0L0 8L-8 0Z"
-          transform={`translate(${xOfDepth(frame, region.suggestion[0])} ${yOfVolts(frame, region.suggestion[1])})`}
-        >
-          <title>{`Suggestion: ${region.suggestion[0]} mm, ${region.suggestion[1]} V`}</title>
-        </path>
-      )}
-      <g
-        className={allowed ? "bench-chart-dot" : "bench-chart-dot bench-chart-dot-forbidden"}
-        role="slider"
-        tabIndex={0}
-        aria-label="Depth and voltage: left and right change the depth, up and down the voltage"
-        aria-valuemin={0}
-        aria-valuemax={frame.voltsEnd}
-        aria-valuenow={volts}
-        aria-valuetext={`${depthMm} mm of water, ${volts} V, ${allowed ? "allowed" : "not allowed"}`}
-        transform={`translate(${x} ${y})`}
-        onPointerDown={onPointerDown}
-        onPointerMove={onPointerMove}
-        onPointerUp={onPointerUp}
-        onPointerCancel={onPointerUp}
-        onKeyDown={onKeyDown}
-      >
-        <circle className="bench-chart-grip" r="16" />
-        <circle className="bench-chart-ring" r="7.5" />
-        {allowed ? (
-          <circle className="bench-chart-core" r="3" />
-        ) : (
-          <path className="bench-chart-no" d="M-3.5-3.5L3.5 3.5M3.5-3.5L-3.5 3.5" />
+        {region.suggestion !== null && (
+          <path
+            className="bench-chart-suggestion"
+            d="M0-8L8 0L0 8L-8 0Z"
+            transform={`translate(${xOfDepth(frame, region.suggestion[0])} ${yOfVolts(frame, region.suggestion[1])})`}
+          >
+            <title>{`Suggestion: ${region.suggestion[0]} mm, ${region.suggestion[1]} V`}</title>
+          </path>
         )}
-      </g>
-    </svg>
+        <g
+          className={allowed ? "bench-chart-dot" : "bench-chart-dot bench-chart-dot-forbidden"}
+          role="slider"
+          tabIndex={0}
+          aria-label="Depth and voltage: left and right change the depth, up and down the voltage"
+          aria-valuemin={0}
+          aria-valuemax={frame.voltsEnd}
+          aria-valuenow={volts}
+          aria-valuetext={`${depthMm} mm of water, ${volts} V, ${allowed ? "allowed" : "not allowed"}`}
+          transform={`translate(${x} ${y})`}
+          onPointerDown={onPointerDown}
+          onPointerMove={onPointerMove}
+          onPointerUp={onPointerUp}
+          onPointerCancel={onPointerUp}
+          onKeyDown={onKeyDown}
+        >
+          <circle className="bench-chart-grip" r="16" />
+          <circle className="bench-chart-ring" r="7.5" />
+          {allowed ? (
+            <circle className="bench-chart-core" r="3" />
+          ) : (
+            <path className="bench-chart-no" d="M-3.5-3.5L3.5 3.5M3.5-3.5L-3.5 3.5" />
+          )}
+        </g>
+      </svg>
+    </figure>
   );
 }
 
