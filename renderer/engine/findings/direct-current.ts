@@ -1,5 +1,5 @@
 import { holdsChloride } from "../bench/gas";
-import { CHLORINE_CEILING } from "./limits";
+import { CHLORINE_CEILING, sourceOf } from "./limits";
 import type { SetupRule } from "./rule";
 import { finding, shown } from "./wording";
 
@@ -36,7 +36,7 @@ export const chlorideWithDirectCurrent: SetupRule = (setup) => {
       about: "supply.waveform",
       message: `Direct current through water with ${setup.water.salt} makes chlorine at the positive electrode.`,
       measured: `DC with ${setup.water.salt}`,
-      limit: CHLORINE_CEILING,
+      limit: { text: "no chloride on DC", source: `${sourceOf(CHLORINE_CEILING)}: ${CHLORINE_CEILING.value} ${CHLORINE_CEILING.unit}` },
       remedy: "Use AC, or a salt without chloride; never DC with chloride.",
       edit: toAlternating(frequencyHz),
       safety: true,

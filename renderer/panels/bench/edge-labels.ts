@@ -1,5 +1,5 @@
 import type { OperatingRegion, RegionBoundary, RegionRule } from "../../../shared-types/bench";
-import { boundAt, type ChartFrame, xOfDepth, yOfVolts } from "./region-geometry";
+import { boundAt, type ChartFrame, depthOfX, xOfDepth, yOfVolts } from "./region-geometry";
 
 /** The rules by the names that people read. */
 export const RULE_NAMES: Record<RegionRule, string> = {
@@ -22,41 +22,69 @@ export interface EdgeLabel {
   readonly upright: boolean;
 }
 
-const LINE_HEIGHT = 13;
+/** Room that a letter takes, px: a little more than the font's mean, so that names never touch. */
+const LETTER_WIDTH = 6.4;
+const LINE_HEIGHT = 14;
+/** A name that finds its place taken is tried so much farther left, px. */
+const SIDE_STEP = 12;
+
 const isUpright = (boundary: RegionBoundary): boolean => boundary.forbids === "deeper" || boundary.forbids === "shallower";
 
-/** Pushes labels apart that would print over one another, downwards, without leaving the frame. */
-function apart(labels: readonly EdgeLabel[], bottom: number): readonly EdgeLabel[] {
-  let last = -Infinity;
-  return [...labels]
-    .sort((a, b) => a.y - b.y)
-    .map((label) => {
-      const y = Math.min(bottom, Math.max(label.y, last + LINE_HEIGHT));
-      last = y;
-      return { ...label, y };
+/** left, top, right, bottom of a name, px. */
+type Box = readonly [number, number, number, number];
+
+const boxOf = ({ x, y, text, upright }: EdgeLabel): Box =>
+  upright
+    ? [x - LINE_HEIGHT, y - 2, x + 3, y + text.length * LETTER_WIDTH]
+    : [x - text.length * LETTER_WIDTH, y - LINE_HEIGHT + 2, x, y + 3];
+
+const collide = (a: Box, b: Box): boolean => a[0] < b[2] && b[0] < a[2] && a[1] < b[3] && b[1] < a[3];
+
+/** Names of upright edges: along the line at the top, on the side that the rule forbids. */
+function uprightLabels(frame: ChartFrame, region: OperatingRegion): readonly EdgeLabel[] {
+  return region.boundaries
+    .filter((boundary) => isUpright(boundary) && boundary.path[0][0] > 0 && boundary.path[0][0] <= frame.depthEndMm)
+    .map((boundary) => {
+      const side = boundary.forbids === "deeper" ? 12 : -5;
+      return {
+        rule: boundary.rule,
+        text: RULE_NAMES[boundary.rule],
+        x: xOfDepth(frame, boundary.path[0][0]) + side,
+        y: frame.top + 8,
+        upright: true,
+      };
     });
 }
 
-/** @returns a label for every edge that the frame shows: level ones at the right end, upright ones along the line at the top. */
-export function edgeLabels(frame: ChartFrame, region: OperatingRegion): readonly EdgeLabel[] {
-  const right = frame.left + frame.width;
-  const level: EdgeLabel[] = [];
-  const upright: EdgeLabel[] = [];
-  for (const boundary of region.boundaries) {
-    const text = RULE_NAMES[boundary.rule];
-    if (isUpright(boundary)) {
-      const depthMm = boundary.path[0][0];
-      if (depthMm <= 0 || depthMm > frame.depthEndMm) continue;
-      const side = boundary.forbids === "deeper" ? 11 : -5;
-      upright.push({ rule: boundary.rule, text, x: xOfDepth(frame, depthMm) + side, y: frame.top + 8, upright: true });
-    } else {
-      const volts = boundAt(boundary, frame.depthEndMm * 0.98);
-      if (volts === null || volts > frame.voltsEnd || volts < 0) continue;
-      const beside = boundary.forbids === "above" ? -5 : 12;
-      level.push({ rule: boundary.rule, text, x: right - 6, y: yOfVolts(frame, volts) + beside, upright: false });
+/** The name of a level or sloping edge: beside it as far right as there is room, following it to the left where there is none. */
+function levelLabel(frame: ChartFrame, boundary: RegionBoundary, taken: readonly Box[]): EdgeLabel | null {
+  const text = RULE_NAMES[boundary.rule];
+  const beside = boundary.forbids === "above" ? -5 : 13;
+  const right = frame.left + frame.width - 6;
+  let first: EdgeLabel | null = null;
+  // A name over a falling edge must clear it at its left end, where the edge is higher; in a corner it may lie across it.
+  for (const clearing of boundary.forbids === "above" ? [text.length * LETTER_WIDTH, 0] : [0]) {
+    for (let x = right; x - text.length * LETTER_WIDTH > frame.left; x -= SIDE_STEP) {
+      const volts = boundAt(boundary, depthOfX(frame, x - clearing));
+      if (volts === null || volts < 0 || volts > frame.voltsEnd) continue;
+      const y = Math.min(frame.top + frame.height - 4, Math.max(frame.top + 11, yOfVolts(frame, volts) + beside));
+      const label = { rule: boundary.rule, text, x, y, upright: false };
+      if (!taken.some((box) => collide(box, boxOf(label)))) return label;
+      first ??= label;
     }
   }
-  return [...apart(level, frame.top + frame.height - 4), ...upright];
+  return first;
+}
+
+/** @returns a label for every edge that the frame shows, kept off one another as far as there is room. */
+export function edgeLabels(frame: ChartFrame, region: OperatingRegion): readonly EdgeLabel[] {
+  const labels: EdgeLabel[] = [...uprightLabels(frame, region)];
+  for (const boundary of region.boundaries) {
+    if (isUpright(boundary)) continue;
+    const label = levelLabel(frame, boundary, labels.map(boxOf));
+    if (label !== null) labels.push(label);
+  }
+  return labels;
 }
 
 /** @returns the points of an edge in the drawing, as an SVG polyline. */
