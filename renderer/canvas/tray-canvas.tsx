@@ -57,6 +57,11 @@ const ZOOM_PER_PX = 0.0015;
 /** Numbers that a tag shows come from the plan of this very water; a stale plan would show another tray's volts. */
 const planForTags = (field: PlannedField | null): Plan | null => (field === null || field.outOfDate ? null : field.plan);
 
+/** The browser turns these keys into copy, cut and paste by itself; nobody further out may take them for something else. */
+function leaveClipboardKeys(event: KeyboardEvent): void {
+  if ((event.ctrlKey || event.metaKey) && ["c", "x", "v"].includes(event.key.toLowerCase())) event.stopPropagation();
+}
+
 /** The tray on its bench, drawn to scale, with everything that hands and keys can do to it. Takes data and callbacks only. */
 export function TrayCanvas(props: TrayCanvasProps) {
   const { setup, selection, field, findings, trayView, shown, editable, actions } = props;
@@ -214,7 +219,15 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const count = setup.parts.length;
 
   return (
-    <div className="tray-canvas" style={themeProperties(theme)}>
+    // biome-ignore lint/a11y/noStaticElementInteractions: list and tray share what the clipboard does.
+    <div
+      className="tray-canvas"
+      style={themeProperties(theme)}
+      onCopy={(event) => onCopy(event, false)}
+      onCut={(event) => onCopy(event, true)}
+      onPaste={onPaste}
+      onKeyDown={leaveClipboardKeys}
+    >
       <PartsList setup={setup} selection={selection} onSelect={actions.select} onEnter={() => surface.current?.focus()} onKey={takeKey} />
       <div
         ref={surface}
@@ -232,9 +245,6 @@ export function TrayCanvas(props: TrayCanvasProps) {
         onKeyDown={onKeyDown}
         onKeyUp={onKeyUp}
         onBlur={() => actions.settle()}
-        onCopy={(event) => onCopy(event, false)}
-        onCut={(event) => onCopy(event, true)}
-        onPaste={onPaste}
         onDragOver={onDragOver}
         onDragLeave={() => setDropping(false)}
         onDrop={onDrop}

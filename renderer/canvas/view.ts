@@ -25,7 +25,7 @@ export const toTray = (view: View, xPx: number, yPx: number): Place => [
 ];
 
 /** Room round the whole tray, px: rules lie at the left and below. */
-export const MARGIN_PX = { left: 72, right: 36, top: 44, bottom: 72 };
+export const MARGIN_PX = { left: 72, right: 36, top: 44, bottom: 100 };
 const SMALLEST_SCALE = 0.1;
 const LARGEST_SCALE = 60;
 /** One press of a zoom key or button. */
