@@ -3,7 +3,7 @@ import { builtinModules } from "node:module";
 import { build } from "vite";
 import { inRoot, run, say } from "./steps.mjs";
 
-/** Builds everything that runs: kernels, window, desktop process, preload and headless command, all into dist/. */
+/** Builds everything that runs, or only the named parts: kernels, window, desktop process, preload and headless command, all into dist/. */
 
 const nodeModules = [...builtinModules, ...builtinModules.map((name) => `node:${name}`), "electron"];
 
@@ -28,18 +28,26 @@ async function bundleForNode(entry, outDir, fileName, format) {
   });
 }
 
-if (existsSync(inRoot("build-resources", "kernels.mjs"))) {
-  const code = await run(process.execPath, [inRoot("build-resources", "kernels.mjs")]);
-  if (code !== 0) process.exit(code);
+const PARTS = {
+  kernels: async () => {
+    if (!existsSync(inRoot("build-resources", "kernels.mjs"))) return;
+    const code = await run(process.execPath, [inRoot("build-resources", "kernels.mjs")]);
+    if (code !== 0) process.exit(code);
+  },
+  window: () => build({ configFile: inRoot("renderer", "vite.config.ts"), logLevel: "warn" }),
+  main: () => bundleForNode("electron/main.ts", "electron", "main.cjs", "cjs"),
+  preload: () => bundleForNode("electron/preload.ts", "electron", "preload.cjs", "cjs"),
+  headless: () => bundleForNode("electron/headless.ts", "headless", "headless.mjs", "es"),
+};
+
+const asked = process.argv.slice(2);
+for (const [name, make] of Object.entries(PARTS)) {
+  if (asked.length > 0 && !asked.includes(name)) continue;
+  say(`building: ${name} …`);
+  try {
+    await make();
+  } catch (error) {
+    say(`the ${name} could not be built: ${error.message}`);
+    process.exit(1);
+  }
 }
-if (existsSync(inRoot("renderer", "index.html"))) {
-  say("bundling the window …");
-  await build({ configFile: inRoot("renderer", "vite.config.ts"), logLevel: "warn" });
-}
-for (const [entry, fileName] of [
-  ["electron/main.ts", "main.cjs"],
-  ["electron/preload.ts", "preload.cjs"],
-]) {
-  if (existsSync(inRoot(entry))) await bundleForNode(entry, "electron", fileName, "cjs");
-}
-if (existsSync(inRoot("electron", "headless.ts"))) await bundleForNode("electron/headless.ts", "headless", "headless.mjs", "es");

@@ -6,7 +6,7 @@ import { type Plan, type PlanOutcome, QUALITIES, type Quality } from "../shared-
 import type { Setup } from "../shared-types/setup";
 import { setupId } from "../shared-types/setup-id";
 import { checkReport, probesReport, solveReport } from "./headless-reports";
-import { writeSheets } from "./headless-sheets";
+import { readSheetOptions, writeSheets } from "./headless-sheets";
 
 /**
  * The headless command: JSON on standard output, messages on standard error.
@@ -118,8 +118,11 @@ async function runVerb(verb: string, setup: Setup, options: Options): Promise<vo
       return;
     }
     default: {
+      const order = await readSheetOptions(options, wrong, new Date());
       const plan = planned(await planner.plan(setup, "print", clock));
-      await writeSheets(setup, plan, options, wrong);
+      const pages = await writeSheets(setup, plan, order);
+      process.stderr.write(`${order.out}: ${pages} pages\n`);
+      print({ setupId: plan.setupId, out: order.out, pages, paper: order.paper, sheets: order.sheets, printerScale: order.printerScale });
     }
   }
 }
