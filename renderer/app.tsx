@@ -28,7 +28,14 @@ const startWorker = (): Worker => new Worker(new URL("./worker/field-worker.ts",
 /** The sheets and jsPDF are loaded when they are first asked for. */
 const loadSheets = async (): Promise<SheetSource> => (await import("./sheet-source")).createSheetSource();
 
-const FIRST_CHOICE: SheetChoice = { pages: ["template", "probe-table"], paper: "a4", withPoints: true, saveInk: false, mirrored: false };
+const FIRST_CHOICE: SheetChoice = {
+  pages: ["template", "probe-table"],
+  paper: "a4",
+  withPoints: true,
+  saveInk: false,
+  mirrored: false,
+  printerScale: [1, 1],
+};
 
 function made(host: Host) {
   const client = createFieldClient(startWorker);

@@ -1,6 +1,56 @@
-import type { SheetSource } from "./panels/sheets-desk";
+import regularUrl from "../node_modules/dejavu-fonts-ttf/ttf/DejaVuSansCondensed.ttf?url";
+import boldUrl from "../node_modules/dejavu-fonts-ttf/ttf/DejaVuSansCondensed-Bold.ttf?url";
+import { version } from "../package.json";
+import type { Plan } from "../shared-types/plan";
+import type { Setup } from "../shared-types/setup";
+import type { SheetChoice, SheetSource } from "./panels/sheets-desk";
+import { readFontMetrics } from "./sheets/font-metrics";
+import { composePack, scaleFault } from "./sheets/pack";
+import { packPdf } from "./sheets/pdf";
+import { PRESETS, SHEET_NAMES, SHEETS } from "./sheets/sheets";
+import { pageSvg } from "./sheets/svg";
+
+/** Joins the sheets to the window: brings the fonts and today's date, which the pure code does not know. */
+
+const bytesOf = async (url: string): Promise<Uint8Array> => new Uint8Array(await (await fetch(url)).arrayBuffer());
+
+/** @returns today as it is printed, and as it is written into the file. */
+function today(): { readonly printed: string; readonly iso: string } {
+  const now = new Date();
+  return {
+    printed: now.toLocaleDateString("en-GB", { day: "numeric", month: "long", year: "numeric" }),
+    iso: `${now.getFullYear()}-${String(now.getMonth() + 1).padStart(2, "0")}-${String(now.getDate()).padStart(2, "0")}`,
+  };
+}
 
 /** @returns whoever makes the sheets: pages, pictures and PDF from the same page data. */
 export async function createSheetSource(): Promise<SheetSource> {
-  return { pageNames: [], presets: [], pictures: async () => [], pdf: () => Promise.reject(new Error("no page is ready yet")) };
+  const [regular, bold] = await Promise.all([bytesOf(regularUrl), bytesOf(boldUrl)]);
+  const metrics = { regular: readFontMetrics(regular), bold: readFontMetrics(bold) };
+  const pack = (setup: Setup, plan: Plan, choice: SheetChoice) =>
+    composePack(setup, plan, metrics, {
+      sheets: SHEET_NAMES.filter((name) => choice.pages.includes(name)),
+      paper: choice.paper,
+      printerScale: choice.printerScale,
+      date: today().printed,
+      version,
+      points: choice.withPoints,
+      grid: "fine",
+      saveInk: choice.saveInk,
+      mirrored: choice.mirrored,
+    });
+  return {
+    pageNames: SHEET_NAMES.map((name) => [name, SHEETS[name].title]),
+    presets: PRESETS,
+    scaleFault,
+    pictures: async (setup, plan, choice) =>
+      pack(setup, plan, choice).pages.map((page, index) => ({
+        id: `${page.sheet} ${index}`,
+        name: page.title,
+        widthMm: page.widthMm,
+        heightMm: page.heightMm,
+        svg: pageSvg(page),
+      })),
+    pdf: async (setup, plan, choice) => packPdf(pack(setup, plan, choice), { regular, bold }, today().iso),
+  };
 }

@@ -1,10 +1,11 @@
-import { useEffect, useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import { useStore } from "zustand";
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import type { Document } from "../document/document";
 import { isCurrent, type Planning } from "../document/planning";
-import { ChoiceField, Switch } from "./number-field";
+import { ChoiceField, NumberField, Switch } from "./number-field";
+import { LENGTHS_IN_MM } from "./read-number";
 
 /** A page as the desk shows it: the very page that is printed. */
 export interface PagePicture {
@@ -24,6 +25,8 @@ export interface SheetChoice {
   readonly withPoints: boolean;
   readonly saveInk: boolean;
   readonly mirrored: boolean;
+  /** What the printer makes of a true length along x and y; 1 where it prints true. */
+  readonly printerScale: readonly [number, number];
 }
 
 /** Whoever makes the sheets; loaded when first used. */
@@ -31,6 +34,8 @@ export interface SheetSource {
   /** Names of pages with their titles, in the order of the pack. */
   readonly pageNames: readonly (readonly [name: string, title: string])[];
   readonly presets: readonly (readonly [title: string, pages: readonly string[]])[];
+  /** @returns why a printer's scale is not believed, or null. */
+  readonly scaleFault: (scale: readonly [number, number]) => string | null;
   readonly pictures: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<readonly PagePicture[]>;
   readonly pdf: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<Uint8Array<ArrayBuffer>>;
 }
@@ -42,6 +47,18 @@ const PAPERS: readonly (readonly [Paper, string])[] = [
   ["letter", "US Letter"],
   ["tabloid", "Tabloid"],
 ];
+
+/** A page's picture inside the window's own page, so that it is set in the very font of the print. */
+function SvgPage({ svg, label }: { readonly svg: string; readonly label: string }) {
+  const place = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    const parsed = new DOMParser().parseFromString(svg, "image/svg+xml").documentElement;
+    parsed.setAttribute("width", "100%");
+    parsed.removeAttribute("height");
+    place.current?.replaceChildren(globalThis.document.importNode(parsed, true));
+  }, [svg]);
+  return <div ref={place} className="page-picture" role="img" aria-label={label} />;
+}
 
 export interface SheetsDeskProps {
   readonly document: Document;
@@ -105,9 +122,9 @@ export function SheetsDesk({ document, planning, loadSheets, choice, onChoice, o
               style={{ aspectRatio: `${page.widthMm} / ${page.heightMm}` }}
               className={plan === null ? "out-of-date" : ""}
             >
-              <img
-                alt={`Page ${index + 1}: ${page.name}, ${Math.round(page.widthMm)} by ${Math.round(page.heightMm)} mm`}
-                src={`data:image/svg+xml;charset=utf-8,${encodeURIComponent(page.svg)}`}
+              <SvgPage
+                svg={page.svg}
+                label={`Page ${index + 1}: ${page.name}, ${Math.round(page.widthMm)} by ${Math.round(page.heightMm)} mm`}
               />
               <figcaption>
                 {index + 1} of {pages.length} · {page.name}
@@ -136,6 +153,28 @@ export function SheetsDesk({ document, planning, loadSheets, choice, onChoice, o
           <Switch label="Probe points" on={choice.withPoints} onSet={(withPoints) => onChoice({ ...choice, withPoints })} />
           <Switch label="Mirrored, to read from below" on={choice.mirrored} onSet={(mirrored) => onChoice({ ...choice, mirrored })} />
           <Switch label="Save ink" on={choice.saveInk} onSet={(saveInk) => onChoice({ ...choice, saveInk })} />
+          <h3>Printer</h3>
+          <div className="pair">
+            {(["x", "y"] as const).map((axis, place) => (
+              <NumberField
+                key={axis}
+                label={`Bar along ${axis} measures`}
+                unit="mm"
+                units={LENGTHS_IN_MM}
+                value={Number((100 * choice.printerScale[place]).toFixed(3))}
+                step={0.1}
+                onSet={(measuredMm) => {
+                  const fault = source?.scaleFault([measuredMm / 100, measuredMm / 100]) ?? null;
+                  if (fault !== null) return [{ where: "", message: fault }];
+                  onChoice({
+                    ...choice,
+                    printerScale: axis === "x" ? [measuredMm / 100, choice.printerScale[1]] : [choice.printerScale[0], measuredMm / 100],
+                  });
+                  return [];
+                }}
+              />
+            ))}
+          </div>
           <p className="hint">Print at 100 %, never “fit to page”; then measure the two 100 mm bars.</p>
           <div className="choices">
             <button type="button" className="strong" disabled={plan === null || choice.pages.length === 0} onClick={onSave}>

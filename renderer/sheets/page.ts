@@ -1,0 +1,151 @@
+/**
+ * A page as data before it is PDF or picture. All measures in millimetres as they shall come out of the printer; x to the
+ * right and y upwards from the page's lower left corner, as on the tray.
+ */
+
+export type Point = readonly [number, number];
+
+/** A grey (0 black, 1 white) or a colour as red, green, blue from 0 to 255. */
+export type Ink = number | readonly [number, number, number];
+
+export interface PathItem {
+  readonly kind: "path";
+  /** Chains of points; each is closed when `closed`. Several chains with a fill follow the even-odd rule. */
+  readonly chains: readonly (readonly Point[])[];
+  readonly closed: boolean;
+  readonly stroke: Ink | null;
+  readonly fill: Ink | null;
+  readonly lineMm: number;
+  readonly dashMm?: readonly [number, number];
+}
+
+export interface TextItem {
+  readonly kind: "text";
+  readonly x: number;
+  /** Of the text's baseline. */
+  readonly y: number;
+  readonly text: string;
+  /** Size of the type: the distance from line to line when set solid. */
+  readonly sizeMm: number;
+  readonly anchor: "start" | "middle" | "end";
+  readonly bold?: boolean;
+  readonly turnDeg?: number;
+  readonly ink?: Ink;
+}
+
+/** Items that are cut off at a rectangle [left, bottom, right, top] and moved by an offset. */
+export interface ClippedItem {
+  readonly kind: "clipped";
+  readonly window: readonly [number, number, number, number];
+  readonly offset: Point;
+  readonly items: readonly (PathItem | TextItem)[];
+}
+
+export type Item = PathItem | TextItem | ClippedItem;
+
+export interface Page {
+  /** Which sheet it belongs to, such as "template". */
+  readonly sheet: string;
+  /** What a reader calls it, such as "Tray template, tile A1". */
+  readonly title: string;
+  readonly widthMm: number;
+  readonly heightMm: number;
+  readonly items: readonly Item[];
+}
+
+/** Pages in printing order, with what belongs to the document as a whole. */
+export interface Pack {
+  readonly title: string;
+  readonly setupId: string;
+  readonly date: string;
+  readonly version: string;
+  /** What the printer makes of a true length along x and y; the pages are shrunk or stretched against it. */
+  readonly printerScale: Point;
+  readonly pages: readonly Page[];
+}
+
+const BLACK = 0;
+
+/** @returns an open line through points. */
+export const line = (points: readonly Point[], lineMm = 0.2, stroke: Ink = BLACK, dashMm?: readonly [number, number]): PathItem => ({
+  kind: "path",
+  chains: [points],
+  closed: false,
+  stroke,
+  fill: null,
+  lineMm,
+  ...(dashMm === undefined ? {} : { dashMm }),
+});
+
+/** @returns a closed outline, filled or not. */
+export const outline = (
+  chains: readonly (readonly Point[])[],
+  lineMm = 0.3,
+  stroke: Ink | null = BLACK,
+  fill: Ink | null = null,
+): PathItem => ({
+  kind: "path",
+  chains,
+  closed: true,
+  stroke,
+  fill,
+  lineMm,
+});
+
+/** @returns a rectangle from its lower left corner. */
+export const box = (
+  x: number,
+  y: number,
+  width: number,
+  height: number,
+  lineMm = 0.2,
+  stroke: Ink | null = BLACK,
+  fill: Ink | null = null,
+): PathItem =>
+  outline(
+    [
+      [
+        [x, y],
+        [x + width, y],
+        [x + width, y + height],
+        [x, y + height],
+      ],
+    ],
+    lineMm,
+    stroke,
+    fill,
+  );
+
+/** @returns a circle as a chain fine enough for 600 dots an inch. */
+export const circle = (
+  x: number,
+  y: number,
+  radius: number,
+  lineMm = 0.2,
+  stroke: Ink | null = BLACK,
+  fill: Ink | null = null,
+): PathItem => {
+  const count = Math.max(24, Math.ceil(Math.PI / Math.acos(Math.max(0.5, 1 - 0.005 / radius))));
+  const chain = Array.from({ length: count }, (_, k): Point => {
+    const angle = (2 * Math.PI * k) / count;
+    return [x + radius * Math.cos(angle), y + radius * Math.sin(angle)];
+  });
+  return outline([chain], lineMm, stroke, fill);
+};
+
+/** @returns text; see TextItem. */
+export const text = (
+  x: number,
+  y: number,
+  words: string,
+  sizeMm: number,
+  more: Partial<Omit<TextItem, "kind" | "x" | "y" | "text" | "sizeMm">> = {},
+): TextItem => ({
+  kind: "text",
+  x,
+  y,
+  text: words,
+  sizeMm,
+  anchor: "start",
+  ...more,
+});

@@ -1,0 +1,144 @@
+import { jsPDF } from "jspdf";
+import type { ClippedItem, Ink, Item, Pack, PathItem, TextItem } from "./page";
+
+/** The font files that are embedded, as bytes of TrueType. */
+export interface FontFiles {
+  readonly regular: Uint8Array;
+  readonly bold: Uint8Array;
+}
+
+const FAMILY = "SheetSans";
+const POINTS_PER_MM = 72 / 25.4;
+
+function base64(bytes: Uint8Array): string {
+  let binary = "";
+  for (let start = 0; start < bytes.length; start += 0x8000) binary += String.fromCharCode(...bytes.subarray(start, start + 0x8000));
+  return btoa(binary);
+}
+
+const rgb = (ink: Ink): readonly [number, number, number] => {
+  if (typeof ink !== "number") return ink;
+  const grey = Math.round(255 * ink);
+  return [grey, grey, grey];
+};
+
+/** Draws the items of one page; places are turned into the PDF's millimetres from the upper left corner. */
+class PagePen {
+  constructor(
+    private readonly document: jsPDF,
+    private readonly heightMm: number,
+    private readonly scaleX: number,
+    private readonly scaleY: number,
+    private readonly offset: readonly [number, number] = [0, 0],
+  ) {}
+
+  private x(value: number): number {
+    return (value + this.offset[0]) / this.scaleX;
+  }
+  private y(value: number): number {
+    return (this.heightMm - value - this.offset[1]) / this.scaleY;
+  }
+
+  draw(item: Item): void {
+    if (item.kind === "path") this.path(item);
+    else if (item.kind === "text") this.text(item);
+    else this.clipped(item);
+  }
+
+  private path({ chains, closed, stroke, fill, lineMm, dashMm }: PathItem): void {
+    const { document } = this;
+    if (stroke !== null) document.setDrawColor(...rgb(stroke));
+    if (fill !== null) document.setFillColor(...rgb(fill));
+    document.setLineWidth(lineMm);
+    document.setLineDashPattern(dashMm === undefined ? [] : [...dashMm], 0);
+    for (const chain of chains) {
+      chain.forEach(([x, y], index) => {
+        if (index === 0) document.moveTo(this.x(x), this.y(y));
+        else document.lineTo(this.x(x), this.y(y));
+      });
+      if (closed) document.close();
+    }
+    if (fill !== null && stroke !== null) document.fillStrokeEvenOdd();
+    else if (fill !== null) document.fillEvenOdd();
+    else document.stroke();
+  }
+
+  private text({ x, y, text: words, sizeMm, anchor, bold, turnDeg, ink }: TextItem): void {
+    const { document } = this;
+    document.setFont(FAMILY, bold ? "bold" : "normal");
+    document.setFontSize(sizeMm * POINTS_PER_MM);
+    document.setTextColor(...rgb(ink ?? 0));
+    let [left, base] = [this.x(x), this.y(y)];
+    if (anchor !== "start") {
+      const width = document.getTextWidth(words) * (anchor === "middle" ? 0.5 : 1);
+      const angle = ((turnDeg ?? 0) * Math.PI) / 180;
+      left -= width * Math.cos(angle);
+      base += width * Math.sin(angle);
+    }
+    document.text(words, left, base, turnDeg === undefined ? {} : { angle: turnDeg });
+  }
+
+  private clipped({ window: [left, bottom, right, top], offset, items }: ClippedItem): void {
+    const { document } = this;
+    document.saveGraphicsState();
+    document.moveTo(this.x(left), this.y(bottom));
+    document.lineTo(this.x(right), this.y(bottom));
+    document.lineTo(this.x(right), this.y(top));
+    document.lineTo(this.x(left), this.y(top));
+    document.close();
+    document.clip();
+    document.discardPath();
+    const pen = new PagePen(document, this.heightMm, this.scaleX, this.scaleY, offset);
+    for (const item of items) pen.draw(item);
+    document.restoreGraphicsState();
+  }
+}
+
+/** A file id of 32 hexadecimal digits that belongs to the content: the same setup and date give the same bytes. */
+function fileIdOf({ setupId, date, title }: Pack): string {
+  let id = "";
+  for (let round = 0; id.length < 32; round++) {
+    let hash = 0x811c9dc5 ^ round;
+    for (const character of `${setupId} ${date} ${title}`) hash = Math.imul(hash ^ (character.codePointAt(0) ?? 0), 0x01000193);
+    id += (hash >>> 0).toString(16).toUpperCase().padStart(8, "0");
+  }
+  return id.slice(0, 32);
+}
+
+/**
+ * @param createdOn the day that the file says it was made on, ISO 8601: no clock is read.
+ * @returns the pack as PDF: true to scale, fonts embedded, asking viewers not to scale it.
+ */
+export function packPdf(pack: Pack, fonts: FontFiles, createdOn: string): Uint8Array<ArrayBuffer> {
+  const [scaleX, scaleY] = pack.printerScale;
+  const [first] = pack.pages;
+  if (first === undefined) throw new RangeError("a pack without pages cannot be printed; choose at least one sheet");
+  const sizeOf = ({ widthMm, heightMm }: { widthMm: number; heightMm: number }): [number, number] => [widthMm / scaleX, heightMm / scaleY];
+  const orientation = ([width, height]: readonly [number, number]): "portrait" | "landscape" => (width > height ? "landscape" : "portrait");
+  const document = new jsPDF({
+    unit: "mm",
+    format: sizeOf(first),
+    orientation: orientation(sizeOf(first)),
+    compress: true,
+    putOnlyUsedFonts: true,
+  });
+  document.addFileToVFS("regular.ttf", base64(fonts.regular));
+  document.addFont("regular.ttf", FAMILY, "normal");
+  document.addFileToVFS("bold.ttf", base64(fonts.bold));
+  document.addFont("bold.ttf", FAMILY, "bold");
+  document.setCreationDate(new Date(`${createdOn}T12:00:00Z`));
+  document.setFileId(fileIdOf(pack));
+  document.setDocumentProperties({
+    title: `${pack.title} (${pack.setupId})`,
+    subject: `Setup ${pack.setupId}, ${pack.date}`,
+    creator: `Fieldtray ${pack.version}`,
+  });
+  document.setLanguage("en-GB");
+  document.viewerPreferences({ PrintScaling: "None", DisplayDocTitle: true });
+  pack.pages.forEach((page, index) => {
+    if (index > 0) document.addPage(sizeOf(page), orientation(sizeOf(page)));
+    const pen = new PagePen(document, page.heightMm, scaleX, scaleY);
+    for (const item of page.items) pen.draw(item);
+  });
+  return new Uint8Array(document.output("arraybuffer"));
+}
