@@ -75,17 +75,3 @@ export function findingsOf(setup: Setup, bench: BenchNumbers, field: FieldFacts,
   const found = { setup, bench, field, probing };
   return gravestFirst([...SETUP_RULES.flatMap((rule) => rule(setup)), ...PLAN_RULES.flatMap((rule) => rule(found))]);
 }
-
-/** @returns how many findings there are of each severity. */
-export function countBySeverity(findings: readonly Finding[]): Readonly<Record<Severity, number>> {
-  const counts: Record<Severity, number> = { stop: 0, caution: 0, note: 0 };
-  for (const finding of findings) counts[finding.severity] += 1;
-  return counts;
-}
-
-/** @returns the count by severity as one line of plain words: "1 stop, 2 cautions, 3 notes". */
-export function countSentence(findings: readonly Finding[]): string {
-  const counts = countBySeverity(findings);
-  const plural = (count: number, word: string): string => `${count} ${word}${count === 1 ? "" : "s"}`;
-  return `${plural(counts.stop, "stop")}, ${plural(counts.caution, "caution")}, ${plural(counts.note, "note")}`;
-}

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { benchOf } from "../../../../renderer/engine/bench/bench";
-import { countSentence, findingsOf, geometryFindings } from "../../../../renderer/engine/findings/all-findings";
+import { findingsOf, geometryFindings } from "../../../../renderer/engine/findings/all-findings";
 import { SAFETY_SENTENCE } from "../../../../renderer/engine/findings/limits";
 import type { Finding, ProbePlan, ProbePoint, Severity } from "../../../../shared-types/plan";
 import { channel, channelFacts, fullWidthBar } from "../bench/trays";
@@ -396,11 +396,6 @@ describe("each rule", () => {
   it("weak sources ask for the current edition", () => {
     const found = findings({ supply: { volts: 9.5 } }).find((finding) => finding.code === "open-circuit-unknown");
     expect(found?.source).toMatch(/check the current edition$/);
-  });
-
-  it("counts them in words for the last line of a check", () => {
-    expect(countSentence(findings({}))).toBe("0 stops, 0 cautions, 1 note");
-    expect(countSentence(findings({ supply: { source: "mains", volts: 13 } }))).toBe("1 stop, 1 caution, 1 note");
   });
 
   it("lists the gravest first", () => {
