@@ -30,7 +30,8 @@ function closestOn(piece: Piece, [x, y]: Place): Place {
   return Math.hypot(x - start[0], y - start[1]) < Math.hypot(x - end[0], y - end[1]) ? start : end;
 }
 
-function closestOnOutline(loops: readonly Loop[], at: Place): Place {
+/** @returns the place of an outline nearest to a place, mm. */
+export function closestOnOutline(loops: readonly Loop[], at: Place): Place {
   let nearest: Place = at;
   let nearestMm = Number.POSITIVE_INFINITY;
   for (const piece of loops.flat()) {

@@ -41,6 +41,8 @@ export interface TrayViewState {
   readonly middleMm: Place;
   /** Whether the whole tray is kept in sight. */
   readonly fitted: boolean;
+  /** What the pointer is on the tray: a hand that takes parts, or a measuring tape. */
+  readonly tool: "hand" | "tape";
 }
 
 export interface TrayView extends Pick<StoreApi<TrayViewState>, "getState" | "subscribe" | "getInitialState"> {
@@ -52,6 +54,7 @@ export interface TrayView extends Pick<StoreApi<TrayViewState>, "getState" | "su
   readonly zoomOut: () => void;
   /** Shows the whole tray, and keeps it in sight when the window or the tray changes size. */
   readonly fit: () => void;
+  readonly setTool: (tool: TrayViewState["tool"]) => void;
   readonly panBy: (xPx: number, yPx: number) => void;
 }
 
@@ -83,7 +86,16 @@ const kept = (middle: number, sizeMm: number): number => Math.min(sizeMm, Math.m
 export function createTrayView(tray: Tray): TrayView {
   const [lengthMm, widthMm] = traySizeMm(tray);
   const store = createStore<TrayViewState>(() => {
-    const state = { widthPx: 800, heightPx: 600, lengthMm, widthMm, scale: 1, middleMm: [0, 0] as const, fitted: true };
+    const state = {
+      widthPx: 800,
+      heightPx: 600,
+      lengthMm,
+      widthMm,
+      scale: 1,
+      middleMm: [0, 0] as const,
+      fitted: true,
+      tool: "hand" as const,
+    };
     return { ...state, ...fitting(state) };
   });
   const { getState, setState } = store;
@@ -119,6 +131,7 @@ export function createTrayView(tray: Tray): TrayView {
     zoomBy,
     zoomIn: () => zoomBy(ZOOM_STEP),
     zoomOut: () => zoomBy(1 / ZOOM_STEP),
+    setTool: (tool) => setState({ tool }),
     fit: () => change({ fitted: true }),
     panBy: (xPx, yPx) => {
       const { scale, middleMm, lengthMm: length, widthMm: width } = getState();

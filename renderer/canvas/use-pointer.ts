@@ -1,0 +1,128 @@
+import { type KeyboardEvent, type PointerEvent, type RefObject, useEffect, useMemo, useRef, useState } from "react";
+import { useStore } from "zustand";
+import { createHand, type HandWorld, IDLE, type Modifiers } from "./hand";
+import { createTapeHand, type Tape } from "./tape";
+import type { TrayCanvasProps } from "./tray-canvas";
+import { type Place, type TrayView, toTray, viewOf } from "./view";
+
+/** A wheel's step in lines or pages, in pixels. */
+const WHEEL_UNIT_PX = [1, 16, 400];
+const ZOOM_PER_PX = 0.0015;
+/** A trackpad's pinch comes as a wheel with small steps. */
+const PINCH = 6;
+
+/** @returns a place of the screen on the element, px from its upper left corner. */
+export function placeOn(element: HTMLElement | null, event: { readonly clientX: number; readonly clientY: number }): Place {
+  const box = element?.getBoundingClientRect();
+  return [event.clientX - (box?.left ?? 0), event.clientY - (box?.top ?? 0)];
+}
+
+/** Keeps the view as large as the element, and lets the wheel zoom it. */
+function useSurface(surface: RefObject<HTMLDivElement | null>, trayView: TrayView): void {
+  useEffect(() => {
+    const element = surface.current;
+    if (element === null) return;
+    const measure = (): void => trayView.setSize(element.clientWidth, element.clientHeight);
+    const onWheel = (event: WheelEvent): void => {
+      event.preventDefault();
+      const unit = WHEEL_UNIT_PX[event.deltaMode] ?? 1;
+      if (event.shiftKey) {
+        trayView.panBy(-(event.deltaX || event.deltaY) * unit, 0);
+        return;
+      }
+      trayView.zoomBy(Math.exp(-event.deltaY * unit * ZOOM_PER_PX * (event.ctrlKey ? PINCH : 1)), placeOn(element, event));
+      if (event.deltaX !== 0) trayView.panBy(-event.deltaX * unit, 0);
+    };
+    const observer = new ResizeObserver(measure);
+    observer.observe(element);
+    measure();
+    // React listens to wheels passively; zooming must keep the page from scrolling.
+    element.addEventListener("wheel", onWheel, { passive: false });
+    return () => {
+      observer.disconnect();
+      element.removeEventListener("wheel", onWheel);
+    };
+  }, [surface, trayView]);
+}
+
+/** The pointer on the tray: hand or tape, panning with the space bar or the middle button. @returns what shows, and what to listen with. */
+export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivElement | null>) {
+  const { trayView } = props;
+  const tool = useStore(trayView, (state) => state.tool);
+  const [look, setLook] = useState(IDLE);
+  const [tape, setTape] = useState<Tape | null>(null);
+  const [place, setPlace] = useState<Place | null>(null);
+  const panKey = useRef(false);
+  const latest = useRef(props);
+  latest.current = props;
+  useSurface(surface, trayView);
+
+  const hand = useMemo(
+    () =>
+      createHand((): HandWorld => {
+        const now = latest.current;
+        return { ...now, view: viewOf(now.trayView.getState()), panBy: now.trayView.panBy };
+      }, setLook),
+    [],
+  );
+  const tapeHand = useMemo(
+    () => createTapeHand(() => ({ setup: latest.current.setup, view: viewOf(latest.current.trayView.getState()) }), setTape),
+    [],
+  );
+  useEffect(() => {
+    if (tool === "hand") tapeHand.rollUp();
+  }, [tool, tapeHand]);
+
+  const modifiersOf = (event: PointerEvent): Modifiers => ({
+    shift: event.shiftKey,
+    fine: event.altKey,
+    pan: panKey.current || event.button === 1 || (event.buttons & 4) !== 0,
+  });
+  /** @returns whether the tape was in hand. */
+  function putTapeAway(): boolean {
+    if (tool === "hand") return false;
+    if (!tapeHand.rollUp()) trayView.setTool("hand");
+    return true;
+  }
+
+  return {
+    look,
+    tape,
+    /** Where the pointer is, px; null when it has left. */
+    place,
+    cursor: tool === "tape" && look.cursor !== "grabbing" ? "crosshair" : look.cursor,
+    /** Calls off what is under way, or puts the tape away. @returns whether there was anything. */
+    cancel: (): boolean => hand.cancel() || putTapeAway(),
+    holdPan: (event: KeyboardEvent, held: boolean): boolean => {
+      if (event.key === " ") panKey.current = held;
+      return event.key === " ";
+    },
+    listeners: {
+      onPointerDown: (event: PointerEvent<HTMLDivElement>): void => {
+        if (event.button > 1) return;
+        event.currentTarget.setPointerCapture(event.pointerId);
+        const [at, modifiers] = [placeOn(surface.current, event), modifiersOf(event)];
+        if (tool === "tape" && !modifiers.pan) tapeHand.press(at);
+        else hand.press(at, modifiers);
+      },
+      onPointerMove: (event: PointerEvent): void => {
+        const [at, modifiers] = [placeOn(surface.current, event), modifiersOf(event)];
+        setPlace(at);
+        if (tool === "tape" && !modifiers.pan) tapeHand.move(at);
+        else hand.move(at, modifiers);
+        props.onPointer(toTray(viewOf(trayView.getState()), ...at));
+      },
+      onPointerUp: (event: PointerEvent): void => {
+        const at = placeOn(surface.current, event);
+        if (tool === "tape") tapeHand.release(at);
+        hand.release(at, modifiersOf(event));
+      },
+      onPointerCancel: (): void => void hand.cancel(),
+      onPointerLeave: (): void => {
+        setPlace(null);
+        hand.leave();
+        props.onPointer(null);
+      },
+    },
+  };
+}
