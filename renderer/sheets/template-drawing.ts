@@ -38,10 +38,10 @@ function gridItems(lengthMm: number, widthMm: number, { grid, saveInk }: Drawing
   const step = grid === "fine" ? 1 : 5;
   const rule = (at: number): { width: number; ink: number } =>
     at % 10 === 0
-      ? { width: 0.14, ink: saveInk ? 0.72 : 0.55 }
+      ? { width: 0.14, ink: saveInk ? 0.76 : 0.64 }
       : at % 5 === 0
-        ? { width: 0.1, ink: saveInk ? 0.8 : 0.68 }
-        : { width: 0.05, ink: saveInk ? 0.88 : 0.8 };
+        ? { width: 0.1, ink: saveInk ? 0.84 : 0.76 }
+        : { width: 0.05, ink: saveInk ? 0.92 : 0.86 };
   for (const [along, across, vertical] of [
     [lengthMm, widthMm, true],
     [widthMm, lengthMm, false],
@@ -172,7 +172,11 @@ function label(
 ): void {
   const width = (bold ? fonts.bold : fonts.regular).widthOf(words, sizeMm) + 0.4;
   const { middle, far } = places.beside(at, width, sizeMm * 0.85, gap);
-  if (far) items.push(line([at, middle], 0.08, 0.4));
+  if (far) {
+    const away = Math.hypot(middle[0] - at[0], middle[1] - at[1]);
+    const start: Point = [at[0] + (gap * 0.8 * (middle[0] - at[0])) / away, at[1] + (gap * 0.8 * (middle[1] - at[1])) / away];
+    items.push(line([start, middle], 0.08, 0.4));
+  }
   const baseline = middle[1] - sizeMm * 0.36;
   items.push(outline([boxAround(middle, width, sizeMm * 0.9)], 0, null, 1));
   items.push(text(middle[0], baseline, words, sizeMm, { anchor: "middle", bold }));
