@@ -3,6 +3,7 @@ import type { Thing } from "../document/edit";
 import { gapMm, wallGapMm } from "../engine/geometry/clearance";
 import { bowHolds, type Loop, type Piece, pointAlong } from "../engine/geometry/outline";
 import { boxGapMm, type OutlinedShape } from "../engine/geometry/overlap";
+import { covers } from "../engine/geometry/signed-distance";
 import { outlinedThing } from "./hit";
 import type { Place } from "./view";
 
@@ -100,6 +101,18 @@ function wallGap(shape: OutlinedShape, tray: Tray): Gap | null {
   return placed.xMm === radius && placed.yMm === radius ? null : { from: at(radius - clear), to: at(radius), gapMm: clear };
 }
 
+/** Whether a part lies across the straight line between two places: then they are no neighbours. */
+function liesBetween(part: Thing, [from, to]: readonly [Place, Place]): boolean {
+  const [left, bottom, right, top] = outlinedThing(part).box;
+  const [dx, dy] = [to[0] - from[0], to[1] - from[1]];
+  if (Math.min(from[0], to[0]) > right || Math.max(from[0], to[0]) < left) return false;
+  if (Math.min(from[1], to[1]) > top || Math.max(from[1], to[1]) < bottom) return false;
+  const steps = Math.max(2, Math.ceil(Math.hypot(dx, dy)));
+  return Array.from({ length: steps - 1 }, (_, index) => (index + 1) / steps).some((share) =>
+    covers(part, from[0] + share * dx, from[1] + share * dy),
+  );
+}
+
 /** @returns the exact clear gap between two things, mm; 0 where they touch or overlap. */
 export const gapBetween = (a: Thing, b: Thing): number => gapMm(outlinedThing(a), outlinedThing(b));
 
@@ -114,11 +127,12 @@ export function gapsAround(thing: Thing, setup: Setup): readonly Gap[] {
     .map(({ shape }) => ({ shape, clear: gapMm(own, shape) }))
     .filter(({ clear }) => clear > 0)
     .sort((a, b) => a.clear - b.clear)
+    .map(({ shape, clear }) => ({ shape, clear, ends: nearestPlaces(own, shape) }))
+    .filter(
+      ({ shape, ends }) => !setup.parts.some((part) => part.id !== thing.id && part.id !== shape.placed.id && liesBetween(part, ends)),
+    )
     .slice(0, MOST_GAPS - 1)
-    .map(({ shape, clear }): Gap => {
-      const [from, to] = nearestPlaces(own, shape);
-      return { from, to, gapMm: clear };
-    });
+    .map(({ clear, ends: [from, to] }): Gap => ({ from, to, gapMm: clear }));
   const wall = wallGap(own, setup.tray);
   return wall === null ? neighbours : [...neighbours, wall];
 }

@@ -68,7 +68,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const paints = useFieldPaint(field, setup, view, theme, shown, props.markedPoints);
   const { hovered } = look;
   const emphasis = useMemo(() => ({ selection, hovered, findings }), [selection, hovered, findings]);
-  const parts = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed);
+  const parts = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed, look.gaps);
   const moving = look.live !== null && look.activeHandle === null;
   const handles = useMemo(
     () => (moving ? [] : shownHandles({ setup, selection, view, editable })),

@@ -4,6 +4,7 @@ import type { Setup } from "../../shared-types/setup";
 import { signedDistance } from "../engine/geometry/signed-distance";
 import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
 import { fieldPixels, imageOf } from "./field-image";
+import type { Gap } from "./gaps";
 import { outlinedThing } from "./hit";
 import { placeLabels, type Taken } from "./line-labels";
 import { decimalsForStep, fixed, trimmed } from "./number-text";
@@ -13,12 +14,12 @@ import { type Emphasis, paintEmphasis, paintTags, tagFont } from "./paint/hand";
 import { paintParts } from "./paint/parts";
 import type { Pen } from "./paint/pen";
 import { numberFont, paintPoints } from "./paint/points";
-import { paintOrigin, paintRules } from "./paint/rules";
-import { type Crowd, createCrowd, type PlacedPoint, placeNumbers, RING_PX } from "./point-numbers";
+import { paintOrigin, paintRules, rulesLieOver } from "./paint/rules";
+import { type Crowd, createCrowd, type PixelBox, type PlacedPoint, placeNumbers, RING_PX } from "./point-numbers";
 import { placeTags } from "./tags";
 import { type WidthOf, widthIn } from "./text-width";
 import type { CanvasTheme } from "./theme";
-import { toTray, type View } from "./view";
+import { toScreen, toTray, type View } from "./view";
 
 /** What is painted on each sheet of the stage, remade only when what it shows changes: under a drag the field's sheet rests. */
 
@@ -50,6 +51,16 @@ function crowdOf(placed: readonly PlacedPoint[]): Crowd {
     if (number !== null) crowd.add(number);
   }
   return crowd;
+}
+
+/** Small boxes along the line that shows a clear gap, so that tags leave it readable. */
+function alongGap({ from, to }: Gap, view: View): readonly PixelBox[] {
+  const [[x0, y0], [x1, y1]] = [toScreen(view, ...from), toScreen(view, ...to)];
+  const count = Math.max(1, Math.ceil(Math.hypot(x1 - x0, y1 - y0) / 16));
+  return Array.from({ length: count + 1 }, (_, index) => {
+    const [x, y] = [x0 + ((x1 - x0) * index) / count, y0 + ((y1 - y0) * index) / count];
+    return [x - 8, y - 8, x + 8, y + 8];
+  });
 }
 
 /** What labels along lines must leave free: points with their numbers, tags, and metal. */
@@ -84,6 +95,7 @@ export function useBenchPaint(setup: Setup, view: View, theme: CanvasTheme): Pai
     () => (pen: Pen) => {
       paintBench(pen, setup, view, theme);
       paintSlabs(pen, setup, view, theme);
+      if (!rulesLieOver(view)) paintRules(pen, tray, view, theme);
     },
     [tray, water, view, theme],
   );
@@ -145,7 +157,7 @@ export function useFieldPaint(
   const pointsPaint = useMemo(
     () => (pen: Pen) => {
       if (!outOfDate) paintPoints(pen, placed, theme, markedPoints);
-      paintRules(pen, tray, view, theme);
+      if (rulesLieOver(view)) paintRules(pen, tray, view, theme);
     },
     [placed, outOfDate, theme, markedPoints, tray, view],
   );
@@ -161,9 +173,14 @@ export function usePartsPaint(
   emphasis: Emphasis,
   tagsShown: boolean,
   points: readonly PlacedPoint[],
+  gaps: readonly Gap[],
 ): Paint {
   const widths = useWidths(theme);
-  const crowd = useMemo(() => crowdOf(points), [points]);
+  const crowd = useMemo(() => {
+    const taken = crowdOf(points);
+    for (const gap of gaps) for (const box of alongGap(gap, view)) taken.add(box);
+    return taken;
+  }, [points, gaps, view]);
   const { selection } = emphasis;
   const tags = useMemo(
     () => (tagsShown ? placeTags(setup, plan, view, widths.tag, new Set(selection), crowd) : []),

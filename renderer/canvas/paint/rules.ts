@@ -55,16 +55,26 @@ function body(pen: Pen, theme: CanvasTheme, x: number, y: number, width: number,
   pen.strokeRect(Math.round(x) + 0.5, Math.round(y) + 0.5, Math.round(width) - 1, Math.round(height) - 1);
 }
 
+/** Upper edge of the rule along x and right edge of the one along y, px, and whether one has slid from its place on the bench. */
+function placesOf(view: View): { readonly ruleTop: number; readonly ruleRight: number; readonly slid: boolean } {
+  const off = WALL_MM * view.scale + GAP_PX;
+  const [left, bottom] = toScreen(view, 0, 0);
+  const ruleTop = Math.min(bottom + off, view.heightPx - RULE_PX);
+  const ruleRight = Math.max(left - off, RULE_PX);
+  return { ruleTop, ruleRight, slid: ruleTop < bottom + off || ruleRight > left - off };
+}
+
+/** @returns whether the rules lie over the tray, because their own place is out of sight; else they lie below whatever is on the bench. */
+export const rulesLieOver = (view: View): boolean => placesOf(view).slid;
+
 /** Paints both rules, in mm from the tray's origin. */
 export function paintRules(pen: Pen, tray: Tray, view: View, theme: CanvasTheme): void {
   const [lengthMm, widthMm] = traySizeMm(tray);
   const { scale, widthPx, heightPx } = view;
   const marks = marksFor(scale);
-  const off = WALL_MM * scale + GAP_PX;
+  const { ruleTop, ruleRight } = placesOf(view);
   const [left, bottom] = toScreen(view, 0, 0);
   const [right, top] = toScreen(view, lengthMm, widthMm);
-  const ruleTop = Math.min(bottom + off, heightPx - RULE_PX);
-  const ruleRight = Math.max(left - off, RULE_PX);
   pen.font = `11px ${theme.font}`;
   pen.textBaseline = "middle";
 

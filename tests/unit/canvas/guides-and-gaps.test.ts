@@ -49,8 +49,13 @@ describe("snapping while a part moves", () => {
 describe("the clear gap", () => {
   it("between the bars is what a ruler would show", () => {
     expect(gapBetween(only(looseRing, "A"), only(looseRing, "B"))).toBeCloseTo(160, 9);
+  });
+
+  it("is shown to the nearest neighbours and the wall, not to a part behind another", () => {
     const gaps = gapsAround(only(looseRing, "A"), looseRing);
-    expect(gaps.map(({ gapMm }) => gapMm)).toEqual([50, 160, 50].map((gap) => expect.closeTo(gap, 9)));
+    expect(gaps.map(({ gapMm }) => gapMm)).toEqual([50, 50].map((gap) => expect.closeTo(gap, 9)));
+    const without = { ...looseRing, parts: looseRing.parts.slice(0, 2) };
+    expect(gapsAround(only(without, "A"), without)[0]?.gapMm).toBeCloseTo(160, 9);
   });
 
   it("is drawn between places that lie on both outlines and that far apart", () => {
