@@ -1,7 +1,7 @@
 import type { DocumentState } from "../document/document";
 import { thingById, thingName, thingsOf } from "../document/edit";
+import { sizeText } from "../document/number-text";
 import { placeWords } from "./describe-thing";
-import { sizeText } from "./number-text";
 
 const capital = (text: string): string => `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
 

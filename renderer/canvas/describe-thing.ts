@@ -1,5 +1,5 @@
 import { isPart, type Thing, thingName } from "../document/edit";
-import { sizeText, trimmed } from "./number-text";
+import { sizeText, trimmed } from "../document/number-text";
 
 /** @returns where a thing lies, for a reader or a listener: "x 65, y 100 mm, turned 90°". */
 export function placeWords({ xMm, yMm, turnDeg, shape }: Thing): string {

@@ -2,12 +2,12 @@ import type { Setup } from "../../shared-types/setup";
 import { boxOfAll, moveThings, placeThing, resizeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
 import { type BoxMm, isPart, namesOf, type Thing, thingById, thingsById, thingsOf, tidyMm } from "../document/edit";
+import { sizeText, trimmed } from "../document/number-text";
 import { traySizeMm } from "../engine/geometry/tray-outline";
 import { type Gap, gapsAround } from "./gaps";
 import { type Guide, snappedMove } from "./guides";
 import { draggedHandle, type Handle, handlesOf, type Placed } from "./handles";
 import { boxOfThing, handleAt, thingAt, thingsWithin } from "./hit";
-import { sizeText, trimmed } from "./number-text";
 import { type Place, toTray, type View } from "./view";
 
 /** What the pointer does on the tray: select, frame, move, turn, resize, pan. No DOM: places in px of the stage come in, edits go out. */

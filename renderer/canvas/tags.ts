@@ -1,9 +1,9 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Part, Setup } from "../../shared-types/setup";
 import { radians } from "../../shared-types/units";
+import { trimmed } from "../document/number-text";
 import { covers } from "../engine/geometry/signed-distance";
 import { outlinedThing } from "./hit";
-import { trimmed } from "./number-text";
 import { type Crowd, createCrowd, type PixelBox } from "./point-numbers";
 import { toScreen, toTray, type View } from "./view";
 

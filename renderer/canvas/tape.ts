@@ -1,8 +1,8 @@
 import type { Setup } from "../../shared-types/setup";
+import { trimmed } from "../document/number-text";
 import { pointAlong } from "../engine/geometry/outline";
 import { closestOnOutline } from "./gaps";
 import { outlinedThing, topDown } from "./hit";
-import { trimmed } from "./number-text";
 import { type Place, toScreen, toTray, type View } from "./view";
 
 /** The measuring tape: pulled from one place to another, it holds to corners, edges and middles of what lies there. */

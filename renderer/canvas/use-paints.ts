@@ -1,13 +1,13 @@
 import { useMemo } from "react";
 import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import { decimalsForStep, fixed, trimmed } from "../document/number-text";
 import { signedDistance } from "../engine/geometry/signed-distance";
 import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
 import { fieldPixels, imageOf } from "./field-image";
 import type { Gap } from "./gaps";
 import { outlinedThing } from "./hit";
 import { placeLabels, type Taken } from "./line-labels";
-import { decimalsForStep, fixed, trimmed } from "./number-text";
 import { paintBench, paintSlabs, paintWallEdge } from "./paint/bench";
 import { type FieldParts, labelFont, paintEquipotentials, paintFieldLines, paintPicture } from "./paint/field";
 import { type Emphasis, paintEmphasis, paintTags, tagFont } from "./paint/hand";

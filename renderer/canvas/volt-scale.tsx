@@ -1,6 +1,6 @@
 import type { Plan } from "../../shared-types/plan";
+import { trimmed } from "../document/number-text";
 import { colourAt, DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
-import { trimmed } from "./number-text";
 
 const STOPS = 16;
 

@@ -1,6 +1,5 @@
 import type { Host } from "../../shared-types/host";
 import { type Command, commandEntries } from "../../shared-types/host-commands";
-import type { TrayView } from "../canvas/view";
 import { duplicateThings, removeThings } from "../document/commands/parts";
 import type { Document } from "../document/document";
 import { thingsOf } from "../document/edit";
@@ -10,12 +9,19 @@ import type { Desk, WindowStore } from "./window-state";
 /** Does what a command of the menus, or its key, says. */
 export type Act = (command: Command) => void;
 
+/** How the tray is looked at. */
+export interface Zoom {
+  readonly zoomIn: () => void;
+  readonly zoomOut: () => void;
+  readonly fit: () => void;
+}
+
 export interface CommandSurroundings {
   readonly host: Host;
   readonly document: Document;
   readonly window: WindowStore;
   readonly files: Files;
-  readonly trayView: TrayView;
+  readonly trayView: Zoom;
   /** Sheets to a file, and to the printer. */
   readonly save: () => void;
   readonly print: () => void;

@@ -1,8 +1,8 @@
 import { useStore } from "zustand";
 import type { Bounded, Finding, Severity } from "../../shared-types/plan";
-import { fixed, trimmed } from "../canvas/number-text";
 import { applyRemedy } from "../document/commands/bench";
 import type { Document } from "../document/document";
+import { fixed, trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
 import { FindingsList, SeveritySign } from "./bench/findings-list";
 import { showFinding } from "./bench/show-finding";

@@ -1,12 +1,12 @@
 import { useStore } from "zustand";
 import type { Problem } from "../../shared-types/result";
 import type { Part, PartRole, Setup, Shape } from "../../shared-types/setup";
-import { trimmed } from "../canvas/number-text";
 import { setThickness } from "../document/commands/bench";
 import { duplicateThings, removeThings, setHeight, setMaterial, setName, setRole, setTap } from "../document/commands/parts";
 import { placeThing, resizeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
 import { type Edit, isPart, type Thing, thingName, thingsById } from "../document/edit";
+import { trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
 import { Icon } from "./icons";
 import { ChoiceField, NumberField, TextField } from "./number-field";

@@ -1,10 +1,10 @@
 import type { DragEvent } from "react";
 import type { Setup, Shape, ShapeKind } from "../../shared-types/setup";
-import { boxOfThing } from "../canvas/hit";
 import { addSlab } from "../document/commands/bench";
 import { addPart, freePlaceMm } from "../document/commands/parts";
 import type { Document } from "../document/document";
 import { FIRST_SHAPES, SHELF_PART_TYPE, shelfPartText } from "../document/shelf-part";
+import { boundsOf, outlineOf } from "../engine/geometry/outline";
 import { traySizeMm } from "../engine/geometry/tray-outline";
 import { PartPicture } from "./part-picture";
 
@@ -24,7 +24,7 @@ const FIRST_THICKNESS_MM = 4;
 /** The middle of free water for a new shape. */
 function freePlace(setup: Setup, shape: Shape): readonly [number, number] {
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  return freePlaceMm(setup, shape, boxOfThing, [0, 0, lengthMm, widthMm]);
+  return freePlaceMm(setup, shape, (thing) => boundsOf(outlineOf(thing)), [0, 0, lengthMm, widthMm]);
 }
 
 /** The shelf of parts: dragged onto the tray, or placed in free water by a click or the Enter key. */

@@ -1,6 +1,21 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
-import type { PointerReadout } from "../canvas/readout";
-import type { Shown } from "../canvas/use-paints";
+
+/** What the tray shows of the plan. */
+export interface Shown {
+  readonly picture: boolean;
+  readonly equipotentials: boolean;
+  readonly fieldLines: boolean;
+  readonly points: boolean;
+  readonly tags: boolean;
+}
+
+/** What a probe would read under the pointer. */
+export interface PointerReadout {
+  readonly xMm: number;
+  readonly yMm: number;
+  readonly volts: number | null;
+  readonly fieldVPerCm: number;
+}
 
 /** The places of work round the tray. */
 export type Desk = "lay-out" | "bench" | "probe-plan" | "sheets";

@@ -1,6 +1,6 @@
+import { trimmed } from "../../document/number-text";
 import type { Gap } from "../gaps";
 import type { Guide } from "../guides";
-import { trimmed } from "../number-text";
 import type { CanvasTheme } from "../theme";
 import { toScreen, type View } from "../view";
 import { type Pen, traceBox } from "./pen";

@@ -1,11 +1,11 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { type PlacedLabel, placeLabels } from "../../../renderer/canvas/line-labels";
-import { decimalsForStep, fixed, trimmed } from "../../../renderer/canvas/number-text";
 import { boxesMeet, createCrowd, discMeetsBox, placeNumbers, RING_PX } from "../../../renderer/canvas/point-numbers";
 import { createReadout, type PointerReadout, type SampleSource } from "../../../renderer/canvas/readout";
 import { placeTags } from "../../../renderer/canvas/tags";
 import { createTrayView, viewOf } from "../../../renderer/canvas/view";
+import { decimalsForStep, fixed, trimmed } from "../../../renderer/document/number-text";
 import type { Equipotential, FieldReading, ProbePoint } from "../../../shared-types/plan";
 import { looseRing } from "../document/fixtures";
 
