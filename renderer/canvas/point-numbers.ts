@@ -34,6 +34,10 @@ export const boxesMeet = (a: PixelBox, b: PixelBox): boolean => a[0] < b[2] && b
 export const discMeetsBox = (x: number, y: number, radius: number, box: PixelBox): boolean =>
   Math.hypot(Math.max(box[0] - x, 0, x - box[2]), Math.max(box[1] - y, 0, y - box[3])) < radius;
 
+const SQUARE_PX = 48;
+/** More squares than any stage is high. */
+const SQUARES_UP = 65_536;
+
 /** Boxes that are taken, sorted into squares of the stage, so that neighbours are found without asking all. */
 export interface Crowd {
   readonly add: (box: PixelBox) => void;
@@ -42,20 +46,24 @@ export interface Crowd {
 
 /** @returns a crowd without boxes. */
 export function createCrowd(): Crowd {
-  const SQUARE_PX = 48;
-  const squares = new Map<string, PixelBox[]>();
-  const keysOf = (box: PixelBox): string[] => {
-    const keys: string[] = [];
+  const squares = new Map<number, PixelBox[]>();
+  /** The numbers of the squares that a box touches. */
+  function squaresOf(box: PixelBox): number[] {
+    const touched: number[] = [];
     for (let x = Math.floor(box[0] / SQUARE_PX); x <= Math.floor(box[2] / SQUARE_PX); x++) {
-      for (let y = Math.floor(box[1] / SQUARE_PX); y <= Math.floor(box[3] / SQUARE_PX); y++) keys.push(`${x} ${y}`);
+      for (let y = Math.floor(box[1] / SQUARE_PX); y <= Math.floor(box[3] / SQUARE_PX); y++) touched.push(x * SQUARES_UP + y);
     }
-    return keys;
-  };
+    return touched;
+  }
   return {
     add: (box) => {
-      for (const key of keysOf(box)) squares.set(key, [...(squares.get(key) ?? []), box]);
+      for (const square of squaresOf(box)) {
+        const held = squares.get(square);
+        if (held === undefined) squares.set(square, [box]);
+        else held.push(box);
+      }
     },
-    meets: (box) => keysOf(box).some((key) => squares.get(key)?.some((other) => boxesMeet(box, other)) ?? false),
+    meets: (box) => squaresOf(box).some((square) => squares.get(square)?.some((other) => boxesMeet(box, other)) ?? false),
   };
 }
 

@@ -1,17 +1,16 @@
 import type { Shape } from "../../shared-types/setup";
 
-/** Numbers as the canvas writes them: the decimal sign of the user's language, never more digits than asked for. */
-const formats = new Map<number, Intl.NumberFormat>();
+/**
+ * Numbers as the screen writes them: the decimal sign of the user's language, never more digits than asked for. Hundreds of them
+ * are written in a frame, so that the sign is asked for once and the digits come without a formatter.
+ */
+const DECIMAL_SIGN = new Intl.NumberFormat().formatToParts(1.5).find(({ type }) => type === "decimal")?.value ?? ".";
 
-/** @returns a number with exactly so many decimals, such as "3.00"; a true minus sign. */
+/** @returns a number with exactly so many decimals, such as "3.00"; a true minus sign, and none before zero. */
 export function fixed(value: number, decimals: number): string {
-  let format = formats.get(decimals);
-  if (format === undefined) {
-    format = new Intl.NumberFormat(undefined, { minimumFractionDigits: decimals, maximumFractionDigits: decimals, useGrouping: false });
-    formats.set(decimals, format);
-  }
-  const text = format.format(value);
-  return (/[1-9]/.test(text) ? text : text.replace("-", "")).replace("-", "−");
+  const digits = Math.abs(value).toFixed(decimals);
+  const text = DECIMAL_SIGN === "." ? digits : digits.replace(".", DECIMAL_SIGN);
+  return value < 0 && /[1-9]/.test(digits) ? `−${text}` : text;
 }
 
 /** @returns a number with at most so many decimals, trailing zeros dropped, such as "6" or "0.5". */
