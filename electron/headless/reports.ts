@@ -1,13 +1,20 @@
-import type { Bounded, FieldReading, Finding, Plan, ProbePoint } from "../shared-types/plan";
+import type { Bounded, FieldReading, Finding, Plan, ProbePoint } from "../../shared-types/plan";
 
 /** What the headless command prints: the contract's keys, numbers with the digits that their bound is worth. */
 
-/** @returns the number with two digits beyond its bound; null for what is no number. */
+/** Decimals that are given beyond the first figure of a bound: rounding then adds less than a thousandth of it. */
+const FIGURES_BEYOND_BOUND = 3;
+/** More figures than this a double does not hold. */
+const MOST_FIGURES = 17;
+
+/** @returns the number with the figures that its bound is worth; null for what is no number. */
 function worth(value: number | null, error: number): number | null {
   if (value === null || !Number.isFinite(value)) return null;
-  if (!(error > 0) || value === 0) return value;
-  const decimals = 3 - Math.floor(Math.log10(error));
-  return decimals > 20 || decimals < -20 ? value : Number(`${Math.round(Number(`${value}e${decimals}`))}e${-decimals}`);
+  if (!(error > 0 && error < Infinity) || value === 0) return value + 0;
+  const decimals = FIGURES_BEYOND_BOUND - Math.floor(Math.log10(error));
+  const figures = Math.floor(Math.log10(Math.abs(value))) + 1 + decimals;
+  if (figures < 1) return 0;
+  return figures >= MOST_FIGURES ? value : Number(value.toPrecision(figures));
 }
 
 /** @returns a bound rounded to three figures. */
@@ -36,7 +43,7 @@ export function solveReport(plan: Plan, readings: readonly FieldReading[]): obje
       id: conductor.id,
       role: conductor.role,
       volts: worth(conductor.volts, conductor.voltsError),
-      voltsError: bound(conductor.voltsError),
+      voltsError: Number.isFinite(conductor.volts) ? bound(conductor.voltsError) : null,
       currentA: worth(conductor.currentA, conductor.currentErrorA),
       currentErrorA: bound(conductor.currentErrorA),
     })),
