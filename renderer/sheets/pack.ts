@@ -40,6 +40,8 @@ export function scaleFault(scale: Point): string | null {
   return `the printer's scale is ${bad}, allowed: ${LEAST_SCALE} to ${MOST_SCALE}; a bar that is farther off was printed “fit to page”`;
 }
 
+const titleOf = ({ title }: Setup): string => (title.trim() === "" ? "Untitled tray" : title);
+
 /** @returns the first stop that the rules found, in words, or null. */
 const doNotUse = (plan: Plan): string | null => plan.findings.find(({ severity }) => severity === "stop")?.message ?? null;
 
@@ -52,13 +54,12 @@ export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options
   const [scaleX, scaleY] = options.printerScale;
   // A page is composed in the millimetres that come out; a printer that prints long therefore has more room on its sheet.
   const paper: Point = [PAPERS[options.paper][0] * scaleX, PAPERS[options.paper][1] * scaleY];
-  const bare = options.sheets.flatMap((name) =>
-    SHEETS[name].pages({ setup, plan, fonts, paper, options }).map((page) => ({ ...page, sheet: name })),
-  );
   const reason = doNotUse(plan);
+  const input = { setup, plan, fonts, paper, stopped: reason !== null, options };
+  const bare = options.sheets.flatMap((name) => SHEETS[name].pages(input).map((page) => ({ ...page, sheet: name })));
   const pages = bare.map(({ sheet, title, widthMm, heightMm, items }, index): Page => {
     const facts = {
-      setup,
+      name: titleOf(setup),
       setupId: plan.setupId,
       date: options.date,
       version: options.version,
@@ -68,14 +69,14 @@ export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options
       printerScale: options.printerScale,
       doNotUse: reason,
     };
-    return { sheet, title, widthMm, heightMm, items: [...items, ...furniture(widthMm, heightMm, facts)] };
+    const { head, foot } = furniture(widthMm, heightMm, facts, fonts);
+    return { sheet, title, widthMm, heightMm, printerScale: options.printerScale, items: [...head, ...items, ...foot] };
   });
   return {
-    title: setup.title === "" ? "Untitled tray" : setup.title,
+    title: titleOf(setup),
     setupId: plan.setupId,
     date: options.date,
     version: options.version,
-    printerScale: options.printerScale,
     pages,
   };
 }

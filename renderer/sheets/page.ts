@@ -31,6 +31,10 @@ export interface TextItem {
   readonly bold?: boolean;
   readonly turnDeg?: number;
   readonly ink?: Ink;
+  /** A white plate of this width and height under the text, round its middle: keeps it readable over a grid. Needs anchor "middle". */
+  readonly plateMm?: Point;
+  /** Large pale words that lie under everything else on purpose. */
+  readonly backdrop?: boolean;
 }
 
 /** Items that are cut off at a rectangle [left, bottom, right, top] and moved by an offset. */
@@ -50,6 +54,8 @@ export interface Page {
   readonly title: string;
   readonly widthMm: number;
   readonly heightMm: number;
+  /** What the printer makes of a true length along x and y; the page is shrunk or stretched against it. */
+  readonly printerScale: Point;
   readonly items: readonly Item[];
 }
 
@@ -59,8 +65,6 @@ export interface Pack {
   readonly setupId: string;
   readonly date: string;
   readonly version: string;
-  /** What the printer makes of a true length along x and y; the pages are shrunk or stretched against it. */
-  readonly printerScale: Point;
   readonly pages: readonly Page[];
 }
 
@@ -132,6 +136,27 @@ export const circle = (
   });
   return outline([chain], lineMm, stroke, fill);
 };
+
+/** How far below the middle of figures and capitals their baseline lies, as a share of the size (DejaVu Sans: capitals 0.729 high). */
+const HALF_CAPITAL = 0.3645;
+
+/** @returns the plate of a text as [left, bottom, width, height], or null. */
+export function plateOf({ x, y, sizeMm, plateMm }: TextItem): readonly [number, number, number, number] | null {
+  if (plateMm === undefined) return null;
+  return [x - plateMm[0] / 2, y + HALF_CAPITAL * sizeMm - plateMm[1] / 2, ...plateMm];
+}
+
+/** @returns text on a white plate, both round their middle. */
+export const plate = ([x, y]: Point, words: string, sizeMm: number, plateMm: Point, bold: boolean): TextItem => ({
+  kind: "text",
+  x,
+  y: y - HALF_CAPITAL * sizeMm,
+  text: words,
+  sizeMm,
+  anchor: "middle",
+  bold,
+  plateMm,
+});
 
 /** @returns text; see TextItem. */
 export const text = (

@@ -13,27 +13,35 @@ export type PaperName = keyof typeof PAPERS;
 
 /** What printers leave blank at every edge, mm (they differ: 4 to 6.7 mm); nothing is printed nearer. */
 export const PRINTER_EDGE_MM = 7;
-/** Room for the furniture round a page's content: check bar at the left, header above, footer with check bar below. */
+/** Room round a page's content: check bar and figures at the left, header above, check bar, figures and notes below. */
 const LEFT_MM = 13;
 const ABOVE_MM = 12;
-const BELOW_MM = 21;
+const BELOW_MM = 25;
+/** Height of the band that stands under the header while the setup may not be used. */
+export const STOP_BAND_MM = 11;
+
+/** A page's size and what its furniture leaves. */
+export interface Sheet {
+  readonly widthMm: number;
+  readonly heightMm: number;
+  /** Whether the band stands on it that forbids the use. */
+  readonly stopped: boolean;
+}
 
 /** The part of a page that its content has, [left, bottom, right, top] in mm. */
-export function contentOf(widthMm: number, heightMm: number): readonly [number, number, number, number] {
+export function contentOf({ widthMm, heightMm, stopped }: Sheet): readonly [number, number, number, number] {
   const edge = PRINTER_EDGE_MM;
-  return [edge + LEFT_MM, edge + BELOW_MM, widthMm - edge, heightMm - edge - ABOVE_MM];
+  return [edge + LEFT_MM, edge + BELOW_MM, widthMm - edge, heightMm - edge - ABOVE_MM - (stopped ? STOP_BAND_MM : 0)];
 }
 
 /** Overlap of neighbouring tiles, mm. */
 export const OVERLAP_MM = 10;
 
-export interface Tiling {
-  readonly widthMm: number;
-  readonly heightMm: number;
+export interface Tiling extends Sheet {
   readonly columns: number;
   readonly rows: number;
-  /** Step from tile to tile, mm. */
-  readonly step: Point;
+  /** Width and height of what a page can show, mm. */
+  readonly window: Point;
 }
 
 const tilesAlong = (sizeMm: number, windowMm: number): number =>
@@ -43,21 +51,22 @@ const tilesAlong = (sizeMm: number, windowMm: number): number =>
  * Lays out tiles for a drawing of a size: the orientation with the fewest tiles, upright where both need as many.
  * @param paper its size upright, mm, as the printer sees true lengths.
  */
-export function tilingFor(drawing: Point, paper: Point): Tiling {
+export function tilingFor(drawing: Point, paper: Point, stopped: boolean): Tiling {
   const options = [paper, [paper[1], paper[0]] as const].map(([widthMm, heightMm]): Tiling => {
-    const [left, bottom, right, top] = contentOf(widthMm, heightMm);
+    const [left, bottom, right, top] = contentOf({ widthMm, heightMm, stopped });
     const window: Point = [right - left, top - bottom];
-    return {
-      widthMm,
-      heightMm,
-      columns: tilesAlong(drawing[0], window[0]),
-      rows: tilesAlong(drawing[1], window[1]),
-      step: [window[0] - OVERLAP_MM, window[1] - OVERLAP_MM],
-    };
+    return { widthMm, heightMm, stopped, columns: tilesAlong(drawing[0], window[0]), rows: tilesAlong(drawing[1], window[1]), window };
   });
   const [upright, across] = options;
   return across.columns * across.rows < upright.columns * upright.rows ? across : upright;
 }
+
+/** @returns what each of `count` tiles shows of an axis from `start`, mm: intervals that overlap by OVERLAP_MM. */
+export const tileIntervals = (start: number, count: number, windowMm: number): (readonly [number, number])[] =>
+  Array.from({ length: count }, (_, k) => {
+    const from = start + k * (windowMm - OVERLAP_MM);
+    return [from, from + windowMm] as const;
+  });
 
 /** @returns the label of a tile: letters from left to right, numbers from the reader's side away: A1, B1, A2 … */
 export const tileLabel = (column: number, row: number): string => `${String.fromCharCode(65 + column)}${row + 1}`;

@@ -1,5 +1,5 @@
 import { jsPDF } from "jspdf";
-import type { ClippedItem, Ink, Item, Pack, PathItem, TextItem } from "./page";
+import { type ClippedItem, type Ink, type Item, type Pack, type Page, type PathItem, plateOf, type TextItem } from "./page";
 
 /** The font files that are embedded, as bytes of TrueType. */
 export interface FontFiles {
@@ -63,10 +63,18 @@ class PagePen {
     else document.stroke();
   }
 
-  private text({ x, y, text: words, sizeMm, anchor, bold, turnDeg, ink }: TextItem): void {
+  private text(item: TextItem): void {
     const { document } = this;
+    const { x, y, text: words, sizeMm, anchor, bold, turnDeg, ink } = item;
+    const plate = plateOf(item);
+    if (plate !== null) {
+      const [left, bottom, width, height] = plate;
+      document.setFillColor(255, 255, 255);
+      document.rect(this.x(left), this.y(bottom + height), width / this.scaleX, height / this.scaleY, "F");
+    }
     document.setFont(FAMILY, bold ? "bold" : "normal");
-    document.setFontSize(sizeMm * POINTS_PER_MM);
+    // Type keeps its shape; the larger of the two corrections keeps it within its room.
+    document.setFontSize((sizeMm * POINTS_PER_MM) / Math.max(this.scaleX, this.scaleY));
     document.setTextColor(...rgb(ink ?? 0));
     let [left, base] = [this.x(x), this.y(y)];
     if (anchor !== "start") {
@@ -110,10 +118,9 @@ function fileIdOf({ setupId, date, title }: Pack): string {
  * @returns the pack as PDF: true to scale, fonts embedded, asking viewers not to scale it.
  */
 export function packPdf(pack: Pack, fonts: FontFiles, createdOn: string): Uint8Array<ArrayBuffer> {
-  const [scaleX, scaleY] = pack.printerScale;
   const [first] = pack.pages;
   if (first === undefined) throw new RangeError("a pack without pages cannot be printed; choose at least one sheet");
-  const sizeOf = ({ widthMm, heightMm }: { widthMm: number; heightMm: number }): [number, number] => [widthMm / scaleX, heightMm / scaleY];
+  const sizeOf = ({ widthMm, heightMm, printerScale: [x, y] }: Page): [number, number] => [widthMm / x, heightMm / y];
   const orientation = ([width, height]: readonly [number, number]): "portrait" | "landscape" => (width > height ? "landscape" : "portrait");
   const document = new jsPDF({
     unit: "mm",
@@ -137,7 +144,7 @@ export function packPdf(pack: Pack, fonts: FontFiles, createdOn: string): Uint8A
   document.viewerPreferences({ PrintScaling: "None", DisplayDocTitle: true });
   pack.pages.forEach((page, index) => {
     if (index > 0) document.addPage(sizeOf(page), orientation(sizeOf(page)));
-    const pen = new PagePen(document, page.heightMm, scaleX, scaleY);
+    const pen = new PagePen(document, page.heightMm, ...page.printerScale);
     for (const item of page.items) pen.draw(item);
   });
   return new Uint8Array(document.output("arraybuffer"));

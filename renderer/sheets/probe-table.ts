@@ -1,7 +1,7 @@
 import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import type { SheetFonts } from "./font-metrics";
-import type { Point } from "./page";
+import type { Sheet } from "./paper";
 import { type Column, type Row, type TablePage, tablePages } from "./table";
 
 const plain = (value: number, decimals: number): string => value.toFixed(decimals).replace("-", "−");
@@ -25,7 +25,7 @@ const CLASS: readonly Column[] = [
  * The probe table: for staff with what the meter should read and its tolerance band (k = 2), for the class with blanks.
  * @returns one entry a page.
  */
-export function probeTable(setup: Setup, plan: Plan, forClass: boolean, page: Point, fonts: SheetFonts): TablePage[] {
+export function probeTable(setup: Setup, plan: Plan, forClass: boolean, page: Sheet, fonts: SheetFonts): TablePage[] {
   const { digitVolts, rangeVolts } = plan.bench.meter;
   const decimals = Math.max(0, Math.ceil(-Math.log10(digitVolts) - 1e-9));
   const cells = (point: ProbePoint): Row => ({

@@ -1,12 +1,14 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import { traySizeMm } from "../engine/geometry/tray-outline";
 import type { SheetFonts } from "./font-metrics";
 import type { BarePage, PackOptions } from "./pack";
 import type { Point } from "./page";
+import { type Sheet as PaperSheet, tilingFor } from "./paper";
 import { probeTable } from "./probe-table";
 import type { TablePage } from "./table";
-import { trayDrawing } from "./template-drawing";
-import { tilesOf } from "./tiles";
+import { drawingBounds, trayDrawing } from "./template-drawing";
+import { columnsOf, rowsOf, tilesOf } from "./tiles";
 
 /** All that a sheet is made from. */
 export interface SheetInput {
@@ -15,6 +17,8 @@ export interface SheetInput {
   readonly fonts: SheetFonts;
   /** The paper upright, mm. */
   readonly paper: Point;
+  /** Whether the pages carry the band that forbids the use. */
+  readonly stopped: boolean;
   readonly options: PackOptions;
 }
 
@@ -23,7 +27,9 @@ interface Sheet {
   readonly pages: (input: SheetInput) => BarePage[];
 }
 
-const tabled = (title: string, [widthMm, heightMm]: Point, pages: readonly TablePage[]): BarePage[] =>
+const upright = ({ paper: [widthMm, heightMm], stopped }: SheetInput): PaperSheet => ({ widthMm, heightMm, stopped });
+
+const tabled = (title: string, { paper: [widthMm, heightMm] }: SheetInput, pages: readonly TablePage[]): BarePage[] =>
   pages.map(({ items }, index) => ({
     title: pages.length > 1 ? `${title}, ${index + 1} of ${pages.length}` : title,
     widthMm,
@@ -31,18 +37,20 @@ const tabled = (title: string, [widthMm, heightMm]: Point, pages: readonly Table
     items,
   }));
 
-const tiled = (title: string, input: SheetInput, answers: boolean): BarePage[] => {
-  const { setup, plan, fonts, paper, options } = input;
-  const drawing = trayDrawing(setup, plan, fonts, {
-    points: answers && options.points,
-    parts: true,
-    grid: options.grid,
-    saveInk: options.saveInk,
-    mirrored: answers && options.mirrored,
-  });
-  const tiles = tilesOf(drawing, paper);
+/** A 1:1 sheet of the tray, on as many tiles as it needs. */
+const tiled = (title: string, { setup, plan, fonts, paper, stopped, options }: SheetInput, answers: boolean): BarePage[] => {
+  const mirrored = answers && options.mirrored;
+  const bounds = drawingBounds(setup);
+  const tiling = tilingFor([bounds[2] - bounds[0], bounds[3] - bounds[1]], paper, stopped);
+  const choice = { points: answers && options.points, grid: options.grid, saveInk: options.saveInk, mirrored };
+  const drawing = trayDrawing(setup, plan, fonts, choice, columnsOf(bounds, tiling), rowsOf(bounds, tiling));
+  const [lengthMm, widthMm] = traySizeMm(setup.tray);
+  const reader = mirrored ? "mirrored: lay it face down, ▼ this side towards the reader" : "▼ this side towards the reader";
+  const missing = drawing.leftOut === 0 ? "" : ` · ${drawing.leftOut} numbers or names found no room: see the probe table`;
+  const note = `${reader} · thick outline: inside of the wall, its lower left corner is 0, 0${missing}`;
+  const tiles = tilesOf(drawing, tiling, { lengthMm, widthMm, mirrored, note }, fonts);
   return tiles.map(({ label, widthMm, heightMm, items }) => ({
-    title: `${title} 1:1${answers && options.mirrored ? ", mirrored" : ""}${tiles.length > 1 ? `, tile ${label}` : ""}`,
+    title: `${title} 1:1${mirrored ? ", mirrored" : ""}${tiles.length > 1 ? `, tile ${label}` : ""}`,
     widthMm,
     heightMm,
     items,
@@ -55,11 +63,11 @@ export const SHEETS = {
   record: { title: "Record sheet", pages: (input) => tiled("Record sheet", input, false) },
   "probe-table": {
     title: "Probe table for staff",
-    pages: ({ setup, plan, fonts, paper }) => tabled("Probe table", paper, probeTable(setup, plan, false, paper, fonts)),
+    pages: (input) => tabled("Probe table for staff", input, probeTable(input.setup, input.plan, false, upright(input), input.fonts)),
   },
   "class-table": {
     title: "Probe table for the class",
-    pages: ({ setup, plan, fonts, paper }) => tabled("Probe table for the class", paper, probeTable(setup, plan, true, paper, fonts)),
+    pages: (input) => tabled("Probe table for the class", input, probeTable(input.setup, input.plan, true, upright(input), input.fonts)),
   },
 } as const satisfies Readonly<Record<string, Sheet>>;
 

@@ -1,4 +1,4 @@
-import type { Ink, Item, Page, PathItem, TextItem } from "./page";
+import { type Ink, type Item, type Page, type PathItem, plateOf, type TextItem } from "./page";
 
 /** A page as SVG for the screen, from the very data that the PDF is drawn from. */
 
@@ -17,9 +17,15 @@ function pathSvg({ chains, closed, stroke, fill, lineMm, dashMm }: PathItem, hei
   return `<path d="${d}" fill="${fill === null ? "none" : colour(fill)}" fill-rule="evenodd" stroke="${stroke === null ? "none" : colour(stroke)}" stroke-width="${lineMm}"${dash}/>`;
 }
 
-function textSvg({ x, y, text, sizeMm, anchor, bold, turnDeg, ink }: TextItem, height: number): string {
+function textSvg(item: TextItem, height: number): string {
+  const { x, y, text, sizeMm, anchor, bold, turnDeg, ink } = item;
+  const plate = plateOf(item);
+  const under =
+    plate === null
+      ? ""
+      : `<rect x="${mm(plate[0])}" y="${mm(height - plate[1] - plate[3])}" width="${mm(plate[2])}" height="${mm(plate[3])}" fill="#fff"/>`;
   const turn = turnDeg === undefined ? "" : ` transform="rotate(${-turnDeg} ${mm(x)} ${mm(height - y)})"`;
-  return `<text x="${mm(x)}" y="${mm(height - y)}" font-size="${sizeMm}"${bold ? ' font-weight="700"' : ""} text-anchor="${anchor}" fill="${colour(ink ?? 0)}"${turn}>${escaped(text)}</text>`;
+  return `${under}<text x="${mm(x)}" y="${mm(height - y)}" font-size="${sizeMm}"${bold ? ' font-weight="700"' : ""} text-anchor="${anchor}" fill="${colour(ink ?? 0)}"${turn}>${escaped(text)}</text>`;
 }
 
 function itemSvg(item: Item, height: number, next: () => number): string {

@@ -1,6 +1,6 @@
 import type { SheetFonts } from "./font-metrics";
-import { type Item, line, type Point, text } from "./page";
-import { contentOf } from "./paper";
+import { type Item, line, text } from "./page";
+import { contentOf, type Sheet } from "./paper";
 
 /** A column of a printed table. */
 export interface Column {
@@ -41,16 +41,16 @@ function cellItem(x: number, y: number, column: Column, words: string, bold: boo
 
 /**
  * Sets rows into as many columns of tables and pages as they need; a heading never stands alone at the foot.
- * @param page the sheet's size, mm. @returns the items of each page.
+ * @param page the paper that the table stands on. @returns the items of each page.
  */
 export function tablePages(
   columns: readonly Column[],
   rows: readonly Row[],
-  page: Point,
+  page: Sheet,
   fonts: SheetFonts,
   intro: readonly string[] = [],
 ): TablePage[] {
-  const [left, bottom, right, top] = contentOf(page[0], page[1]);
+  const [left, bottom, right, top] = contentOf(page);
   const width = columns.reduce((sum, column) => sum + column.widthMm, 0);
   const across = Math.max(1, Math.floor((right - left + 8) / (width + 8)));
   const pages: Item[][] = [];

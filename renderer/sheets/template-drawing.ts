@@ -1,16 +1,15 @@
 import type { Plan, ProbePoint } from "../../shared-types/plan";
-import type { Part, Setup } from "../../shared-types/setup";
-import { radians } from "../../shared-types/units";
+import type { Setup } from "../../shared-types/setup";
 import { boundsOf, chainOf, outlineOf } from "../engine/geometry/outline";
 import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
 import type { SheetFonts } from "./font-metrics";
-import { type LabelPlaces, labelPlaces } from "./label-places";
-import { circle, line, outline, type PathItem, type Point, type TextItem, text } from "./page";
+import { type Box, besideBox, besidePoint, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
+import { circle, line, outline, type PathItem, type Point, plate, type TextItem } from "./page";
+import { CHORD_MM, chainsOf, crossArmMm, partMarks, tagsOf } from "./part-marks";
 
 /** What a drawing of the tray at full size shows; y away from the reader, origin in the tray's lower left corner. */
 export interface DrawingChoice {
   readonly points: boolean;
-  readonly parts: boolean;
   /** Lines of the grid: every millimetre, every 5 mm, or none. */
   readonly grid: "fine" | "coarse" | "none";
   readonly saveInk: boolean;
@@ -20,233 +19,190 @@ export interface DrawingChoice {
 
 export interface Drawing {
   /** [left, bottom, right, top] of everything, mm. */
-  readonly bounds: readonly [number, number, number, number];
+  readonly bounds: Box;
   readonly items: readonly (PathItem | TextItem)[];
+  /** Point numbers and part tags for which there was no room. */
+  readonly leftOut: number;
 }
 
-/** Room round the tray for the scales' figures, mm. */
-const MARGIN = { left: 8, bottom: 6.5, right: 3, top: 3 };
-/** Chords stray at most this from true arcs, mm: less than a printer's dot. */
-const CHORD_MM = 0.005;
+/** Room round the tray's inside for its own line, mm. */
+const MARGIN_MM = 0.8;
 const POINT_RADIUS_MM = 1.3;
+const TAG_MM = 3;
+const NUMBER_SIZES_MM = [2.5, 2];
+/** Share of the size that capitals and figures are high, with a little air. */
+const PLATE_HEIGHT = 0.86;
 
-const rounded = (value: number): string => String(Number(value.toFixed(2)));
+/** @returns [left, bottom, right, top] of a tray's drawing, mm; the same mirrored. */
+export function drawingBounds(setup: Setup): Box {
+  const [lengthMm, widthMm] = traySizeMm(setup.tray);
+  return [-MARGIN_MM, -MARGIN_MM, lengthMm + MARGIN_MM, widthMm + MARGIN_MM];
+}
 
+/** Lines of the grid by weight: every 10 mm, every 5 mm, every millimetre. */
 function gridItems(lengthMm: number, widthMm: number, { grid, saveInk }: DrawingChoice): PathItem[] {
   if (grid === "none") return [];
-  const lines: PathItem[] = [];
-  const step = grid === "fine" ? 1 : 5;
-  const rule = (at: number): { width: number; ink: number } =>
-    at % 10 === 0
-      ? { width: 0.14, ink: saveInk ? 0.76 : 0.64 }
-      : at % 5 === 0
-        ? { width: 0.1, ink: saveInk ? 0.84 : 0.76 }
-        : { width: 0.05, ink: saveInk ? 0.92 : 0.86 };
-  for (const [along, across, vertical] of [
-    [lengthMm, widthMm, true],
-    [widthMm, lengthMm, false],
-  ] as const) {
-    const weights = new Map<string, { width: number; ink: number; chains: Point[][] }>();
-    for (let at = 0; at <= along + 1e-9; at += step) {
-      const { width, ink } = rule(at);
-      const entry = weights.get(`${width}`) ?? { width, ink, chains: [] };
-      entry.chains.push(
-        vertical
-          ? [
-              [at, 0],
-              [at, across],
-            ]
-          : [
-              [0, at],
-              [across, at],
-            ],
-      );
-      weights.set(`${width}`, entry);
-    }
-    for (const { width, ink, chains } of weights.values())
-      lines.push({ kind: "path", chains, closed: false, stroke: ink, fill: null, lineMm: width });
-  }
-  return lines;
+  const weights = [
+    { belongs: (at: number) => at % 10 === 0, lineMm: 0.15, ink: saveInk ? 0.7 : 0.55 },
+    { belongs: (at: number) => at % 5 === 0 && at % 10 !== 0, lineMm: 0.1, ink: saveInk ? 0.78 : 0.66 },
+    { belongs: (at: number) => at % 5 !== 0 && grid === "fine", lineMm: 0.05, ink: saveInk ? 0.86 : 0.78 },
+  ];
+  return weights.map(({ belongs, lineMm, ink }): PathItem => {
+    const chains: Point[][] = [];
+    for (let x = 0; x <= lengthMm + 1e-9; x++)
+      if (belongs(x))
+        chains.push([
+          [x, 0],
+          [x, widthMm],
+        ]);
+    for (let y = 0; y <= widthMm + 1e-9; y++)
+      if (belongs(y))
+        chains.push([
+          [0, y],
+          [lengthMm, y],
+        ]);
+    return { kind: "path", chains, closed: false, stroke: ink, fill: null, lineMm };
+  });
 }
-
-function scaleItems(lengthMm: number, widthMm: number): TextItem[] {
-  const figures: TextItem[] = [];
-  for (let x = 0; x <= lengthMm + 1e-9; x += 10) figures.push(text(x, -4, String(x), 2.4, { anchor: "middle", ink: 0.25 }));
-  for (let y = 0; y <= widthMm + 1e-9; y += 10) figures.push(text(-1.2, y - 0.85, String(y), 2.4, { anchor: "end", ink: 0.25 }));
-  return figures;
-}
-
-/** What stands beside a part: sign and volts, or what it is. */
-function tagOf(part: Part, volts: number): string {
-  const name = part.name === "" ? part.id : part.name;
-  switch (part.role) {
-    case "electrode":
-      return `${part.tap === 0 ? "−" : part.tap === 1 ? "+" : "tap"} ${rounded(part.tap * volts)} V  ${name}`;
-    case "floating":
-      return `floating  ${name}`;
-    case "insulator":
-      return `insulator  ${name}`;
-  }
-}
-
-function hatching(part: Part): PathItem {
-  const [left, bottom, right, top] = boundsOf(outlineOf(part));
-  const chains: Point[][] = [];
-  const height = top - bottom;
-  const inside = partTest(part);
-  for (let start = left - height; start < right; start += 3) {
-    let run: Point[] = [];
-    for (let y = 0; y <= height; y += 0.25) {
-      const place: Point = [start + y, bottom + y];
-      if (inside(place)) run.push(place);
-      else {
-        if (run.length > 2) chains.push([run[0], run[run.length - 1]]);
-        run = [];
-      }
-    }
-    if (run.length > 2) chains.push([run[0], run[run.length - 1]]);
-  }
-  return { kind: "path", chains, closed: false, stroke: 0.45, fill: null, lineMm: 0.1 };
-}
-
-const partTest = (part: Part): ((place: Point) => boolean) => {
-  const loops = outlineOf(part).map((loop) => chainOf(loop, 0.05));
-  return ([x, y]) => {
-    let odd = false;
-    for (const chain of loops) {
-      chain.forEach(([x0, y0], index) => {
-        const [x1, y1] = chain[(index + 1) % chain.length];
-        if (y0 > y !== y1 > y && x < x0 + ((y - y0) / (y1 - y0)) * (x1 - x0)) odd = !odd;
-      });
-    }
-    return odd;
-  };
-};
-
-/** Outline, centre cross and turn mark of a part. */
-function partItems(part: Part, saveInk: boolean): PathItem[] {
-  const loops = outlineOf(part).map((loop) => chainOf(loop, CHORD_MM));
-  const fill = part.role === "insulator" || saveInk ? null : part.role === "electrode" ? 0.86 : 0.93;
-  const turn = radians(part.turnDeg);
-  const [c, s] = [Math.cos(turn), Math.sin(turn)];
-  const arm = 3;
-  const items = [outline(loops, 0.35, 0, fill)];
-  if (part.role === "insulator") items.push(hatching(part));
-  for (const [dx, dy] of [
-    [c, s],
-    [-s, c],
-  ]) {
-    items.push(
-      line(
-        [
-          [part.xMm - arm * dx, part.yMm - arm * dy],
-          [part.xMm + arm * dx, part.yMm + arm * dy],
-        ],
-        0.15,
-      ),
-    );
-  }
-  // The mark of the turn: a small open arrow on the arm that points along the part's own +x.
-  items.push(
-    line(
-      [
-        [part.xMm + arm * c - 1.1 * c - 0.7 * s, part.yMm + arm * s - 1.1 * s + 0.7 * c],
-        [part.xMm + arm * c, part.yMm + arm * s],
-        [part.xMm + arm * c - 1.1 * c + 0.7 * s, part.yMm + arm * s - 1.1 * s - 0.7 * c],
-      ],
-      0.15,
-    ),
-  );
-  return items;
-}
-
-function label(
-  items: (PathItem | TextItem)[],
-  places: LabelPlaces,
-  fonts: SheetFonts,
-  at: Point,
-  words: string,
-  sizeMm: number,
-  gap: number,
-  bold: boolean,
-): void {
-  const width = (bold ? fonts.bold : fonts.regular).widthOf(words, sizeMm) + 0.4;
-  const { middle, far } = places.beside(at, width, sizeMm * 0.85, gap);
-  if (far) {
-    const away = Math.hypot(middle[0] - at[0], middle[1] - at[1]);
-    const start: Point = [at[0] + (gap * 0.8 * (middle[0] - at[0])) / away, at[1] + (gap * 0.8 * (middle[1] - at[1])) / away];
-    items.push(line([start, middle], 0.08, 0.4));
-  }
-  const baseline = middle[1] - sizeMm * 0.36;
-  items.push(outline([boxAround(middle, width, sizeMm * 0.9)], 0, null, 1));
-  items.push(text(middle[0], baseline, words, sizeMm, { anchor: "middle", bold }));
-}
-
-const boxAround = ([x, y]: Point, width: number, height: number): Point[] => [
-  [x - width / 2, y - height / 2],
-  [x + width / 2, y - height / 2],
-  [x + width / 2, y + height / 2],
-  [x - width / 2, y + height / 2],
-];
 
 /** All points of a plan in visiting order. */
 export const pointsOf = (plan: Plan): readonly ProbePoint[] =>
   [...plan.probing.levels.flatMap(({ points }) => points), ...plan.probing.checks].sort((a, b) => a.n - b.n);
 
-/** @returns the tray at full size with what `choice` asks for. */
-export function trayDrawing(setup: Setup, plan: Plan, fonts: SheetFonts, choice: DrawingChoice): Drawing {
-  const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  const bounds = [-MARGIN.left, -MARGIN.bottom, lengthMm + MARGIN.right, widthMm + MARGIN.top] as const;
-  const items: (PathItem | TextItem)[] = [...gridItems(lengthMm, widthMm, choice), ...scaleItems(lengthMm, widthMm)];
-  items.push(outline([chainOf(trayOutline(setup.tray), CHORD_MM)], 0.5));
-  const places = labelPlaces([0.5, 0.5, lengthMm - 0.5, widthMm - 0.5]);
-  if (choice.parts) {
-    for (const slab of setup.water.slabs) {
-      items.push({
-        ...outline(
-          outlineOf(slab).map((loop) => chainOf(loop, CHORD_MM)),
-          0.25,
-          0.2,
-        ),
-        dashMm: [3, 1.5],
-      });
-      items.push(text(slab.xMm, slab.yMm, `slab ${rounded(slab.thicknessMm)} mm`, 2.6, { anchor: "middle", ink: 0.25 }));
-    }
-    for (const part of setup.parts) items.push(...partItems(part, choice.saveInk));
-  }
-  const points = choice.points ? pointsOf(plan) : [];
-  for (const { xMm, yMm } of points) {
-    const r = POINT_RADIUS_MM + 0.2;
-    places.take([xMm - r, yMm - r, xMm + r, yMm + r]);
-  }
-  if (choice.parts) {
-    for (const part of setup.parts) {
-      const [left, bottom, right, top] = boundsOf(outlineOf(part));
-      const solid =
-        part.shape.kind === "ring" || part.shape.kind === "frame" || part.shape.kind === "arc"
-          ? null
-          : ([left, bottom, right, top] as const);
-      if (solid !== null) places.take(solid);
-      label(items, places, fonts, [(left + right) / 2, top], tagOf(part, setup.supply.volts), 3.2, 2, true);
-    }
-  }
-  for (const { xMm, yMm } of points) {
-    items.push(circle(xMm, yMm, POINT_RADIUS_MM, 0.18, 0, 1), circle(xMm, yMm, 0.22, 0, null, 0));
-  }
-  for (const { n, xMm, yMm } of points) label(items, places, fonts, [xMm, yMm], String(n), 2.5, POINT_RADIUS_MM + 0.5, true);
-  return choice.mirrored ? mirrored({ bounds, items }, lengthMm) : { bounds, items };
+/** Where a leader ends: on the border of the plate, on the way to its middle. */
+function borderTowards([x, y]: Point, [middleX, middleY]: Point, width: number, height: number): Point {
+  const [dx, dy] = [x - middleX, y - middleY];
+  const share = Math.min(1, width / 2 / Math.abs(dx || 1e-9), height / 2 / Math.abs(dy || 1e-9));
+  return [middleX + share * dx, middleY + share * dy];
 }
 
-/** The drawing seen from below: x becomes length − x, while text stays readable. */
-function mirrored({ bounds, items }: Drawing, lengthMm: number): Drawing {
-  const flip = ([x, y]: Point): Point => [lengthMm - x, y];
+/** Tags of parts and slabs, each in its fullest wording that finds room. */
+function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items: (PathItem | TextItem)[]; leftOut: number } {
+  const items: (PathItem | TextItem)[] = [];
+  const tagged = [
+    ...setup.parts.map((part) => ({ placed: part, tags: tagsOf(part, setup.supply.volts), sizeMm: TAG_MM, bold: true })),
+    ...setup.water.slabs.map((slab) => ({
+      placed: slab,
+      tags: [`slab ${slab.id}, ${Number(slab.thicknessMm.toFixed(2))} mm`, `slab ${slab.id}`],
+      sizeMm: 2.5,
+      bold: false,
+    })),
+  ];
+  let leftOut = 0;
+  for (const { placed, tags, sizeMm, bold } of tagged) {
+    const box = boundsOf(outlineOf(placed));
+    const centre: Point = [(box[0] + box[2]) / 2, (box[1] + box[3]) / 2];
+    const height = sizeMm * PLATE_HEIGHT + 0.3;
+    const found = (function* () {
+      for (const farMm of [4, 60]) {
+        for (const words of tags) {
+          const width = (bold ? fonts.bold : fonts.regular).widthOf(words, sizeMm) + 0.8;
+          const middle = places.place(besideBox(box, width, height, 1.2, farMm), width, height);
+          if (middle !== null) yield { words, middle, width };
+        }
+      }
+    })().next().value;
+    if (found === undefined) {
+      leftOut++;
+      continue;
+    }
+    const { words, middle, width } = found;
+    const gap = Math.max(
+      box[0] - middle[0] - width / 2,
+      middle[0] - width / 2 - box[2],
+      box[1] - middle[1] - height / 2,
+      middle[1] - height / 2 - box[3],
+    );
+    if (gap > 4) items.push(line([centre, borderTowards(centre, middle, width, height)], 0.1, 0.3));
+    items.push(plate(middle, words, sizeMm, [width, height], bold));
+  }
+  return { items, leftOut };
+}
+
+/** Rings with a dot at the probe points, and their numbers where there is room. */
+function pointItems(
+  points: readonly ProbePoint[],
+  places: LabelPlaces,
+  fonts: SheetFonts,
+): { items: (PathItem | TextItem)[]; leftOut: number } {
+  const marks = points.flatMap(({ xMm, yMm }) => [circle(xMm, yMm, POINT_RADIUS_MM, 0.15, 0, 1), circle(xMm, yMm, 0.25, 0, null, 0)]);
+  const items: (PathItem | TextItem)[] = [];
+  let leftOut = 0;
+  for (const { n, xMm, yMm } of points) {
+    const found = (function* () {
+      for (const sizeMm of NUMBER_SIZES_MM) {
+        const width = fonts.bold.widthOf(String(n), sizeMm) + 0.5;
+        const height = sizeMm * PLATE_HEIGHT;
+        const middle = places.place(besidePoint([xMm, yMm], width, height, POINT_RADIUS_MM + 0.35, 9), width, height);
+        if (middle !== null) yield { middle, width, height, sizeMm };
+      }
+    })().next().value;
+    if (found === undefined) {
+      leftOut++;
+      continue;
+    }
+    const { middle, width, height, sizeMm } = found;
+    const end = borderTowards([xMm, yMm], middle, width, height);
+    const distance = Math.hypot(end[0] - xMm, end[1] - yMm);
+    if (distance > POINT_RADIUS_MM + 1.2) {
+      const share = POINT_RADIUS_MM / distance;
+      items.push(line([[xMm + share * (end[0] - xMm), yMm + share * (end[1] - yMm)], end], 0.1, 0.3));
+    }
+    items.push(plate(middle, String(n), sizeMm, [width, height], true));
+  }
+  return { items: [...marks, ...items], leftOut };
+}
+
+/**
+ * @param columns what each tile shows of x, `rows` of y, in the drawing's own mm: labels keep whole within a tile.
+ * @returns the tray at full size with what `choice` asks for.
+ */
+export function trayDrawing(
+  setup: Setup,
+  plan: Plan,
+  fonts: SheetFonts,
+  choice: DrawingChoice,
+  columns: readonly Interval[],
+  rows: readonly Interval[],
+): Drawing {
+  const [lengthMm, widthMm] = traySizeMm(setup.tray);
+  const bounds = drawingBounds(setup);
+  // Everything is composed as seen from above and turned over at the end, so the tiles are turned over first.
+  const seenColumns = choice.mirrored ? columns.map(([from, to]): Interval => [lengthMm - to, lengthMm - from]) : columns;
+  const places = labelPlaces([0.6, 0.6, lengthMm - 0.6, widthMm - 0.6], seenColumns, rows);
+  const points = choice.points ? pointsOf(plan) : [];
+  const wall = chainOf(trayOutline(setup.tray), CHORD_MM);
+  const slabs = setup.water.slabs.map((slab) => outlineOf(slab).map((loop) => chainOf(loop, CHORD_MM)));
+  places.takeOutline(wall);
+  for (const chain of [...slabs.flat(), ...setup.parts.flatMap(chainsOf)]) places.takeOutline(chain);
+  for (const part of setup.parts) {
+    const { xMm, yMm } = part;
+    const r = crossArmMm(part) + 0.3;
+    places.takeBox([xMm - r, yMm - r, xMm + r, yMm + r]);
+  }
+  for (const { xMm, yMm } of points) {
+    const r = POINT_RADIUS_MM + 0.2;
+    places.takeBox([xMm - r, yMm - r, xMm + r, yMm + r]);
+  }
+  const tags = tagItems(setup, places, fonts);
+  const numbers = pointItems(points, places, fonts);
+  const items: (PathItem | TextItem)[] = [
+    ...gridItems(lengthMm, widthMm, choice),
+    outline([wall], 0.45),
+    ...slabs.map((chains) => ({ ...outline(chains, 0.25, 0.15), dashMm: [3, 1.5] as const })),
+    ...setup.parts.flatMap((part) => partMarks(part, choice.saveInk)),
+    ...tags.items,
+    ...numbers.items,
+  ];
+  return { bounds, items: choice.mirrored ? turnedOver(items, lengthMm) : items, leftOut: tags.leftOut + numbers.leftOut };
+}
+
+/** The items seen from below: x becomes length − x, while text stays readable. */
+function turnedOver(items: readonly (PathItem | TextItem)[], lengthMm: number): (PathItem | TextItem)[] {
   const anchors = { start: "end", middle: "middle", end: "start" } as const;
-  return {
-    bounds: [lengthMm - bounds[2], bounds[1], lengthMm - bounds[0], bounds[3]],
-    items: items.map((item) =>
-      item.kind === "path"
-        ? { ...item, chains: item.chains.map((chain) => chain.map(flip)) }
-        : { ...item, x: lengthMm - item.x, anchor: anchors[item.anchor] },
-    ),
-  };
+  return items.map((item) =>
+    item.kind === "path"
+      ? { ...item, chains: item.chains.map((chain) => chain.map(([x, y]): Point => [lengthMm - x, y])) }
+      : { ...item, x: lengthMm - item.x, anchor: anchors[item.anchor] },
+  );
 }

@@ -1,6 +1,8 @@
+import type { SheetFonts } from "./font-metrics";
 import { alignmentCross } from "./furniture";
-import { box, type ClippedItem, type Item, line, type PathItem, type Point, type TextItem, text } from "./page";
-import { contentOf, OVERLAP_MM, type Tiling, tileLabel, tilingFor } from "./paper";
+import type { Box, Interval } from "./label-places";
+import { box, type ClippedItem, type Item, line, type PathItem, type Point, plateOf, type TextItem, text } from "./page";
+import { contentOf, OVERLAP_MM, PRINTER_EDGE_MM, type Tiling, tileIntervals, tileLabel } from "./paper";
 import type { Drawing } from "./template-drawing";
 
 /** A drawing spread over pages: what each page shows, without header and footer. */
@@ -11,106 +13,138 @@ export interface TilePage {
   readonly items: readonly Item[];
 }
 
-/** Where seams run: the middle of each overlap, in the drawing's own millimetres. */
-function seams(start: number, count: number, step: number): number[] {
-  return Array.from({ length: count - 1 }, (_, k) => start + (k + 1) * step + OVERLAP_MM / 2);
+/** What a tray's axes read and what is said under them. */
+export interface AxisWords {
+  /** Length of the axis along x, mm: with `mirrored` its figures run to the left. */
+  readonly lengthMm: number;
+  readonly widthMm: number;
+  readonly mirrored: boolean;
+  readonly note: string;
 }
 
-/** Crosses on every seam, two for each tile along it, and the line to cut along. */
-function seamItems(drawing: Drawing, { columns, rows, step }: Tiling, window: Point): (PathItem | TextItem)[] {
-  const [left, bottom, right, top] = drawing.bounds;
-  const items: (PathItem | TextItem)[] = [];
-  const stations = (start: number, count: number, stepMm: number, windowMm: number, end: number): number[] =>
-    Array.from({ length: count }, (_, k) => {
-      const from = start + k * stepMm + (k === 0 ? 0 : OVERLAP_MM);
-      const to = Math.min(end, start + k * stepMm + windowMm - OVERLAP_MM);
-      return [from + 0.2 * (to - from), from + 0.8 * (to - from)];
-    }).flat();
-  for (const x of seams(left, columns, step[0])) {
-    items.push(
-      line(
-        [
-          [x, bottom],
-          [x, top],
-        ],
-        0.1,
-        0.4,
-        [2, 2],
-      ),
-    );
-    for (const y of stations(bottom, rows, step[1], window[1], top)) items.push(...alignmentCross([x, y]));
+/** @returns which part of the drawing each column (or row) of tiles shows, mm. */
+export const columnsOf = ([left]: Box, { columns, window }: Tiling): Interval[] => tileIntervals(left, columns, window[0]);
+export const rowsOf = ([, bottom]: Box, { rows, window }: Tiling): Interval[] => tileIntervals(bottom, rows, window[1]);
+
+/** The middles of the overlaps between neighbouring intervals. */
+const seams = (intervals: readonly Interval[]): number[] => intervals.slice(1).map(([from]) => from + OVERLAP_MM / 2);
+
+/** Two places for crosses on each stretch of a seam that one tile shows alone. */
+function stations(intervals: readonly Interval[], end: number): number[] {
+  return intervals.flatMap(([from, to], index) => {
+    const start = index === 0 ? from : from + OVERLAP_MM;
+    const stop = Math.min(end, index + 1 < intervals.length ? to - OVERLAP_MM : to);
+    const [low, high] = [start + 6, stop - 6];
+    return high - low > 20 ? [low + 0.15 * (high - low), high - 0.15 * (high - low)] : [(start + stop) / 2];
+  });
+}
+
+/** Lines to trim along in the middle of every overlap, and the crosses on them. */
+function seamItems([left, bottom, right, top]: Box, columns: readonly Interval[], rows: readonly Interval[]): PathItem[] {
+  const trim = (from: Point, to: Point): PathItem => line([from, to], 0.12, 0.25, [2.5, 1.5]);
+  return [
+    ...seams(columns).flatMap((x) => [trim([x, bottom], [x, top]), ...stations(rows, top).flatMap((y) => alignmentCross([x, y]))]),
+    ...seams(rows).flatMap((y) => [trim([left, y], [right, y]), ...stations(columns, right).flatMap((x) => alignmentCross([x, y]))]),
+  ];
+}
+
+/** What a page shows of the drawing: paths that reach into it, texts that lie whole in it. */
+function shownIn([left, bottom, right, top]: Box, items: readonly (PathItem | TextItem)[]): (PathItem | TextItem)[] {
+  return items.flatMap((item): (PathItem | TextItem)[] => {
+    if (item.kind === "text") {
+      const plate = plateOf(item);
+      if (plate === null) return [item];
+      const [x, y, width, height] = plate;
+      return x >= left - 1e-6 && y >= bottom - 1e-6 && x + width <= right + 1e-6 && y + height <= top + 1e-6 ? [item] : [];
+    }
+    const chains = item.chains.filter((chain) => {
+      let [west, south, east, north] = [Infinity, Infinity, -Infinity, -Infinity];
+      for (const [x, y] of chain) {
+        west = Math.min(west, x);
+        east = Math.max(east, x);
+        south = Math.min(south, y);
+        north = Math.max(north, y);
+      }
+      return west <= right + 1 && east >= left - 1 && south <= top + 1 && north >= bottom - 1;
+    });
+    // With a filling, holes and outsides belong together.
+    if (chains.length === 0) return [];
+    return [item.fill === null ? { ...item, chains } : item];
+  });
+}
+
+/** Figures along the lower and the left edge of what a page shows, every 10 mm, and the note under them. */
+function axisItems(shown: Box, [dx, dy]: Point, { lengthMm, widthMm, mirrored }: AxisWords, endMm: number, fonts: SheetFonts): TextItem[] {
+  const [left, bottom, right, top] = shown;
+  const items: TextItem[] = [];
+  const fits = (x: number): boolean => x + dx + fonts.regular.widthOf(String(Math.round(x)), 2.3) / 2 <= endMm;
+  for (let x = 0; x <= lengthMm + 1e-9; x += 10) {
+    const at = mirrored ? lengthMm - x : x;
+    if (at >= left && at <= right && fits(at)) items.push(text(at + dx, bottom + dy - 3, String(x), 2.3, { anchor: "middle", ink: 0.2 }));
   }
-  for (const y of seams(bottom, rows, step[1])) {
-    items.push(
-      line(
-        [
-          [left, y],
-          [right, y],
-        ],
-        0.1,
-        0.4,
-        [2, 2],
-      ),
-    );
-    for (const x of stations(left, columns, step[0], window[0], right)) items.push(...alignmentCross([x, y]));
-  }
+  for (let y = 0; y <= widthMm + 1e-9; y += 10)
+    if (y >= bottom && y <= top) items.push(text(left + dx - 0.8, y + dy - 0.84, String(y), 2.3, { anchor: "end", ink: 0.2 }));
   return items;
 }
 
-/** A small plan of all tiles with this one marked. */
-function assemblyMap(x: number, y: number, { columns, rows }: Tiling, column: number, row: number): Item[] {
-  const cell = 5;
+/** A small plan of all tiles with this one marked, its lower right corner given. */
+function assemblyMap(right: number, bottom: number, { columns, rows }: Tiling, column: number, row: number): Item[] {
+  const cell = Math.min(5, 11.5 / rows, 60 / columns);
+  const [x, y] = [right - cell * columns, bottom];
   const items: Item[] = [];
   for (let r = 0; r < rows; r++) {
     for (let c = 0; c < columns; c++) {
       const here = c === column && r === row;
       items.push(box(x + c * cell, y + r * cell, cell, cell, 0.15, 0, here ? 0 : null));
+      if (cell < 3) continue;
+      const words = tileLabel(c, r);
       items.push(
-        text(x + (c + 0.5) * cell, y + (r + 0.5) * cell - 0.8, tileLabel(c, r), 2.2, { anchor: "middle", ink: here ? 1 : 0, bold: here }),
+        text(x + (c + 0.5) * cell, y + (r + 0.34) * cell, words, 0.44 * cell, { anchor: "middle", ink: here ? 1 : 0, bold: here }),
       );
     }
   }
   return items;
 }
 
-/**
- * Cuts a drawing into tiles of true size.
- * @param paper the sheet's size upright, mm, as the printer sees true lengths.
- */
-export function tilesOf(drawing: Drawing, paper: Point): TilePage[] {
-  const [left, bottom, right, top] = drawing.bounds;
-  const tiling = tilingFor([right - left, top - bottom], paper);
-  const { widthMm, heightMm, columns, rows, step } = tiling;
-  const content = contentOf(widthMm, heightMm);
-  const window: Point = [content[2] - content[0], content[3] - content[1]];
+/** Cuts a drawing into tiles of true size, in the order in which they are read: from the far side, left to right. */
+export function tilesOf(drawing: Drawing, tiling: Tiling, axis: AxisWords, fonts: SheetFonts): TilePage[] {
+  const { bounds } = drawing;
+  const { widthMm, heightMm, columns, rows, window } = tiling;
+  const content = contentOf(tiling);
+  const [across, along] = [columnsOf(bounds, tiling), rowsOf(bounds, tiling)];
   const single = columns * rows === 1;
-  const items = single ? drawing.items : [...drawing.items, ...seamItems(drawing, tiling, window)];
+  const items = single ? drawing.items : [...drawing.items, ...seamItems(bounds, across, along)];
   const pages: TilePage[] = [];
   for (let row = rows - 1; row >= 0; row--) {
     for (let column = 0; column < columns; column++) {
-      // A drawing smaller than its window lies in the middle.
-      const slackX = Math.max(0, (window[0] - (right - left)) / 2);
-      const slackY = Math.max(0, (window[1] - (top - bottom)) / 2);
-      const offset: Point = [
-        content[0] - left - column * step[0] + (columns === 1 ? slackX : 0),
-        content[1] - bottom - row * step[1] + (rows === 1 ? slackY : 0),
+      // A drawing smaller than what a page can show lies in the middle of it, and high rather than low.
+      const slackX = columns === 1 ? (window[0] - (bounds[2] - bounds[0])) / 2 : 0;
+      const slackY = rows === 1 ? (window[1] - (bounds[3] - bounds[1])) / 2 : 0;
+      const offset: Point = [content[0] - across[column][0] + slackX, content[1] - along[row][0] + slackY];
+      const shown: Box = [
+        Math.max(bounds[0], across[column][0] - slackX),
+        Math.max(bounds[1], along[row][0] - slackY),
+        Math.min(bounds[2], across[column][1]),
+        Math.min(bounds[3], along[row][1]),
       ];
-      const clipped: ClippedItem = { kind: "clipped", window: content, offset, items };
-      const furniture: Item[] = single
-        ? []
-        : [
-            ...assemblyMap(content[2] - 5 * columns - 1, 8.5, tiling, column, row),
-            text(
-              content[2] - 5 * columns - 3,
-              9.5,
-              `tile ${tileLabel(column, row)} of ${columns * rows}: lay the crosses on each other, cut along the dashes`,
-              2.5,
-              {
-                anchor: "end",
-              },
-            ),
-          ];
-      pages.push({ label: tileLabel(column, row), widthMm, heightMm, items: [clipped, ...furniture] });
+      const seen: Box = [shown[0] + offset[0], shown[1] + offset[1], shown[2] + offset[0], shown[3] + offset[1]];
+      const clipped: ClippedItem = { kind: "clipped", window: seen, offset, items: shownIn(shown, items) };
+      const label = tileLabel(column, row);
+      const right = widthMm - PRINTER_EDGE_MM;
+      const guide = `Tile ${label} of ${columns * rows}: lay cross on cross, trim one sheet along the dashes.`;
+      const noteWidth = fonts.regular.widthOf(axis.note, 2.4);
+      const noteX = Math.max(content[0] + noteWidth / 2, Math.min(content[2] - noteWidth / 2, (seen[0] + seen[2]) / 2));
+      const furniture: Item[] = [
+        ...axisItems(shown, offset, axis, right, fonts),
+        ...(row === 0 ? [text(noteX, seen[1] - 6.3, axis.note, 2.4, { anchor: "middle", ink: 0.1 })] : []),
+        ...(single
+          ? []
+          : [
+              text(right, PRINTER_EDGE_MM + 14.2, guide, 2.5, { anchor: "end" }),
+              ...assemblyMap(right, PRINTER_EDGE_MM + 1, tiling, column, row),
+            ]),
+      ];
+      pages.push({ label, widthMm, heightMm, items: [clipped, ...furniture] });
     }
   }
   return pages;

@@ -1,13 +1,14 @@
-import { execFileSync, spawnSync } from "node:child_process";
+import { execFileSync } from "node:child_process";
 import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 
-/** What a printer would make of a PDF: pages as dots of 300 an inch, measured like paper with a ruler. */
+/**
+ * What a printer would make of a PDF: pages as dots of 300 an inch, measured like paper with a ruler. Poppler's programs read
+ * the file (Debian package poppler-utils): readers that know nothing of what wrote it.
+ */
 
 export const DOTS_PER_MM = 300 / 25.4;
-/** Poppler's programs (Debian package poppler-utils) read the PDF: a reader that knows nothing of what wrote it. */
-export const POPPLER_MISSING = spawnSync("pdftoppm", ["-v"]).error !== undefined;
 
 export interface Print {
   readonly widthMm: number;
@@ -69,7 +70,12 @@ export const fontsOf = (pdf: Uint8Array): string[] =>
  * Where a dark line crosses a short way over the paper.
  * @returns the distance (mm) along the way from its middle to the middle of the nearest dark run; null when there is none.
  */
-export function lineAcross(print: Print, [x, y]: readonly [number, number], [dx, dy]: readonly [number, number], reachMm: number): number | null {
+export function lineAcross(
+  print: Print,
+  [x, y]: readonly [number, number],
+  [dx, dy]: readonly [number, number],
+  reachMm: number,
+): number | null {
   const step = 0.02;
   const runs: { from: number; to: number }[] = [];
   for (let at = -reachMm; at <= reachMm; at += step) {
