@@ -16,18 +16,29 @@ const MOST_OF_PLAIN = 20;
 const LEAST_OF_LINKS = -0.6;
 const MOST_OF_LINKS = 3;
 
-function fittedConductance(network: Network, node: number, potential: LocalPotential): number | null {
+/** Values of a local potential at nodes: neighbours ask for the same ones, and some are dear. */
+type NodeValues = (node: number) => number;
+
+function valuesOf(network: Network, potential: LocalPotential): NodeValues {
+  const { columns, pitchXMm, pitchYMm } = network.grid;
+  const { conduction } = network;
+  const known = new Map<number, number>();
+  return (node) => {
+    const before = known.get(node);
+    if (before !== undefined) return before;
+    const x = (node % columns) * pitchXMm;
+    const y = Math.floor(node / columns) * pitchYMm;
+    // With varying depth k, φ/√k is harmonic to the order that matters here.
+    const value = potential(x, y) / (conduction.isLevel ? 1 : Math.sqrt(Math.max(1e-6, conduction.depthAt(x, y))));
+    known.set(node, value);
+    return value;
+  };
+}
+
+function fittedConductance(network: Network, node: number, at: NodeValues): number | null {
   const { grid, east, north, active, conduction } = network;
   const { columns, pitchXMm, pitchYMm } = grid;
-  const level = conduction.isLevel;
   if (conduction.nearWaterline((node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm)) return null;
-  const at = (other: number): number => {
-    const x = (other % columns) * pitchXMm;
-    const y = Math.floor(other / columns) * pitchYMm;
-    const value = potential(x, y);
-    // With varying depth k, φ/√k is harmonic to the order that matters here.
-    return level ? value : value / Math.sqrt(Math.max(1e-6, conduction.depthAt(x, y)));
-  };
   const here = at(node);
   if (!(here > 0)) return null;
   let sum = 0;
@@ -65,12 +76,22 @@ function fitBody(
   const { columns, rows, pitchXMm, pitchYMm } = grid;
   const contact = network.contacts[body];
   const ties = new Map<number, number>();
+  const values = new Map<LocalPotential, NodeValues>();
+  const fittedAt = (node: number, potential: LocalPotential | null): number | null => {
+    if (potential === null) return null;
+    let at = values.get(potential);
+    if (at === undefined) {
+      at = valuesOf(network, potential);
+      values.set(potential, at);
+    }
+    return fittedConductance(network, node, at);
+  };
   contact.nodes.forEach((node, k) => {
     const plain = contact.conductances[k];
     ties.set(node, plain);
     if (shared.has(node) || active[node] === 0 || !isPlain(node)) return;
     const potential = field.at((node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm);
-    const fitted = potential === null ? null : fittedConductance(network, node, potential);
+    const fitted = fittedAt(node, potential);
     if (fitted !== null && fitted > LEAST_OF_PLAIN * plain && fitted < MOST_OF_PLAIN * plain) ties.set(node, fitted);
   });
   const [left, bottom, right, top] = layout.conductors[body].bounds;
@@ -88,7 +109,7 @@ function fitBody(
       const node = row * columns + column;
       if (active[node] === 0 || ties.has(node) || shared.has(node) || !isPlain(node)) continue;
       const potential = field.featureAt(column * pitchXMm, row * pitchYMm);
-      const fitted = potential === null ? null : fittedConductance(network, node, potential);
+      const fitted = fittedAt(node, potential);
       if (fitted === null) continue;
       const share = fitted / linkSum(network, node);
       if (share > LEAST_OF_LINKS && share < MOST_OF_LINKS) ties.set(node, fitted);
