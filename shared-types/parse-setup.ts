@@ -9,7 +9,7 @@ const DEEPEST_NESTING = 32;
 
 const shown = (value: unknown): string => {
   if (value === undefined) return "missing";
-  const text = JSON.stringify(value) ?? String(value);
+  const text = typeof value === "number" ? String(value) : (JSON.stringify(value) ?? String(value));
   return text.length > 60 ? `${text.slice(0, 57)}…` : text;
 };
 
@@ -25,22 +25,22 @@ function valueAt(data: unknown, path: readonly PropertyKey[]): unknown {
 const dotted = (path: readonly PropertyKey[]): string =>
   path.map((key, index) => (typeof key === "number" ? `[${key}]` : index === 0 ? String(key) : `.${String(key)}`)).join("");
 
+/** The count of a text's characters or a list's entries; numbers carry their range as message (setup.ts). */
+function allowedCount(bound: "least" | "most", limit: number | bigint, origin: string, message: string): string {
+  if (origin === "string") return `at ${bound} ${limit} characters`;
+  return origin === "array" ? `at ${bound} ${limit} entries` : message;
+}
+
 function allowed(issue: z.core.$ZodIssue): string {
   switch (issue.code) {
     case "too_small":
-      return issue.origin === "string"
-        ? `at least ${issue.minimum} characters`
-        : `at least ${issue.minimum}${issue.origin === "array" ? " entries" : ""}`;
+      return allowedCount("least", issue.minimum, issue.origin, issue.message);
     case "too_big":
-      return issue.origin === "string"
-        ? `at most ${issue.maximum} characters`
-        : `at most ${issue.maximum}${issue.origin === "array" ? " entries" : ""}`;
+      return allowedCount("most", issue.maximum, issue.origin, issue.message);
     case "invalid_type":
-      return issue.expected === "int" ? "a whole number" : `a ${issue.expected}`;
+      return issue.expected === "number" || issue.expected === "int" ? issue.message : `a ${issue.expected}`;
     case "invalid_value":
       return issue.values.map((value) => JSON.stringify(value)).join(" or ");
-    case "invalid_union":
-      return "one of the kinds that the README lists";
     default:
       return issue.message;
   }

@@ -7,8 +7,17 @@ import { polygonFault } from "./polygon-fault";
  * Origin: the lower-left inner corner of the tray (of a round tray: of its bounding square), y away from the reader.
  */
 
-const lengthMm = (low: number, high: number) => z.number().min(low).max(high);
-const coordinateMm = z.number().min(-10_000).max(10_000);
+/** A number of a range; whatever is wrong with it, the message says the whole range. */
+const between = (low: number, high: number) => {
+  const error = `${low} to ${high}`;
+  return z.number({ error }).min(low, { error }).max(high, { error });
+};
+const wholeBetween = (low: number, high: number) => {
+  const error = `a whole number from ${low} to ${high}`;
+  return z.number({ error }).int({ error }).min(low, { error }).max(high, { error });
+};
+const lengthMm = between;
+const coordinateMm = between(-10_000, 10_000);
 const pairMm = z.tuple([coordinateMm, coordinateMm]);
 const identifier = z.string().min(1).max(40);
 /** A word from an open list: materials, salts and sources that we do not know are kept, and treated with caution. */
@@ -21,7 +30,7 @@ const arcSchema = z.strictObject({
   kind: z.literal("arc"),
   outerMm: lengthMm(0.2, 4000),
   innerMm: lengthMm(0.1, 4000),
-  sweepDeg: z.number().min(1).max(359),
+  sweepDeg: between(1, 359),
 });
 const frameSchema = z.strictObject({
   kind: z.literal("frame"),
@@ -54,7 +63,7 @@ const shapeSchema = z
     }
   });
 
-const placement = { id: identifier, xMm: coordinateMm, yMm: coordinateMm, turnDeg: z.number().min(-3600).max(3600).default(0) };
+const placement = { id: identifier, xMm: coordinateMm, yMm: coordinateMm, turnDeg: between(-3600, 3600).default(0) };
 const partCommon = {
   ...placement,
   name: z.string().max(80).default(""),
@@ -63,7 +72,7 @@ const partCommon = {
   shape: shapeSchema,
 };
 const partSchema = z.discriminatedUnion("role", [
-  z.strictObject({ ...partCommon, role: z.literal("electrode"), tap: z.number().min(0).max(1) }),
+  z.strictObject({ ...partCommon, role: z.literal("electrode"), tap: between(0, 1) }),
   z.strictObject({ ...partCommon, role: z.literal("floating") }),
   z.strictObject({ ...partCommon, role: z.literal("insulator") }),
 ]);
@@ -81,58 +90,58 @@ const traySchema = z.discriminatedUnion("shape", [
 
 const waterSchema = z.strictObject({
   depthMm: lengthMm(0.5, 200),
-  tiltXDeg: z.number().min(-45).max(45).default(0),
-  tiltYDeg: z.number().min(-45).max(45).default(0),
-  conductivityUsPerCm: z.number().min(0.01).max(300_000),
-  temperatureC: z.number().min(0).max(95).default(25),
+  tiltXDeg: between(-45, 45).default(0),
+  tiltYDeg: between(-45, 45).default(0),
+  conductivityUsPerCm: between(0.01, 300_000),
+  temperatureC: between(0, 95).default(25),
   salt: openWord.default("none"),
   /** The conductivity that salt is to bring the water to, µS/cm at 25 °C; absent: no salt is to be added. */
-  targetConductivityUsPerCm: z.number().min(0.01).max(300_000).optional(),
+  targetConductivityUsPerCm: between(0.01, 300_000).optional(),
   slabs: z.array(slabSchema).max(64).default([]),
 });
 const supplySchema = z.strictObject({
   waveform: z.enum(["ac", "dc"]),
-  frequencyHz: z.number().min(0).max(1_000_000).default(50),
-  volts: z.number().min(0.001).max(1000),
-  currentLimitA: z.number().min(0.0001).max(1000).default(1),
+  frequencyHz: between(0, 1_000_000).default(50),
+  volts: between(0.001, 1000),
+  currentLimitA: between(0.0001, 1000).default(1),
   source: openWord.default("safety-isolated"),
   /** What the supply gives with nothing connected, V (a loaded 12 V transformer can stand at 16 V unloaded); absent: `volts`. */
-  openCircuitVolts: z.number().min(0.001).max(1000).optional(),
+  openCircuitVolts: between(0.001, 1000).optional(),
 });
 /** The surfaces where metal meets water. Absent keys are estimated from the material; a reading of the user's own replaces them. */
 const interfaceSchema = z.strictObject({
   /** Double-layer capacitance of the electrodes, µF/cm². */
-  doubleLayerUfPerCm2: z.number().min(0.1).max(1000).optional(),
+  doubleLayerUfPerCm2: between(0.1, 1000).optional(),
   /** DC only: volts lost at both electrodes together, measured by the user beside the electrodes. */
-  electrodeDropVolts: z.number().min(0).max(50).optional(),
+  electrodeDropVolts: between(0, 50).optional(),
   /** Whether the predicted readings allow for the volts lost at the surfaces. */
   inReadings: z.boolean().default(false),
 });
 const meterSchema = z.strictObject({
-  inputMegohm: z.number().min(0.0001).max(1_000_000).default(10),
-  counts: z.number().int().min(100).max(100_000_000).default(2000),
-  accuracyPercent: z.number().min(0).max(100).default(1),
-  accuracyDigits: z.number().min(0).max(1000).default(3),
+  inputMegohm: between(0.0001, 1_000_000).default(10),
+  counts: wholeBetween(100, 100_000_000).default(2000),
+  accuracyPercent: between(0, 100).default(1),
+  accuracyDigits: between(0, 1000).default(3),
   /** Capacitance across the input, pF: beside the megohms it loads the probe on AC. */
-  inputPicofarad: z.number().min(0).max(100_000).default(100),
+  inputPicofarad: between(0, 100_000).default(100),
   /** The frequencies at which the AC ranges keep their accuracy, Hz. */
-  acLowHz: z.number().min(0).max(10_000_000).default(40),
-  acHighHz: z.number().min(0.1).max(10_000_000).default(400),
+  acLowHz: between(0, 10_000_000).default(40),
+  acHighHz: between(0.1, 10_000_000).default(400),
 });
 const probingSchema = z.strictObject({
-  levels: z.number().int().min(1).max(99).default(7),
-  pointsPerLevel: z.number().int().min(1).max(200).default(7),
+  levels: wholeBetween(1, 99).default(7),
+  pointsPerLevel: wholeBetween(1, 200).default(7),
   probeTipMm: lengthMm(0.01, 50).default(1),
   wallClearanceMm: lengthMm(0, 500).default(5),
   partClearanceMm: lengthMm(0, 500).default(5),
   placementMm: lengthMm(0, 50).default(0.5),
 });
 const sessionSchema = z.strictObject({
-  minutes: z.number().min(0.1).max(10_000).default(40),
-  trays: z.number().int().min(1).max(1000).default(1),
+  minutes: between(0.1, 10_000).default(40),
+  trays: wholeBetween(1, 1000).default(1),
   /** Air that a cover or a hood with its fan off encloses over one tray, litres; and the room that all trays share, m³. */
-  hoodLitres: z.number().min(0.1).max(1_000_000).default(100),
-  roomCubicMetres: z.number().min(1).max(1_000_000).default(100),
+  hoodLitres: between(0.1, 1_000_000).default(100),
+  roomCubicMetres: between(1, 1_000_000).default(100),
 });
 
 export const setupSchema = z

@@ -62,7 +62,7 @@ function ownerOf(where: string, setup: Setup): readonly [owner: string, rest: st
 /**
  * A problem of the file contract as a person who edits on screen should read it.
  * @param setup the refused setup, for the names of its parts.
- * @returns the same problem, its message in words: "Left bar, length is 5000 mm, allowed: at most 4000 mm".
+ * @returns the same problem, its message in words: "Left bar, length is 5000 mm, allowed: 0.1 mm to 4000 mm".
  */
 export function inWords(problem: Problem, setup: Setup): Problem {
   const { where, message } = problem;

@@ -106,7 +106,7 @@ test("a finding leads to the field that it is about, also from the bottom line o
 test("a value out of range is refused in words and changes nothing", async ({ page }) => {
   const before = (await page.locator(".bench-verdict").textContent()) ?? "";
   await enter(page, "Depth at the centre", "900");
-  await expect(page.locator(".field-refusal")).toContainText("at most 200 mm");
+  await expect(page.locator(".field-refusal")).toContainText("0.5 mm to 200 mm");
   await expect(page.locator(".bench-verdict")).toHaveText(before);
 });
 

@@ -190,7 +190,7 @@ describe("what a listener hears", () => {
       "Move Left bar: x 75, y 100 mm, turned 90°",
       "Undone: move Left bar",
       "Redone: move Left bar: x 75, y 100 mm, turned 90°",
-      "Refused. Left bar, height is -4 mm, allowed: at least 0.1 mm",
+      "Refused. Left bar, height is -4 mm, allowed: 0.1 mm to 500 mm",
       "Nothing selected",
     ]);
   });

@@ -89,7 +89,7 @@ describe("an edit with a bad value", () => {
     expect(result.ok).toBe(false);
     expect(document.getState().setup).toBe(looseRing);
     expect(document.getState().past).toHaveLength(0);
-    expect(document.getState().refused.map(({ message }) => message)).toEqual(["Left bar, length is 5000 mm, allowed: at most 4000 mm"]);
+    expect(document.getState().refused.map(({ message }) => message)).toEqual(["Left bar, length is 5000 mm, allowed: 0.1 mm to 4000 mm"]);
   });
 
   it("says of a ring which of its two diameters is wrong", () => {

@@ -34,13 +34,16 @@ describe("a setup file", () => {
   });
 
   it.each([
-    ["tray.lengthMm", 12, ["tray.lengthMm", "12", "at least 20"]],
-    ["tray.widthMm", 2400, ["tray.widthMm", "2400", "at most 2000"]],
-    ["water.depthMm", 0.2, ["water.depthMm", "0.2", "at least 0.5"]],
-    ["water.depthMm", "ten", ["water.depthMm", '"ten"', "a number"]],
+    ["tray.lengthMm", 12, ["tray.lengthMm", "12", "20 to 2000"]],
+    ["tray.widthMm", 2400, ["tray.widthMm", "2400", "20 to 2000"]],
+    ["water.depthMm", 0.2, ["water.depthMm", "0.2", "0.5 to 200"]],
+    ["water.depthMm", "ten", ["water.depthMm", '"ten"', "0.5 to 200"]],
+    ["water.depthMm", undefined, ["water.depthMm", "missing", "0.5 to 200"]],
+    ["probing.levels", 2.5, ["probing.levels", "2.5", "a whole number from 1 to 99"]],
+    ["title", 7, ["title", "7", "a string"]],
     ["supply.waveform", "square", ["supply.waveform", '"square"', '"ac" or "dc"']],
     ["parts.0.role", "magnet", ["parts[0].role", '"magnet"', '"electrode"']],
-    ["parts.0.tap", 1.5, ["parts[0].tap", "1.5", "at most 1"]],
+    ["parts.0.tap", 1.5, ["parts[0].tap", "1.5", "0 to 1"]],
     ["parts.1.shape.innerMm", 70, ["parts[1].shape.innerMm", "70", "less than outerMm (60)"]],
     ["parts.1.shape.kind", "blob", ["parts[1].shape", "blob"]],
     ["parts.1.id", "A", ["parts[1].id", '"A"', "no other part"]],
