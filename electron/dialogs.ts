@@ -77,3 +77,13 @@ export async function tellOfFault(message: string, details: () => string, goOn: 
     clipboard.writeText(details());
   }
 }
+
+/** Says what this program is. */
+export async function showAbout(version: string): Promise<void> {
+  await dialog.showMessageBox({
+    type: "info",
+    message: `Fieldtray ${version}`,
+    detail: "Plans an electrolytic-tank session before any water is poured. MIT licence; the licences of its parts lie beside the program.",
+    buttons: ["Close"],
+  });
+}

@@ -3,7 +3,7 @@ import { app, BrowserWindow, clipboard, session, shell } from "electron";
 import { type RecentFile, settingsSchema } from "../shared-types/host";
 import type { Command } from "../shared-types/host-commands";
 import { openDoors } from "./channels";
-import { tellOfFault } from "./dialogs";
+import { showAbout, tellOfFault } from "./dialogs";
 import { doorsOf, followTheme } from "./doors";
 import { drafts as keepDrafts } from "./drafts";
 import { fileArguments } from "./file-arguments";
@@ -38,10 +38,12 @@ const details = (): string =>
 const files = knownFiles();
 const settings = ownFile(inUserData("settings.json"), settingsSchema, settingsSchema.parse({}), note);
 const drafts = keepDrafts(inUserData("drafts"), files, Date.now, note);
-const recent = recentSetups(ownFile(inUserData("recent.json"), recentSchema, [], note), files, Date.now, refreshMenu);
+const recentList = ownFile(inUserData("recent.json"), recentSchema, [], note);
+const recent = recentSetups(recentList, files, Date.now, refreshMenu);
+const place = ownFile(inUserData("window.json"), windowPlaceSchema.nullable(), null, note);
 const windows = openWindows({
   preload: preloadPath(),
-  place: ownFile(inUserData("window.json"), windowPlaceSchema.nullable(), null, note),
+  place,
   clearDraft: drafts.clear,
   onDied: (reason) => {
     log.write({ level: "error", message: `the window's page stopped: ${reason}` });
@@ -53,6 +55,7 @@ const windows = openWindows({
 });
 
 let quitting = false;
+let settled = false;
 /** Files that the system asked for before the first window could be opened. */
 let early: string[] | null = [];
 
@@ -71,6 +74,7 @@ function refreshMenu(list: readonly RecentFile[]): void {
     newWindow: () => void windows.open(),
     copyDetails: () => clipboard.writeText(details()),
     showLog: () => shell.showItemInFolder(log.path),
+    about: () => void showAbout(app.getVersion()),
   };
   showMenu(list, act, onMac);
 }
@@ -112,15 +116,24 @@ async function start(): Promise<void> {
   for (const path of named) await arrive(path);
 }
 
+let tellingOfFault = false;
+
+/** A fault of ours is written down and told of, one at a time: the telling itself may fail too. */
 function fault(error: unknown): void {
   log.write({ level: "error", message: error instanceof Error ? (error.stack ?? error.message) : String(error) });
+  if (tellingOfFault) return;
   if (!app.isReady()) {
     app.exit(1);
     return;
   }
-  void tellOfFault("Fieldtray has met a fault of its own.", details, "Go on").then((goOn) => {
-    if (!goOn) app.exit(1);
-  });
+  tellingOfFault = true;
+  tellOfFault("Fieldtray has met a fault of its own.", details, "Go on").then(
+    (goOn) => {
+      tellingOfFault = false;
+      if (!goOn) app.exit(1);
+    },
+    (reason: unknown) => log.write({ level: "error", message: `the fault could not be told of: ${String(reason)}` }),
+  );
 }
 
 guardPages(note);
@@ -132,6 +145,15 @@ app.on("open-file", (event, path) => {
 });
 app.on("before-quit", () => {
   quitting = true;
+});
+// What was set going in the last moment still gets to the disk.
+app.on("will-quit", (event) => {
+  if (settled) return;
+  event.preventDefault();
+  void Promise.all([settings, recentList, place].map((file) => file.settled())).then(() => {
+    settled = true;
+    app.quit();
+  });
 });
 app.on("window-all-closed", () => {
   if (!onMac) app.quit();

@@ -9,6 +9,7 @@ export interface MenuActions {
   readonly newWindow: () => void;
   readonly copyDetails: () => void;
   readonly showLog: () => void;
+  readonly about: () => void;
 }
 
 const SEPARATOR: MenuItemConstructorOptions = { type: "separator" };
@@ -42,6 +43,7 @@ export function menuTemplate(recent: readonly RecentFile[], act: MenuActions, on
     SEPARATOR,
     { id: "copy-details", label: "Copy details for a report", click: act.copyDetails },
     { id: "show-log", label: "Show the log file", click: act.showLog },
+    { id: "about", label: "About Fieldtray", click: act.about },
   );
   const ofWindow: MenuItemConstructorOptions[] = [
     { role: "togglefullscreen", label: "Full screen" },

@@ -8,6 +8,8 @@ export interface OwnFile<Value> {
   /** @returns the value; the fallback when there is none, or none that can be used (then the damaged file is put aside). */
   readonly read: () => Promise<Value>;
   readonly write: (value: Value) => Promise<void>;
+  /** Resolves once everything that was to be written is on the disk or has failed. */
+  readonly settled: () => Promise<void>;
 }
 
 /** @param onDamaged is told when a file that is there could not be used. */
@@ -38,6 +40,7 @@ export function ownFile<Schema extends z.ZodType>(
 
   return {
     read,
+    settled: () => writing.catch(() => {}),
     write: (value) => {
       writing = writing
         .catch(() => {})

@@ -30,7 +30,6 @@ export const commandSchema = z.enum([
   "desk-readings",
   "start-page",
   "keys",
-  "about",
 ]);
 export type Command = z.infer<typeof commandSchema>;
 
@@ -90,7 +89,6 @@ export const COMMAND_MENUS: readonly CommandMenu[] = [
         entry("desk-bench", "Bench", "Mod+2"),
         entry("desk-probe-plan", "Probe plan", "Mod+3"),
         entry("desk-sheets", "Sheets", "Mod+4"),
-        entry("desk-readings", "Readings", "Mod+5"),
       ],
       [
         entry("zoom-in", "Closer", "Mod+Plus", "window"),
@@ -99,7 +97,7 @@ export const COMMAND_MENUS: readonly CommandMenu[] = [
       ],
     ],
   },
-  { label: "Help", groups: [[entry("keys", "Keys…", "F1"), entry("about", "About Fieldtray", null)]] },
+  { label: "Help", groups: [[entry("keys", "Keys…", "F1")]] },
 ];
 
 /** @returns every entry of the menus, in their order. */
