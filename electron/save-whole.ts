@@ -70,6 +70,7 @@ async function keepPrevious(target: string, spare: string): Promise<void> {
 /**
  * Writes the whole text to `path`, keeping one previous version beside it.
  * Rejects with the system's own error (ENOSPC, EACCES, ENOENT …); the old file is whole then, and nothing else is left behind.
+ * Only an ordinary file is ever replaced, never a folder or a device.
  * @param keepsPrevious false for the program's own files, which need no previous version.
  */
 export async function saveWhole(path: string, content: string | Uint8Array, keepsPrevious = true): Promise<void> {
@@ -80,6 +81,7 @@ export async function saveWhole(path: string, content: string | Uint8Array, keep
   const temporary = part();
   const spare = part();
   const old = await stat(target).catch(() => null);
+  if (old !== null && !old.isFile()) throw Object.assign(new Error(`${name} is not a file`), { code: "EISDIR" });
   try {
     const handle = await open(temporary, "wx", old === null ? 0o666 : old.mode & 0o777);
     try {

@@ -21,7 +21,7 @@ export async function readText(path: string): Promise<{ readonly text: string; r
   const name = basename(path);
   const found = await stat(path);
   const { mtimeMs, size } = found;
-  if (!found.isFile()) throw new FileRefusal(`${name} is a folder, not a setup.`);
+  if (!found.isFile()) throw new FileRefusal(`${name} is not an ordinary file.`);
   if (size > LARGEST_FILE_BYTES) {
     throw new FileRefusal(`${name} holds ${(size / 1024 / 1024).toFixed(1)} MB, allowed: at most 5 MB.`);
   }
@@ -78,7 +78,7 @@ export function inPlainWords(error: unknown, path: string, doing: "read" | "save
     case "EDQUOT":
       return `${name} could not be saved: the disk is full. The file on the disk is still the one from before.`;
     case "EISDIR":
-      return `${name} is a folder.`;
+      return `${name} is not an ordinary file.`;
     case "EBUSY":
       return `${name} is held by another program; close it there and try again.`;
     default:

@@ -32,12 +32,17 @@ const overlap = (from: number, size: number, otherFrom: number, otherSize: numbe
 export function placeOnScreen(last: WindowPlace | null, areas: readonly Area[]): WindowPlace {
   const fits = (place: Area, area: Area): boolean =>
     overlap(place.x, place.width, area.x, area.width) >= GRIP.width && overlap(place.y, GRIP.height, area.y, area.height) >= GRIP.height;
-  const screen = last === null ? undefined : areas.find((area) => fits(last, area));
-  const main = screen ?? areas[0] ?? { x: 0, y: 0, ...USUAL };
   const wanted = last ?? { ...USUAL, maximized: false };
-  const width = Math.max(SMALLEST.width, Math.min(wanted.width, main.width));
-  const height = Math.max(SMALLEST.height, Math.min(wanted.height, main.height));
-  if (last !== null && screen !== undefined) return { x: last.x, y: last.y, width, height, maximized: last.maximized };
+  const sizeOn = (area: Area): { width: number; height: number } => ({
+    width: Math.max(SMALLEST.width, Math.min(wanted.width, area.width)),
+    height: Math.max(SMALLEST.height, Math.min(wanted.height, area.height)),
+  });
+  for (const area of last === null ? [] : areas) {
+    const place = { ...wanted, x: last?.x ?? 0, y: last?.y ?? 0, ...sizeOn(area) };
+    if (fits(place, area)) return place;
+  }
+  const main = areas[0] ?? { x: 0, y: 0, ...USUAL };
+  const { width, height } = sizeOn(main);
   return {
     x: Math.round(main.x + Math.max(0, main.width - width) / 2),
     y: Math.round(main.y + Math.max(0, main.height - height) / 2),
