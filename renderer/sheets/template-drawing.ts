@@ -43,9 +43,9 @@ export function drawingBounds(setup: Setup): Box {
 function gridItems(lengthMm: number, widthMm: number, { grid, saveInk }: DrawingChoice): PathItem[] {
   if (grid === "none") return [];
   const weights = [
-    { belongs: (at: number) => at % 10 === 0, lineMm: 0.15, ink: saveInk ? 0.7 : 0.55 },
-    { belongs: (at: number) => at % 5 === 0 && at % 10 !== 0, lineMm: 0.1, ink: saveInk ? 0.78 : 0.66 },
-    { belongs: (at: number) => at % 5 !== 0 && grid === "fine", lineMm: 0.05, ink: saveInk ? 0.86 : 0.78 },
+    { belongs: (at: number) => at % 10 === 0, lineMm: 0.14, ink: saveInk ? 0.76 : 0.64 },
+    { belongs: (at: number) => at % 5 === 0 && at % 10 !== 0, lineMm: 0.1, ink: saveInk ? 0.84 : 0.76 },
+    { belongs: (at: number) => at % 5 !== 0 && grid === "fine", lineMm: 0.05, ink: saveInk ? 0.92 : 0.86 },
   ];
   return weights.map(({ belongs, lineMm, ink }): PathItem => {
     const chains: Point[][] = [];

@@ -58,13 +58,9 @@ export const printed = (pdf: Uint8Array): Print[] =>
       .map((name) => readGreyMap(readFileSync(join(folder, name))));
   });
 
-/** @returns the words on the pages, one string a page, in reading order. */
-export const wordsOf = (pdf: Uint8Array): string[] =>
-  withPdf(pdf, (file) => execFileSync("pdftotext", [file, "-"], { encoding: "utf8" }).split("\f").slice(0, -1));
-
-/** @returns what a reader says of the file's fonts, one line a font. */
-export const fontsOf = (pdf: Uint8Array): string[] =>
-  withPdf(pdf, (file) => execFileSync("pdffonts", [file], { encoding: "utf8" }).trim().split("\n").slice(2));
+/** @returns what one of Poppler's readers (pdftotext, pdffonts) says of a PDF. */
+export const readPdf = (reader: "pdftotext" | "pdffonts", pdf: Uint8Array, options: readonly string[] = []): string =>
+  withPdf(pdf, (file) => execFileSync(reader, [...options, file, ...(reader === "pdftotext" ? ["-"] : [])], { encoding: "utf8" }));
 
 /**
  * Where a dark line crosses a short way over the paper.
