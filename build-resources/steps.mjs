@@ -3,6 +3,7 @@ import { createHash } from "node:crypto";
 import { existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from "node:fs";
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
+import { alone } from "./alone.mjs";
 
 /** What `npm start`, `npm test` and `npm run headless` share: plain Node, usable before anything is installed. */
 
@@ -45,11 +46,13 @@ function sayProgress(total) {
   return () => clearInterval(timer);
 }
 
-/** Installs the packages of the lock when they are missing or older than it. */
-export async function ensurePackages() {
-  const lock = inRoot("package-lock.json");
-  if (existsSync(installedStamp) && statSync(installedStamp).mtimeMs >= statSync(lock).mtimeMs) return;
-  if (existsSync(installedStamp) && sameLock(lock)) return;
+const inPlace = (lock) => {
+  if (!existsSync(installedStamp)) return false;
+  return statSync(installedStamp).mtimeMs >= statSync(lock).mtimeMs || sameLock(lock);
+};
+
+async function installPackages(lock) {
+  if (inPlace(lock)) return;
   const named = Object.entries(JSON.parse(readFileSync(lock, "utf8")).packages);
   const total = named.filter(([path, { optional }]) => /^node_modules\/(@[^/]+\/)?[^/]+$/.test(path) && !optional).length;
   say(`installing the ${total} packages named in package-lock.json (about half a minute) …`);
@@ -60,6 +63,12 @@ export async function ensurePackages() {
   say("the packages are in place.");
   mkdirSync(inRoot(".cache"), { recursive: true });
   writeFileSync(inRoot(".cache", "installed-lock"), digestOf(lock));
+}
+
+/** Installs the packages of the lock when they are missing or older than it. */
+export async function ensurePackages() {
+  const lock = inRoot("package-lock.json");
+  if (!inPlace(lock)) await alone(inRoot(".cache", "installing"), () => installPackages(lock));
 }
 
 const digestOf = (path) => createHash("sha256").update(readFileSync(path)).digest("hex");
@@ -114,17 +123,22 @@ function sourceDigest() {
   return hash.digest("hex");
 }
 
-/** Builds window, desktop process and headless command when a source is newer than the last build. */
-export async function ensureBuilt() {
-  const stamp = inRoot("dist", "built-from");
-  const digest = sourceDigest();
-  if (existsSync(stamp) && readFileSync(stamp, "utf8") === digest) return;
+const builtStamp = inRoot("dist", "built-from");
+const isBuilt = () => existsSync(builtStamp) && readFileSync(builtStamp, "utf8") === sourceDigest();
+
+async function buildAll() {
+  if (isBuilt()) return;
   say("building (a few seconds) …");
   const code = await run(process.execPath, [inRoot("build-resources", "build.mjs")]);
   if (code !== 0) throw new Error("the build failed: see the message above");
-  mkdirSync(dirname(stamp), { recursive: true });
+  mkdirSync(dirname(builtStamp), { recursive: true });
   // The kernels are built into the source tree, so the digest is taken again.
-  writeFileSync(stamp, sourceDigest());
+  writeFileSync(builtStamp, sourceDigest());
+}
+
+/** Builds window, desktop process and headless command when a source is newer than the last build. */
+export async function ensureBuilt() {
+  if (!isBuilt()) await alone(inRoot(".cache", "building"), buildAll);
 }
 
 /** @returns the path of an installed Chromium-family browser, or null. */
