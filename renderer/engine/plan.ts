@@ -20,6 +20,7 @@ import { fieldLayout, geometryKey } from "./field/layout";
 import { solveField } from "./field/solve-field";
 import { type SuperposedField, type Superposer, superposerOf } from "./field/superposition";
 import { findingsOf, geometryFindings } from "./findings/all-findings";
+import { noCurrentPath } from "./findings/current-paths";
 import { equipotentialsOf } from "./lines/equipotentials";
 import { fieldLinesOf } from "./lines/field-lines";
 import { evenLevels } from "./probing/levels";
@@ -128,6 +129,8 @@ function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: numbe
   };
 }
 
+const electrodeCount = (setup: Setup): number => setup.parts.filter(({ role }) => role === "electrode").length;
+
 /** @returns a planner with an empty memory. */
 export function createPlanner(): Planner {
   const kept = new Map<string, Solved>();
@@ -153,6 +156,11 @@ export function createPlanner(): Planner {
       lines: null,
     };
     keep(key, solved);
+    if (solved.superposed(setup, conductivityAtTemperatureSPerM(setup)).cutOff.length === electrodeCount(setup)) {
+      const found = noCurrentPath(setup);
+      const { code, message, partIds } = found;
+      return { ok: false, refusal: { code, message, partIds, findings: [found, ...geometryFindings(setup)] } };
+    }
     return { ok: true, plan: planOf(setup, solved, serving, (options.now?.() ?? 0) - started) };
   }
 

@@ -159,7 +159,9 @@ export function coarsen(fine: Level, p: Interpolation): Level {
   for (let f = 0; f < count; f++) {
     const { nodes, shares } = p.floatingShares[f];
     const left = new Map<number, number>();
-    fine.borders[f].nodes.forEach((n, k) => left.set(n, fine.borders[f].conductances[k]));
+    fine.borders[f].nodes.forEach((n, k) => {
+      left.set(n, fine.borders[f].conductances[k]);
+    });
     spread(fine, nodes, shares, left, -1);
     borders.push(restrictSparse(fine, p, coarseColumns + 2, left));
     // D' = D - Qᵀ(C - A Q) - Cᵀ Q
@@ -167,7 +169,9 @@ export function coarsen(fine: Level, p: Interpolation): Level {
       const ofG = p.floatingShares[g];
       for (let k = 0; k < ofG.nodes.length; k++) floating[g * count + f] -= ofG.shares[k] * (left.get(ofG.nodes[k]) ?? 0);
       const tie = new Map<number, number>();
-      fine.borders[g].nodes.forEach((n, k) => tie.set(n, fine.borders[g].conductances[k]));
+      fine.borders[g].nodes.forEach((n, k) => {
+        tie.set(n, fine.borders[g].conductances[k]);
+      });
       for (let k = 0; k < nodes.length; k++) floating[g * count + f] -= (tie.get(nodes[k]) ?? 0) * shares[k];
     }
   }

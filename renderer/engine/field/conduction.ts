@@ -12,6 +12,8 @@ import { markDisc, markNear } from "./ownership";
 const NEAR_INSULATOR = 1;
 const NEAR_STEP = 2;
 const NEAR_CORNER = 4;
+/** Lines between two neighbouring nodes on which a thin plate is looked for. */
+const PLATE_SCANS = 8;
 /** Cells round an insulator's corner in which its own flow is fitted. */
 const MOST_REACH_CELLS = 16;
 /** Within so many cells of the waterline the depth changes too fast for local potentials to hold. */
@@ -163,8 +165,38 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     return 1 / resistance;
   }
 
-  const crossesThinPlate = (face: Face): boolean =>
-    thin.some((plate) => crossingsBetween(plate.loops, face.axis, face.line, face.start, face.start + face.pitch).length > 0);
+  /**
+   * The part of a link's band that no thin plate stands in anywhere between its two nodes: a plate may lie beside the dual
+   * face, and a slit ends where it ends. Plates thinner than two cells would leak if only the face itself were looked at.
+   */
+  function besideThinPlates(face: Face, open: readonly [number, number][]): [number, number][] {
+    const end = face.start + face.pitch;
+    const near = thin.filter(({ bounds: [left, bottom, right, top] }) => {
+      const [low, high, near0, near1] = face.axis === "row" ? [left, right, bottom, top] : [bottom, top, left, right];
+      return low <= end && high >= face.start && near0 <= face.to && near1 >= face.from;
+    });
+    if (near.length === 0) return [...open];
+    const scan: ScanAxis = face.axis === "row" ? "column" : "row";
+    let free: [number, number][] = [...open];
+    for (let k = 0; k <= PLATE_SCANS; k++) {
+      const position = face.start + (k / PLATE_SCANS) * face.pitch;
+      free = free.flatMap(([from, to]) => {
+        const cuts = [from, to];
+        for (const plate of near) cuts.push(...crossingsBetween(plate.loops, scan, position, from, to));
+        cuts.sort((a, b) => a - b);
+        const kept: [number, number][] = [];
+        for (let index = 0; index + 1 < cuts.length; index++) {
+          const across = (cuts[index] + cuts[index + 1]) / 2;
+          const [x, y] = face.axis === "row" ? [position, across] : [across, position];
+          if (cuts[index + 1] > cuts[index] && !near.some((plate) => covers(plate.placed, x, y))) kept.push([cuts[index], cuts[index + 1]]);
+        }
+        return kept;
+      });
+    }
+    // A plate thinner than the scans' distance may slip between them; the link's own line cannot miss it.
+    const hit = near.some((plate) => crossingsBetween(plate.loops, face.axis, face.line, face.start, end).length > 0);
+    return hit ? free.filter(([from, to]) => !(from <= face.line && face.line <= to)) : free;
+  }
 
   function along(axis: ScanAxis, column: number, row: number): number {
     const isRow = axis === "row";
@@ -189,8 +221,8 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
     const face: Face = { axis, start, pitch, line: centre, from, to };
     let open: [number, number][] = [[from, to]];
     if (flag & NEAR_INSULATOR) {
-      if (thin.length > 0 && crossesThinPlate(face)) return 0;
       open = openIntervals(face, layout.insulators, wall, insideWall);
+      if (thin.length > 0) open = besideThinPlates(face, open);
     }
     if (flag & NEAR_STEP) return steppedFlux(face, open);
     let flux = 0;

@@ -37,8 +37,13 @@ export interface Network {
   readonly north: Float64Array;
   readonly contacts: readonly Contact[];
   readonly bridges: readonly Bridge[];
-  /** For each conductor whether an electrode reaches it, through water or other conductors. */
-  readonly determined: readonly boolean[];
+  /**
+   * For each conductor the body of water that it stands in, as a number shared by all conductors that are joined through
+   * water or each other; -1 where no electrode reaches it and its potential is undetermined.
+   */
+  readonly waters: readonly number[];
+  /** Nodes in water that no electrode's potential reaches. */
+  readonly lostNodes: number;
 }
 
 type ContactMap = readonly Map<number, number>[];
@@ -125,7 +130,7 @@ function tieSmallConductors(layout: FieldLayout, grid: Grid, ownership: Ownershi
 
 interface Reach {
   readonly nodes: Uint8Array;
-  readonly bodies: readonly boolean[];
+  readonly bodies: readonly number[];
 }
 
 /** What an electrode's potential reaches, through water and through floating conductors. */
@@ -138,7 +143,8 @@ function reachOfElectrodes(
   const { east, north } = network;
   const { columns } = network.grid;
   const nodes = new Uint8Array(east.length);
-  const bodies = contacts.map(() => false);
+  const bodies = contacts.map(() => -1);
+  let water = 0;
   const touching = new Map<number, number[]>();
   contacts.forEach((contact, body) => {
     for (const node of contact.keys()) touching.set(node, [...(touching.get(node) ?? []), body]);
@@ -151,22 +157,27 @@ function reachOfElectrodes(
     queue[tail++] = node;
   };
   const visitBody = (body: number): void => {
-    if (bodies[body]) return;
-    bodies[body] = true;
+    if (bodies[body] >= 0) return;
+    bodies[body] = water;
     for (const node of contacts[body].keys()) visit(node);
     for (const { bodyA, bodyB } of bridges) {
       if (bodyA === body) visitBody(bodyB);
       else if (bodyB === body) visitBody(bodyA);
     }
   };
-  for (let body = 0; body < electrodeCount; body++) visitBody(body);
-  for (let head = 0; head < tail; head++) {
-    const node = queue[head];
-    if (east[node] > 0) visit(node + 1);
-    if (node > 0 && east[node - 1] > 0) visit(node - 1);
-    if (north[node] > 0) visit(node + columns);
-    if (node >= columns && north[node - columns] > 0) visit(node - columns);
-    for (const body of touching.get(node) ?? []) visitBody(body);
+  let head = 0;
+  for (let electrode = 0; electrode < electrodeCount; electrode++) {
+    if (bodies[electrode] >= 0) continue;
+    visitBody(electrode);
+    for (; head < tail; head++) {
+      const node = queue[head];
+      if (east[node] > 0) visit(node + 1);
+      if (node > 0 && east[node - 1] > 0) visit(node - 1);
+      if (north[node] > 0) visit(node + columns);
+      if (node >= columns && north[node - columns] > 0) visit(node - columns);
+      for (const body of touching.get(node) ?? []) visitBody(body);
+    }
+    water++;
   }
   return { nodes, bodies };
 }
@@ -191,15 +202,18 @@ export function discretise(layout: FieldLayout, grid: Grid): Network {
   linkNodes("column", north, cut.column, context, contactMaps, bridges);
   tieSmallConductors(layout, grid, ownership, conduction, contactMaps);
   const reach = reachOfElectrodes({ grid, east, north }, layout.electrodeCount, contactMaps, bridges);
+  let lostNodes = 0;
   // What no electrode reaches has no determined potential: its nodes and conductors leave the network.
   for (let node = 0; node < reach.nodes.length; node++) {
     if (reach.nodes[node] === 1) continue;
     east[node] = 0;
     north[node] = 0;
-    if (ownership.owner[node] === OWNER_WATER) ownership.owner[node] = OWNER_NOTHING;
+    if (ownership.owner[node] !== OWNER_WATER) continue;
+    ownership.owner[node] = OWNER_NOTHING;
+    lostNodes++;
   }
   const contacts = contactMaps.map((map, body): Contact => {
-    const nodes = reach.bodies[body] ? [...map.keys()].sort((a, b) => a - b) : [];
+    const nodes = reach.bodies[body] >= 0 ? [...map.keys()].sort((a, b) => a - b) : [];
     return { nodes, conductances: nodes.map((node) => map.get(node) ?? 0) };
   });
   return {
@@ -211,7 +225,8 @@ export function discretise(layout: FieldLayout, grid: Grid): Network {
     east,
     north,
     contacts,
-    bridges: bridges.filter(({ bodyA }) => reach.bodies[bodyA]),
-    determined: reach.bodies,
+    bridges: bridges.filter(({ bodyA }) => reach.bodies[bodyA] >= 0),
+    waters: reach.bodies,
+    lostNodes,
   };
 }

@@ -92,7 +92,9 @@ function fitBody(
     if (shared.has(node) || active[node] === 0 || !isPlain(node)) return;
     const potential = field.at((node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm);
     const fitted = fittedAt(node, potential);
-    if (fitted !== null && fitted > LEAST_OF_PLAIN * plain && fitted < MOST_OF_PLAIN * plain) ties.set(node, fitted);
+    // A part tied to a single node is too small for the plain value to mean much.
+    const likely = contact.nodes.length === 1 || (fitted !== null && fitted > LEAST_OF_PLAIN * plain && fitted < MOST_OF_PLAIN * plain);
+    if (fitted !== null && fitted > 0 && likely) ties.set(node, fitted);
   });
   const [left, bottom, right, top] = layout.conductors[body].bounds;
   const margin = field.widestReachMm;
@@ -112,7 +114,7 @@ function fitBody(
       const fitted = fittedAt(node, potential);
       if (fitted === null) continue;
       const share = fitted / linkSum(network, node);
-      if (share > LEAST_OF_LINKS && share < MOST_OF_LINKS) ties.set(node, fitted);
+      if (share > LEAST_OF_LINKS && (share < MOST_OF_LINKS || contact.nodes.length <= 1)) ties.set(node, fitted);
     }
   }
   const nodes = [...ties.keys()].sort((a, b) => a - b);

@@ -89,9 +89,30 @@ function arcEnds(placed: Solid["placed"], outerMm: number, innerMm: number, swee
 /** How much longer than thick a strip must be for its ends not to feel each other. */
 const SLENDER = 2.5;
 
-function featuresOf(solid: Solid): Feature[] {
+/** A part this small (largest size in smallest circles) is seen from outside as a disc of like capacitance. */
+const TINY_IN_LEAST = 0.5;
+/** Discs smaller than this (radius in smallest circles) rule by their logarithm some way round them. */
+const SMALL_DISC_IN_LEAST = 2;
+
+/** The logarithm round a small disc, or round a part too small for its shape to matter; null for others. */
+function smallDisc({ placed, bounds: [left, bottom, right, top] }: Solid, smallestReachMm: number): Feature | null {
+  const tiny = Math.max(right - left, top - bottom) < TINY_IN_LEAST * smallestReachMm;
+  const isDisc = placed.shape.kind === "disc";
+  const radius = (right - left + top - bottom) / 4;
+  if (!tiny && !(isDisc && radius < SMALL_DISC_IN_LEAST * smallestReachMm)) return null;
+  const [x0, y0] = isDisc ? [placed.xMm, placed.yMm] : [(left + right) / 2, (bottom + top) / 2];
+  return {
+    core: { kind: "edge", x0, y0, x1: x0, y1: y0 },
+    reachMm: radius + 2 * smallestReachMm,
+    potential: (x, y) => Math.max(0, Math.log(Math.hypot(x - x0, y - y0) / radius)),
+  };
+}
+
+function featuresOf(solid: Solid, smallestReachMm: number): Feature[] {
   const { placed } = solid;
   const { shape } = placed;
+  const disc = smallDisc(solid, smallestReachMm);
+  if (disc !== null) return [disc];
   if (shape.kind === "bar") {
     const long = Math.max(shape.lengthMm, shape.widthMm);
     const thick = Math.min(shape.lengthMm, shape.widthMm);
@@ -150,7 +171,7 @@ export function localFieldOf(
   clearanceMm: (x: number, y: number) => number,
 ): LocalField {
   const wallMm = (x: number, y: number): number => Math.max(0, depthFromWallMm(setup.tray, x, y));
-  const all = featuresOf(solid).map((feature) => {
+  const all = featuresOf(solid, smallestReachMm).map((feature) => {
     const { x0, y0, x1, y1 } = feature.core;
     const roomMm = Math.min(wallMm(x0, y0), wallMm(x1, y1), clearanceMm(x0, y0), clearanceMm(x1, y1));
     return { ...feature, reachMm: Math.min(feature.reachMm, 0.6 * roomMm, MOST_REACH_IN_LEAST * smallestReachMm) };

@@ -6,7 +6,7 @@ import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
 import { type FieldLayout, isEvenlyDeep, wallThicknessMm } from "./layout";
 import type { PotentialField } from "./potential-field";
-import { type Reader, readerOf } from "./reading";
+import { type LocalValue, type Reader, readerOf } from "./reading";
 import type { FieldSolution, SolvedGrid } from "./solve-field";
 
 /**
@@ -19,6 +19,7 @@ const TYPICAL_SHARE = 0.05;
  * by one grid and another way by the other, and next to depth steps nothing is fitted. Calibrated like the share above.
  */
 const THIN_PLATE_FACTOR = 1.5;
+const UNSEEN_PLATE_FACTOR = 4;
 const DEPTH_STEP_FACTOR = 2;
 const THIN_PLATE_CELLS = 4;
 /** What rounding and the unfinished iteration may add to any potential, as a share of the span. */
@@ -40,8 +41,35 @@ function voltsBound(
 function convergenceFactor({ network }: SolvedGrid): number {
   const { layout, grid } = network;
   const thinMm = THIN_PLATE_CELLS * Math.max(grid.pitchXMm, grid.pitchYMm);
-  if (layout.insulators.some(({ placed }) => wallThicknessMm(placed.shape) < thinMm)) return THIN_PLATE_FACTOR;
+  const thinnest = Math.min(Number.POSITIVE_INFINITY, ...layout.insulators.map(({ placed }) => wallThicknessMm(placed.shape)));
+  if (thinnest < thinMm / 2) return UNSEEN_PLATE_FACTOR;
+  if (thinnest < thinMm) return THIN_PLATE_FACTOR;
   return layout.slabs.length > 0 ? DEPTH_STEP_FACTOR : 1;
+}
+
+/**
+ * The potential in a gap too narrow for the grid: it falls evenly from the nearest conductor to the next one.
+ * Null where there are no two conductors with a potential.
+ */
+function acrossGap({ network }: SolvedGrid, { bodyVolts }: Superposed, xMm: number, yMm: number): LocalValue | null {
+  const { pitchXMm, pitchYMm } = network.grid;
+  const near = network.layout.conductors
+    .map(({ loops }, body) => ({ volts: bodyVolts[body], distance: distanceToOutline(loops, xMm, yMm) }))
+    .filter(({ volts, distance }) => !Number.isNaN(volts) && distance < 2 * Math.max(pitchXMm, pitchYMm))
+    .sort((a, b) => a.distance - b.distance);
+  if (near.length < 2) return null;
+  const [a, b] = near;
+  const gap = a.distance + b.distance;
+  if (gap === 0) return { volts: a.volts, slopeX: 0, slopeY: 0 };
+  return { volts: (a.volts * b.distance + b.volts * a.distance) / gap, slopeX: (b.volts - a.volts) / gap, slopeY: 0 };
+}
+
+/** Electrodes in a body of water where all electrodes stand at one tap: nothing drives a current there. */
+function cutOffOf(layout: FieldLayout, waters: readonly number[], taps: readonly number[], setup: Setup): string[] {
+  return taps.flatMap((tap, electrode) => {
+    const driven = taps.some((other, index) => other !== tap && waters[index] === waters[electrode]);
+    return driven ? [] : [setup.parts[layout.conductors[electrode].index].id];
+  });
 }
 
 /** Root mean square of the grids' difference over the nodes that both have, as a share of the span. */
@@ -82,7 +110,7 @@ function superpose({ network, units, map }: SolvedGrid, electrodeVolts: readonly
     if (volts !== 0) for (let node = 0; node < potentials.length; node++) potentials[node] += volts * unit[node];
   });
   const floatingVolts = layout.conductors.slice(count).map((_, f) => {
-    if (!network.determined[count + f]) return Number.NaN;
+    if (network.waters[count + f] < 0) return Number.NaN;
     return units.floating.reduce((sum, shares, electrode) => sum + shares[f] * electrodeVolts[electrode], 0);
   });
   const bodyVolts = [...electrodeVolts, ...floatingVolts];
@@ -123,6 +151,10 @@ function pictureOf({ network }: SolvedGrid, { potentials, bodyVolts }: Superpose
 
 /** A field with the electrical totals that need the conductivity. */
 export interface SuperposedField extends PotentialField {
+  /** Ids of electrodes that no water or metal joins to an electrode at another tap. */
+  readonly cutOff: readonly string[];
+  /** Ids of floating conductors whose potential is undetermined, and whether some water is too. */
+  readonly undetermined: { readonly ids: readonly string[]; readonly water: boolean };
   /** Current leaving the higher electrodes over σ, with its numerical bound: V·mm. */
   readonly totalFlux: { readonly value: number; readonly error: number };
 }
@@ -176,7 +208,7 @@ function readingsOf(
       return { xMm, yMm, inside: id, volts: bodyVolts, voltsError, fieldVPerM: 0, directionDeg: 0 };
     }
     if (waterDepthMm(setup, xMm, yMm) <= 0 || nearestIsLost(solution.fine, xMm, yMm)) return nothing(xMm, yMm, null);
-    const here = perVolt.near.reader.at(xMm, yMm);
+    const here = perVolt.near.reader.at(xMm, yMm) ?? acrossGap(solution.fine, perVolt.near, xMm, yMm);
     if (here === null) return nothing(xMm, yMm, null);
     const coarser = perVolt.far.reader.at(xMm, yMm);
     const fieldVPerM = volts * Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
@@ -263,6 +295,11 @@ export function superposerOf(solution: FieldSolution): Superposer {
         error: volts * deeper * (Math.abs(total - sumOfPositive(far.fluxes)) + fluxShare * total),
       },
       read: readingsOf(solution, setup, perVolt, conductors),
+      cutOff: cutOffOf(layout, network.waters, taps, setup),
+      undetermined: {
+        ids: conductors.flatMap(({ id, volts: potential }) => (Number.isNaN(potential) ? [id] : [])),
+        water: network.lostNodes > 0,
+      },
     };
   };
 }

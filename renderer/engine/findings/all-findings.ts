@@ -2,6 +2,7 @@ import type { BenchNumbers } from "../../../shared-types/bench";
 import type { Finding, ProbePlan, Severity } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import type { FieldFacts } from "../bench/field-facts";
+import { currentPaths } from "./current-paths";
 import { chlorideWithDirectCurrent, directCurrentPolarises } from "./direct-current";
 import { electrodeMetal, solubleAnode } from "./electrode-metal";
 import { chlorineInRoom, gasVolume } from "./gas-volume";
@@ -44,6 +45,7 @@ const SETUP_RULES: readonly SetupRule[] = [
   templateTiles,
 ];
 const PLAN_RULES: readonly PlanRule[] = [
+  currentPaths,
   supplyCurrent,
   warming,
   gasVolume,

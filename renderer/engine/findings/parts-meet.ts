@@ -1,5 +1,5 @@
 import type { Finding } from "../../../shared-types/plan";
-import type { Part, Setup } from "../../../shared-types/setup";
+import type { Electrode, Part, Setup } from "../../../shared-types/setup";
 import { gapMm } from "../geometry/clearance";
 import { boxGapMm, type OutlinedShape, outlined, overlaps } from "../geometry/overlap";
 import type { SetupRule } from "./rule";
@@ -88,10 +88,46 @@ function nearTouchFound({ a, b, gapMm: gap }: Pair, placementMm: number): Findin
   });
 }
 
+/** Electrodes at different taps that touch one another through loose metal. */
+function shortsThroughLoose(touching: readonly Pair[]): Finding[] {
+  const neighbours = new Map<Part, Part[]>();
+  for (const { a, b } of touching) {
+    neighbours.set(a, [...(neighbours.get(a) ?? []), b]);
+    neighbours.set(b, [...(neighbours.get(b) ?? []), a]);
+  }
+  const seen = new Set<Part>();
+  const found: Finding[] = [];
+  for (const start of neighbours.keys()) {
+    if (seen.has(start)) continue;
+    const group: Part[] = [start];
+    seen.add(start);
+    for (const part of group) {
+      for (const next of neighbours.get(part) ?? []) {
+        if (seen.has(next)) continue;
+        seen.add(next);
+        group.push(next);
+      }
+    }
+    const electrodes = group.filter((part): part is Electrode => part.role === "electrode");
+    const other = electrodes.find(({ tap }) => tap !== electrodes[0].tap);
+    const direct = touching.some(({ a, b }) => atDifferentTaps(a, b) && group.includes(a));
+    if (other === undefined || direct) continue;
+    const loose = group.filter(({ role }) => role === "floating");
+    found.push({
+      ...shortCircuitFound({ a: electrodes[0], b: other, gapMm: 0, overlap: false }),
+      partIds: group.map(({ id }) => id),
+      message: `${partLabel(electrodes[0])} and ${partLabel(other)}, at different volts, are joined by ${loose.map(partLabel).join(" and ")}: the supply is short-circuited.`,
+    });
+  }
+  return found;
+}
+
 /** Parts that overlap, short the supply, or touch though one of them should float. */
 export const partsMeet: SetupRule = (setup) => {
   const narrowMm = 2 * setup.probing.placementMm;
-  return pairsWithin(setup, Math.max(TOUCHING_MM, narrowMm)).flatMap((pair) => {
+  const pairs = pairsWithin(setup, Math.max(TOUCHING_MM, narrowMm));
+  const touching = pairs.filter((pair) => isMetal(pair.a) && isMetal(pair.b) && (pair.overlap || pair.gapMm <= TOUCHING_MM));
+  const found = pairs.flatMap((pair) => {
     const { a, b } = pair;
     const metal = isMetal(a) && isMetal(b);
     const touching = pair.overlap || pair.gapMm <= TOUCHING_MM;
@@ -102,4 +138,5 @@ export const partsMeet: SetupRule = (setup) => {
     else if (!touching && pair.gapMm < narrowMm && atDifferentTaps(a, b)) found.push(nearTouchFound(pair, setup.probing.placementMm));
     return found;
   });
+  return [...found, ...shortsThroughLoose(touching)];
 };

@@ -93,5 +93,7 @@ export function channelFacts(setup: Setup): FieldFacts {
     picture: channelPicture(volts),
     resistanceOhm: { value: resistance, error: 0 },
     shapeFactor: { value: CHANNEL_WIDTH_MM / CHANNEL_LENGTH_MM, error: 0 },
+    cutOff: [],
+    undetermined: { ids: [], water: false },
   };
 }
