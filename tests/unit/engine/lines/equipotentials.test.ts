@@ -137,7 +137,8 @@ describe("equipotentials of random setups", () => {
         expect(inMetal(setup, place)).toBe(false);
         const { volts, voltsError, fieldVPerM } = field.read(...place);
         if (volts === null) continue;
-        expect(Math.abs(volts - line.volts)).toBeLessThan(1e-4 + voltsError + (fieldVPerM / 1000) * 0.01);
+        // Within the field's bound, or a twentieth of a millimetre: ends are carried on to the corner of an insulator.
+        expect(Math.abs(volts - line.volts)).toBeLessThan(1e-4 + voltsError + (fieldVPerM / 1000) * 0.05);
       }
       for (const path of line.paths) {
         if (isClosed(path)) continue;
