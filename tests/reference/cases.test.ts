@@ -1,35 +1,12 @@
-import { readdirSync, readFileSync } from "node:fs";
 import { describe, expect, it } from "vitest";
+import { REFERENCE_CASES } from "./reference-cases";
 import { shapeFactorOf, solved, soundSetup } from "./solved";
-
-/**
- * Cases with answers from outside this program. Exact ones name their formula; the others were computed with FreeFEM
- * (P2 elements on adapted meshes, an independent finite-element program), whose own uncertainty stands in the file.
- */
-interface ReferenceCase {
-  readonly id: string;
-  readonly how: string;
-  readonly setup: unknown;
-  readonly expected: {
-    readonly shapeFactor?: number;
-    readonly shapeFactorUncertainty?: number;
-    readonly conductors?: readonly { readonly id: string; readonly volts: number; readonly currentPerSigmaH: number }[];
-    readonly currentUncertainty?: number;
-    readonly at?: readonly (readonly [number, number, number])[];
-    readonly voltsUncertainty?: number;
-  };
-}
-
-const folder = new URL("./cases/", import.meta.url);
-const cases = readdirSync(folder)
-  .filter((name) => name.endsWith(".json"))
-  .map((name): ReferenceCase => JSON.parse(readFileSync(new URL(name, folder), "utf8")));
 
 /** Allowed relative error of shape factor and currents, and error of potentials as a share of the span. */
 const ALLOWED = { live: { current: 1e-4, volts: 1e-4 }, print: { current: 1e-5, volts: 2e-5 } };
 
 describe.each(["live", "print"] as const)("at %s quality", (quality) => {
-  describe.each(cases.map((one) => [one.id, one] as const))("%s", (_, { setup: data, expected, how }) => {
+  describe.each(REFERENCE_CASES.map((one) => [one.id, one] as const))("%s", (_, { setup: data, expected, how }) => {
     const setup = soundSetup(data);
     const field = solved(setup, quality);
     const span = field.spanV[1] - field.spanV[0];
