@@ -1,3 +1,4 @@
+import "./host/without-eval";
 import { StrictMode } from "react";
 import { createRoot } from "react-dom/client";
 import { version } from "../package.json";

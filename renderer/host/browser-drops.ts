@@ -1,5 +1,5 @@
 interface HandleItem {
-  getAsFileSystemHandle?: () => Promise<FileSystemHandle | null>;
+  getAsFileSystemHandle?: () => Promise<FileSystemHandle | null | undefined>;
 }
 
 /** Files dropped on the window, with the browser's handle where it gives one. @returns a way to stop listening. */
@@ -16,9 +16,7 @@ export function listenForDrops(page: Window, take: (file: File, fileHandle: File
     // The handle has to be asked for before the event is over.
     const item = event.dataTransfer?.items[0] as (DataTransferItem & HandleItem) | undefined;
     const asked = item?.getAsFileSystemHandle?.() ?? Promise.resolve(null);
-    void asked
-      .catch(() => null)
-      .then((handle) => take(file, handle !== null && handle.kind === "file" ? (handle as FileSystemFileHandle) : null));
+    void asked.catch(() => null).then((handle) => take(file, handle?.kind === "file" ? (handle as FileSystemFileHandle) : null));
   };
   page.addEventListener("dragover", over);
   page.addEventListener("drop", drop);

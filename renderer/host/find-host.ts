@@ -1,3 +1,4 @@
+import "./without-eval";
 import type { Host } from "../../shared-types/host";
 import { BRIDGE_NAME, type Bridge, CHANNEL_NAMES } from "../../shared-types/host-channel-names";
 import { browserHost } from "./browser";

@@ -49,6 +49,22 @@ for (const shell of SHELLS) {
       expect(await page.evaluate(() => crossOriginIsolated)).toBe(true);
     });
 
+    test("nothing in the window offends its own policy, on any desk", async ({ bench }) => {
+      const program = await bench.start();
+      const complaints: string[] = [];
+      program.page.on("console", (message) => {
+        if (message.type() === "error") complaints.push(message.text());
+      });
+      program.page.on("pageerror", (error) => complaints.push(error.message));
+      await program.page.reload();
+      await expect(program.page.locator(".ledger-entry", { hasText: "Resistance" }).locator("dd")).toContainText("Ω", { timeout: 30_000 });
+      for (const desk of ["desk-bench", "desk-probe-plan", "desk-sheets", "desk-lay-out", "start-page"]) {
+        await choose(program, desk);
+        await program.page.waitForTimeout(700);
+      }
+      expect(complaints).toEqual([]);
+    });
+
     test("a setup is saved as, opened again and saved over itself, and the title tells", async ({ bench }) => {
       const program = await bench.start();
       const path = join(bench.folder, "third-bench.fieldtray.json");
