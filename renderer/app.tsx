@@ -191,6 +191,11 @@ export function App({ host }: { readonly host: Host }) {
         onReadout={(readout) => window.set({ readout })}
       />
       <div className="zoom">
+        <IconButton
+          icon="tape"
+          name="Measuring tape (M)"
+          onPress={() => trayView.setTool(trayView.getState().tool === "tape" ? "hand" : "tape")}
+        />
         <IconButton icon="further" name="Further away (−)" onPress={trayView.zoomOut} />
         <IconButton icon="whole" name="Whole tray (0)" onPress={trayView.fit} />
         <IconButton icon="closer" name="Closer (+)" onPress={trayView.zoomIn} />

@@ -13,6 +13,7 @@ const DRAWINGS = {
   closer: "M9 4a5 5 0 1 0 .1 0M13 13l4 4M9 6.5v5M6.5 9h5",
   further: "M9 4a5 5 0 1 0 .1 0M13 13l4 4M6.5 9h5",
   whole: "M4 8V4h4M12 4h4v4M16 12v4h-4M8 16H4v-4",
+  tape: "M3 13 13 3l4 4L7 17zM6 10l2 2M9 7l2 2M12 4l2 2",
   keys: "M3 6h14v8H3zM5.5 8.5h1M8.5 8.5h1M11.5 8.5h1M14 8.5h.5M6.5 11.5h7",
   theme: "M10 3.5a6.5 6.5 0 1 0 .1 0M10 3.5v13",
   close: "M5 5l10 10M15 5 5 15",

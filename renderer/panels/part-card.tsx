@@ -2,12 +2,17 @@ import { useStore } from "zustand";
 import type { Problem } from "../../shared-types/result";
 import type { Part, PartRole, Setup, Shape } from "../../shared-types/setup";
 import { setThickness } from "../document/commands/bench";
+import { moveToGap } from "../document/commands/gap";
 import { duplicateThings, removeThings, setHeight, setMaterial, setName, setRole, setTap } from "../document/commands/parts";
-import { placeThing, resizeThing } from "../document/commands/placing";
+import { type AlignTo, alignThings, distributeThings, mirrorThings, placeThing, resizeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
 import { type Edit, isPart, type Thing, thingName, thingsById } from "../document/edit";
 import { trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
+import { gapMm } from "../engine/geometry/clearance";
+import { boundsOf, outlineOf } from "../engine/geometry/outline";
+import { outlined } from "../engine/geometry/overlap";
+import { traySizeMm } from "../engine/geometry/tray-outline";
 import { Icon } from "./icons";
 import { ChoiceField, NumberField, TextField } from "./number-field";
 import { ANGLES_IN_DEG, LENGTHS_IN_MM } from "./read-number";
@@ -143,6 +148,64 @@ function Reading({ planning, part }: { readonly planning: Planning; readonly par
   );
 }
 
+const ALIGNMENTS: readonly (readonly [AlignTo, string])[] = [
+  ["left", "Left edges"],
+  ["centre", "Centres, in x"],
+  ["right", "Right edges"],
+  ["top", "Far edges"],
+  ["middle", "Centres, in y"],
+  ["bottom", "Near edges"],
+];
+
+const boxOf = (thing: Thing): readonly [number, number, number, number] => boundsOf(outlineOf(thing));
+const gapOf = (a: Thing, b: Thing): number => gapMm(outlined(a), outlined(b));
+
+/** What can be done with several parts at once. */
+function ManyTools({ document, setup, ids }: { readonly document: Document; readonly setup: Setup; readonly ids: readonly string[] }) {
+  const [lengthMm, widthMm] = traySizeMm(setup.tray);
+  const things = thingsById(setup, ids);
+  return (
+    <>
+      {things.length === 2 && (
+        <NumberField
+          label="Clear between the two"
+          unit="mm"
+          units={LENGTHS_IN_MM}
+          value={Number(gapOf(things[0], things[1]).toFixed(3))}
+          step={1}
+          onSet={(wantedMm) => tried(document, moveToGap(setup, things[0].id, things[1].id, wantedMm, gapOf))}
+        />
+      )}
+      <h3>Line up</h3>
+      <div className="grid-2">
+        {ALIGNMENTS.map(([to, text]) => (
+          <button key={to} type="button" onClick={() => document.run(alignThings(setup, ids, to, boxOf, [0, 0, lengthMm, widthMm]))}>
+            {text}
+          </button>
+        ))}
+      </div>
+      <h3>Equal gaps</h3>
+      <div className="grid-2">
+        <button type="button" disabled={things.length < 3} onClick={() => document.run(distributeThings(setup, ids, "x", boxOf))}>
+          Along x
+        </button>
+        <button type="button" disabled={things.length < 3} onClick={() => document.run(distributeThings(setup, ids, "y", boxOf))}>
+          Along y
+        </button>
+      </div>
+      <h3>Mirror</h3>
+      <div className="grid-2">
+        <button type="button" onClick={() => document.run(mirrorThings(setup, ids, "left-right", boxOf))}>
+          Left and right
+        </button>
+        <button type="button" onClick={() => document.run(mirrorThings(setup, ids, "top-bottom", boxOf))}>
+          Near and far
+        </button>
+      </div>
+    </>
+  );
+}
+
 /** What is selected, with exact numbers. */
 export function PartCard({ document, planning }: { readonly document: Document; readonly planning: Planning }) {
   const setup = useStore(document, (state) => state.setup);
@@ -175,7 +238,7 @@ export function PartCard({ document, planning }: { readonly document: Document; 
         </button>
       </header>
       {many ? (
-        <p className="hint">Move them together on the tray; select one to set its numbers.</p>
+        <ManyTools document={document} setup={setup} ids={selection} />
       ) : (
         <>
           {isPart(thing) && <TextField label="Name" value={thing.name} onSet={(name) => tried(document, setName(setup, thing.id, name))} />}

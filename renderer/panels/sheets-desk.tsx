@@ -105,7 +105,8 @@ export function SheetsDesk({ document, planning, loadSheets, choice, onChoice, o
   };
   return (
     <>
-      <main className="pages" aria-label="Pages">
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a scrolling area must be reachable by keyboard (WCAG 2.1.1) */}
+      <main className="pages" aria-label="Pages" tabIndex={0}>
         {planned.refusal !== null && <p className="hint">There is nothing to print yet: {planned.refusal.message}</p>}
         {fault !== null && (
           <p className="hint" role="alert">
