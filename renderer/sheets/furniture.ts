@@ -12,7 +12,8 @@ export interface PageFacts {
   readonly title: string;
   readonly number: number;
   readonly count: number;
-  readonly printerScale: Point;
+  /** The correction for the short and the long side of the paper; null on a page that is printed without one. */
+  readonly correction: Point | null;
   /** Why the setup may not be used, or null. */
   readonly doNotUse: string | null;
 }
@@ -29,10 +30,13 @@ export function checkBar(x: number, y: number, along: "x" | "y"): Item[] {
 }
 
 /** @returns which printer correction a page carries, in words. */
-export const scaleWords = ([x, y]: Point): string =>
-  x === 1 && y === 1
+export function scaleWords(correction: Point | null): string {
+  if (correction === null) return "Printed without correction, to find one.";
+  const [short, long] = correction.map((scale) => (100 * scale).toFixed(2));
+  return correction.every((scale) => scale === 1)
     ? "No printer correction."
-    : `Corrected for a printer that prints ${(100 * x).toFixed(2)} mm along x and ${(100 * y).toFixed(2)} mm along y for 100 mm.`;
+    : `Corrected for a printer that makes 100 mm ${short} mm along the paper’s short side, ${long} mm along its long side.`;
+}
 
 /** @returns words cut to a width (mm), with … where something was left out. */
 export function fitted(words: string, widthMm: number, sizeMm: number, fonts: SheetFonts, bold = false): string {
@@ -72,7 +76,7 @@ export function furniture(widthMm: number, heightMm: number, facts: PageFacts, f
     text(edge + 13, edge + 14.2, "Print at 100 % (actual size), never “fit to page”.", 2.8, { bold: true }),
     text(edge + 13, edge + 3.4, "100 mm ± 0.5 along x: measure this bar and the one at the left before use.", 2.5),
     text(edge + 3.4, edge + 25, "100 mm ± 0.5 along y", 2.5, { turnDeg: 90 }),
-    text(edge + 13, edge + 0.6, scaleWords(facts.printerScale), 2.3, { ink: 0.3 }),
+    text(edge + 13, edge + 0.6, scaleWords(facts.correction), 2.3, { ink: 0.3 }),
   ];
   return { head, foot };
 }

@@ -1,16 +1,18 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import type { ContentsEntry } from "./cover";
+import type { FieldInk } from "./field-drawing";
 import type { SheetFonts } from "./font-metrics";
 import { furniture } from "./furniture";
 import type { Item, Pack, Page, Point } from "./page";
 import { PAPERS, type PaperName } from "./paper";
-import { SHEETS, type SheetName } from "./sheets";
+import { SHEETS, type Sheet, type SheetInput, type SheetName } from "./sheets";
 
 /** What a pack is made of and for which printer. */
 export interface PackOptions {
   readonly sheets: readonly SheetName[];
   readonly paper: PaperName;
-  /** What the printer makes of a true length along x and y; 1 where it prints true. */
+  /** What the printer makes of a true length along the short and the long side of the paper; 1 where it prints true. */
   readonly printerScale: Point;
   /** Printed as given, such as "1 December 2026": no clock is read. */
   readonly date: string;
@@ -19,6 +21,10 @@ export interface PackOptions {
   readonly grid: "fine" | "coarse";
   readonly saveInk: boolean;
   readonly mirrored: boolean;
+  /** How the field key shows the potential; absent: in colour, hatched when ink is saved. */
+  readonly fieldInk?: FieldInk;
+  /** The field key at full size on as many tiles as it needs; absent: fitted to one page. */
+  readonly fieldFullSize?: boolean;
 }
 
 /** A sheet's page before it gets header, footer and number. */
@@ -45,19 +51,46 @@ const titleOf = ({ title }: Setup): string => (title.trim() === "" ? "Untitled t
 /** @returns the first stop that the rules found, in words, or null. */
 const doNotUse = (plan: Plan): string | null => plan.findings.find(({ severity }) => severity === "stop")?.message ?? null;
 
+/** @returns the printer's scale along a page's own x and y: the long side of the paper keeps its scale when the page lies across. */
+const scaleOn = ({ widthMm, heightMm }: BarePage, [short, long]: Point): Point => (widthMm > heightMm ? [long, short] : [short, long]);
+
+/** Makes the pages of one sheet, before they are numbered. */
+function pagesOf(
+  name: SheetName,
+  input: Omit<SheetInput, "paper">,
+): (BarePage & { sheet: SheetName; scale: Point; uncorrected: boolean })[] {
+  const sheet: Sheet = SHEETS[name];
+  const scale: Point = sheet.uncorrected ? [1, 1] : input.options.printerScale;
+  const [short, long] = PAPERS[input.options.paper];
+  // A page is composed in the millimetres that come out; a printer that prints long therefore has more room on its sheet.
+  const pages = sheet.pages({ ...input, paper: [short * scale[0], long * scale[1]] });
+  return pages.map((page) => ({ ...page, sheet: name, scale: scaleOn(page, scale), uncorrected: sheet.uncorrected ?? false }));
+}
+
+/** What the cover lists: each sheet with its pages. */
+function contentsOf(bare: readonly { sheet: SheetName }[], pagesBefore: number): ContentsEntry[] {
+  const names = [...new Set(bare.map(({ sheet }) => sheet))];
+  return names.map((name) => ({
+    title: SHEETS[name].title,
+    first: pagesBefore + 1 + bare.findIndex(({ sheet }) => sheet === name),
+    last: pagesBefore + 1 + bare.findLastIndex(({ sheet }) => sheet === name),
+  }));
+}
+
 /**
  * Composes the printed pack. Pure: the same input gives the same pages. Throws a RangeError for a printer scale that is not believed.
  */
 export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options: PackOptions): Pack {
   const fault = scaleFault(options.printerScale);
   if (fault !== null) throw new RangeError(fault);
-  const [scaleX, scaleY] = options.printerScale;
-  // A page is composed in the millimetres that come out; a printer that prints long therefore has more room on its sheet.
-  const paper: Point = [PAPERS[options.paper][0] * scaleX, PAPERS[options.paper][1] * scaleY];
   const reason = doNotUse(plan);
-  const input = { setup, plan, fonts, paper, stopped: reason !== null, options };
-  const bare = options.sheets.flatMap((name) => SHEETS[name].pages(input).map((page) => ({ ...page, sheet: name })));
-  const pages = bare.map(({ sheet, title, widthMm, heightMm, items }, index): Page => {
+  const input = { setup, plan, fonts, stopped: reason !== null, options, contents: [] };
+  const others = options.sheets.filter((name) => name !== "cover").flatMap((name) => pagesOf(name, input));
+  const withContents = (pagesBefore: number) => pagesOf("cover", { ...input, contents: contentsOf(others, pagesBefore) });
+  // The cover's own length does not depend on the page numbers that it lists.
+  const covers = options.sheets.includes("cover") ? withContents(withContents(0).length) : [];
+  const bare = [...covers, ...others];
+  const pages = bare.map(({ sheet, title, widthMm, heightMm, items, scale, uncorrected }, index): Page => {
     const facts = {
       name: titleOf(setup),
       setupId: plan.setupId,
@@ -66,17 +99,11 @@ export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options
       title,
       number: index + 1,
       count: bare.length,
-      printerScale: options.printerScale,
+      correction: uncorrected ? null : options.printerScale,
       doNotUse: reason,
     };
     const { head, foot } = furniture(widthMm, heightMm, facts, fonts);
-    return { sheet, title, widthMm, heightMm, printerScale: options.printerScale, items: [...head, ...items, ...foot] };
+    return { sheet, title, widthMm, heightMm, printerScale: scale, items: [...head, ...items, ...foot] };
   });
-  return {
-    title: titleOf(setup),
-    setupId: plan.setupId,
-    date: options.date,
-    version: options.version,
-    pages,
-  };
+  return { title: titleOf(setup), setupId: plan.setupId, date: options.date, version: options.version, pages };
 }

@@ -37,15 +37,29 @@ export interface TextItem {
   readonly backdrop?: boolean;
 }
 
+/** A coloured picture in dots, the one thing that lines cannot say. */
+export interface ImageItem {
+  readonly kind: "image";
+  /** Its lower left corner and size, mm. */
+  readonly x: number;
+  readonly y: number;
+  readonly widthMm: number;
+  readonly heightMm: number;
+  readonly columns: number;
+  readonly rows: number;
+  /** Red, green, blue of every dot, upper row first. */
+  readonly rgb: Uint8Array;
+}
+
 /** Items that are cut off at a rectangle [left, bottom, right, top] and moved by an offset. */
 export interface ClippedItem {
   readonly kind: "clipped";
   readonly window: readonly [number, number, number, number];
   readonly offset: Point;
-  readonly items: readonly (PathItem | TextItem)[];
+  readonly items: readonly (PathItem | TextItem | ImageItem)[];
 }
 
-export type Item = PathItem | TextItem | ClippedItem;
+export type Item = PathItem | TextItem | ImageItem | ClippedItem;
 
 export interface Page {
   /** Which sheet it belongs to, such as "template". */

@@ -1,5 +1,5 @@
 import { jsPDF } from "jspdf";
-import { type ClippedItem, type Ink, type Item, type Pack, type Page, type PathItem, plateOf, type TextItem } from "./page";
+import { type ClippedItem, type ImageItem, type Ink, type Item, type Pack, type Page, type PathItem, plateOf, type TextItem } from "./page";
 
 /** The font files that are embedded, as bytes of TrueType. */
 export interface FontFiles {
@@ -42,6 +42,7 @@ class PagePen {
   draw(item: Item): void {
     if (item.kind === "path") this.path(item);
     else if (item.kind === "text") this.text(item);
+    else if (item.kind === "image") this.image(item);
     else this.clipped(item);
   }
 
@@ -84,6 +85,22 @@ class PagePen {
       base += width * Math.sin(angle);
     }
     document.text(words, left, base, turnDeg === undefined ? {} : { angle: turnDeg });
+  }
+
+  private image({ x, y, widthMm, heightMm, columns, rows, rgb }: ImageItem): void {
+    const data = new Uint8ClampedArray(4 * columns * rows).fill(255);
+    for (let dot = 0; dot < columns * rows; dot++) data.set(rgb.subarray(3 * dot, 3 * dot + 3), 4 * dot);
+    const [left, top] = [this.x(x), this.y(y + heightMm)];
+    this.document.addImage(
+      { data, width: columns, height: rows },
+      "RGBA",
+      left,
+      top,
+      widthMm / this.scaleX,
+      heightMm / this.scaleY,
+      undefined,
+      "MEDIUM",
+    );
   }
 
   private clipped({ window: [left, bottom, right, top], offset, items }: ClippedItem): void {

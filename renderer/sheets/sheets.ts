@@ -1,6 +1,12 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { traySizeMm } from "../engine/geometry/tray-outline";
+import { benchList } from "./bench-list";
+import { calibrationItems } from "./calibration";
+import { checklist } from "./checklist";
+import { type ContentsEntry, cover } from "./cover";
+import { fieldKeyPages } from "./field-key";
+import { type Block, flowPages } from "./flow";
 import type { SheetFonts } from "./font-metrics";
 import type { BarePage, PackOptions } from "./pack";
 import type { Point } from "./page";
@@ -20,11 +26,15 @@ export interface SheetInput {
   /** Whether the pages carry the band that forbids the use. */
   readonly stopped: boolean;
   readonly options: PackOptions;
+  /** What the pack holds, for the cover; empty while the other sheets are made. */
+  readonly contents: readonly ContentsEntry[];
 }
 
-interface Sheet {
+export interface Sheet {
   readonly title: string;
   readonly pages: (input: SheetInput) => BarePage[];
+  /** Printed as the printer will have it, whatever its correction. */
+  readonly uncorrected?: boolean;
 }
 
 const upright = ({ paper: [widthMm, heightMm], stopped }: SheetInput): PaperSheet => ({ widthMm, heightMm, stopped });
@@ -36,6 +46,9 @@ const tabled = (title: string, { paper: [widthMm, heightMm] }: SheetInput, pages
     heightMm,
     items,
   }));
+
+const flowed = (title: string, input: SheetInput, blocks: readonly Block[]): BarePage[] =>
+  tabled(title, input, flowPages(blocks, upright(input), input.fonts));
 
 /** A 1:1 sheet of the tray, on as many tiles as it needs. */
 const tiled = (title: string, { setup, plan, fonts, paper, stopped, options }: SheetInput, answers: boolean): BarePage[] => {
@@ -59,6 +72,10 @@ const tiled = (title: string, { setup, plan, fonts, paper, stopped, options }: S
 
 /** Every sheet by its name: the order is that of the pack. */
 export const SHEETS = {
+  cover: {
+    title: "Cover",
+    pages: (input) => flowed("Session pack", input, cover(input.setup, input.plan, input.fonts, input.contents, input.options.version)),
+  },
   template: { title: "Tray template", pages: (input) => tiled("Tray template", input, true) },
   record: { title: "Record sheet", pages: (input) => tiled("Record sheet", input, false) },
   "probe-table": {
@@ -69,6 +86,28 @@ export const SHEETS = {
     title: "Probe table for the class",
     pages: (input) => tabled("Probe table for the class", input, probeTable(input.setup, input.plan, true, upright(input), input.fonts)),
   },
+  "field-key": {
+    title: "Field key",
+    pages: (input) =>
+      fieldKeyPages(input, input.options.fieldInk ?? (input.options.saveInk ? "hatched" : "colour"), input.options.fieldFullSize ?? false),
+  },
+  checklist: {
+    title: "Low-voltage checklist",
+    pages: (input) => flowed("Low-voltage checklist", input, checklist(input.setup, input.plan)),
+  },
+  "bench-list": { title: "Bench list", pages: (input) => flowed("Bench list", input, benchList(input.setup, input.plan)) },
+  calibration: {
+    title: "Printer calibration",
+    uncorrected: true,
+    pages: (input) => [
+      {
+        title: "Printer calibration",
+        widthMm: input.paper[0],
+        heightMm: input.paper[1],
+        items: calibrationItems(upright(input), input.fonts),
+      },
+    ],
+  },
 } as const satisfies Readonly<Record<string, Sheet>>;
 
 export type SheetName = keyof typeof SHEETS;
@@ -78,6 +117,9 @@ export const SHEET_NAMES = Object.keys(SHEETS) as readonly SheetName[];
 
 /** Ready choices of sheets for those who work from them. */
 export const PRESETS: readonly (readonly [title: string, sheets: readonly SheetName[]])[] = [
-  ["Technician", ["template", "probe-table"]],
+  ["Technician", ["template", "probe-table", "bench-list"]],
+  ["Teacher", ["cover", "template", "probe-table", "field-key", "bench-list"]],
   ["Class", ["record", "class-table"]],
+  ["Safety", ["cover", "checklist"]],
+  ["Everything", SHEET_NAMES],
 ];

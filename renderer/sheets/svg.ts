@@ -1,4 +1,4 @@
-import { type Ink, type Item, type Page, type PathItem, plateOf, type TextItem } from "./page";
+import { type ImageItem, type Ink, type Item, type Page, type PathItem, plateOf, type TextItem } from "./page";
 
 /** A page as SVG for the screen, from the very data that the PDF is drawn from. */
 
@@ -28,9 +28,37 @@ function textSvg(item: TextItem, height: number): string {
   return `${under}<text x="${mm(x)}" y="${mm(height - y)}" font-size="${sizeMm}"${bold ? ' font-weight="700"' : ""} text-anchor="${anchor}" fill="${colour(ink ?? 0)}"${turn}>${escaped(text)}</text>`;
 }
 
+/** A picture as a device-independent bitmap of 24 bits a dot, rows from below (BITMAPINFOHEADER), which needs no compression. */
+function bitmap({ columns, rows, rgb }: ImageItem): string {
+  const stride = 4 * Math.ceil((3 * columns) / 4);
+  const bytes = new Uint8Array(54 + stride * rows);
+  const view = new DataView(bytes.buffer);
+  bytes.set([0x42, 0x4d]);
+  view.setUint32(2, bytes.length, true);
+  view.setUint32(10, 54, true);
+  view.setUint32(14, 40, true);
+  view.setInt32(18, columns, true);
+  view.setInt32(22, rows, true);
+  view.setUint16(26, 1, true);
+  view.setUint16(28, 24, true);
+  for (let row = 0; row < rows; row++) {
+    for (let column = 0; column < columns; column++) {
+      const from = 3 * ((rows - 1 - row) * columns + column);
+      bytes.set([rgb[from + 2], rgb[from + 1], rgb[from]], 54 + stride * row + 3 * column);
+    }
+  }
+  let binary = "";
+  for (let start = 0; start < bytes.length; start += 0x8000) binary += String.fromCharCode(...bytes.subarray(start, start + 0x8000));
+  return `data:image/bmp;base64,${btoa(binary)}`;
+}
+
+const imageSvg = (item: ImageItem, height: number): string =>
+  `<image x="${mm(item.x)}" y="${mm(height - item.y - item.heightMm)}" width="${mm(item.widthMm)}" height="${mm(item.heightMm)}" preserveAspectRatio="none" href="${bitmap(item)}"/>`;
+
 function itemSvg(item: Item, height: number, next: () => number): string {
   if (item.kind === "path") return pathSvg(item, height);
   if (item.kind === "text") return textSvg(item, height);
+  if (item.kind === "image") return imageSvg(item, height);
   const id = `window${next()}`;
   const [left, bottom, right, top] = item.window;
   const [dx, dy] = item.offset;

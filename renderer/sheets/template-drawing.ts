@@ -4,7 +4,7 @@ import { boundsOf, chainOf, outlineOf } from "../engine/geometry/outline";
 import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
 import type { SheetFonts } from "./font-metrics";
 import { type Box, besideBox, besidePoint, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
-import { circle, line, outline, type PathItem, type Point, plate, type TextItem } from "./page";
+import { circle, type ImageItem, line, outline, type PathItem, type Point, plate, type TextItem } from "./page";
 import { CHORD_MM, chainsOf, crossArmMm, partMarks, tagsOf } from "./part-marks";
 
 /** What a drawing of the tray at full size shows; y away from the reader, origin in the tray's lower left corner. */
@@ -20,7 +20,7 @@ export interface DrawingChoice {
 export interface Drawing {
   /** [left, bottom, right, top] of everything, mm. */
   readonly bounds: Box;
-  readonly items: readonly (PathItem | TextItem)[];
+  readonly items: readonly (PathItem | TextItem | ImageItem)[];
   /** Point numbers and part tags for which there was no room. */
   readonly leftOut: number;
 }

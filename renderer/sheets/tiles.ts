@@ -49,8 +49,9 @@ function seamItems([left, bottom, right, top]: Box, columns: readonly Interval[]
 }
 
 /** What a page shows of the drawing: paths that reach into it, texts that lie whole in it. */
-function shownIn([left, bottom, right, top]: Box, items: readonly (PathItem | TextItem)[]): (PathItem | TextItem)[] {
-  return items.flatMap((item): (PathItem | TextItem)[] => {
+function shownIn([left, bottom, right, top]: Box, items: Drawing["items"]): Drawing["items"] {
+  return items.flatMap((item): Drawing["items"] => {
+    if (item.kind === "image") return [item];
     if (item.kind === "text") {
       const plate = plateOf(item);
       if (plate === null) return [item];
