@@ -4,7 +4,7 @@ import { type FittedNetwork, fitContacts } from "./fit";
 import { type Grid, gridOfPitch, halved, pitchFor } from "./grid";
 import type { FieldLayout } from "./layout";
 import { type ReadingMap, readingMap } from "./reading";
-import { solveUnitPotentials, type UnitPotentials } from "./unit-potentials";
+import { FINE_TOLERANCE, LIVE_TOLERANCE, solveUnitPotentials, type UnitPotentials } from "./unit-potentials";
 
 /** One grid with everything that was solved on it. */
 export interface SolvedGrid {
@@ -22,12 +22,12 @@ export interface FieldSolution {
   readonly coarse: SolvedGrid;
 }
 
-function* solveGrid(layout: FieldLayout, grid: Grid, onSolved: (share: number) => void): Generator<void, SolvedGrid> {
+function* solveGrid(layout: FieldLayout, grid: Grid, tolerance: number, onSolved: (share: number) => void): Generator<void, SolvedGrid> {
   const plain = discretise(layout, grid);
   yield;
   const network = fitContacts(plain);
   yield;
-  const units = yield* solveUnitPotentials(network, onSolved);
+  const units = yield* solveUnitPotentials(network, tolerance, onSolved);
   return { network, units, map: readingMap(network) };
 }
 
@@ -44,7 +44,8 @@ export function* solveField(
 ): Generator<void, FieldSolution> {
   const { tray } = layout.setup;
   const grid = gridOfPitch(tray, pitchFor(tray, quality));
-  const coarse = yield* solveGrid(layout, halved(grid), (share) => onProgress(0.2 * share));
-  const fine = yield* solveGrid(layout, grid, (share) => onProgress(0.2 + 0.8 * share));
+  const tolerance = quality === "live" ? LIVE_TOLERANCE : FINE_TOLERANCE;
+  const coarse = yield* solveGrid(layout, halved(grid), tolerance, (share) => onProgress(0.2 * share));
+  const fine = yield* solveGrid(layout, grid, tolerance, (share) => onProgress(0.2 + 0.8 * share));
   return { layout, quality, fine, coarse };
 }

@@ -19,7 +19,9 @@ export interface UnitPotentials {
 }
 
 /** The error energy at which a solve ends, as a share of the field's power (its root). */
-const TOLERANCE = 1e-9;
+export const FINE_TOLERANCE = 1e-9;
+/** The same while a part moves: still a hundredth of what the grid itself gets wrong. */
+export const LIVE_TOLERANCE = 1e-6;
 
 function finestLevel(network: Network): Level {
   const { grid, active, east, north, contacts, bridges, layout } = network;
@@ -124,9 +126,14 @@ function unpadded(network: Network, level: Level, solution: SystemVector, electr
 /**
  * Solves the unit potentials of all electrodes; the last one follows from the others, because together they make 1 V everywhere.
  * Yields now and then so that a caller can stop or pause it.
+ * @param tolerance see FINE_TOLERANCE.
  * @param onSolved told the share of the work done, 0 to 1.
  */
-export function* solveUnitPotentials(network: Network, onSolved: (share: number) => void = () => {}): Generator<void, UnitPotentials> {
+export function* solveUnitPotentials(
+  network: Network,
+  tolerance: number,
+  onSolved: (share: number) => void = () => {},
+): Generator<void, UnitPotentials> {
   const level = finestLevel(network);
   const hierarchy = yield* buildHierarchy(level);
   const count = network.layout.electrodeCount;
@@ -135,7 +142,7 @@ export function* solveUnitPotentials(network: Network, onSolved: (share: number)
   const residuals: SystemVector[] = [];
   let record: SolveRecord = { iterations: 0, relativeResidual: 0 };
   for (let electrode = 0; electrode + 1 < count; electrode++) {
-    const solved = yield* conjugateGradient(hierarchy, drives[electrode], TOLERANCE, null);
+    const solved = yield* conjugateGradient(hierarchy, drives[electrode], tolerance, null);
     solutions.push(solved.solution);
     residuals.push(solved.residual);
     record = {
