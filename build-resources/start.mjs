@@ -4,14 +4,19 @@ import { startBrowser } from "./start-browser.mjs";
 import { electronBinary, startElectron } from "./start-electron.mjs";
 import { ensureBuilt, ensurePackages, say } from "./steps.mjs";
 
-/** `npm start [-- FILE …]`: sets up what is missing, builds what is stale, and opens the program, with the named setups if there are any. */
+/**
+ * `npm start [-- [--browser] FILE …]`: sets up what is missing, builds what is stale, and opens the program, with the named setups if there
+ * are any. `--browser` opens it in a browser window even where Electron could be had.
+ */
 
 const LARGEST_FILE_BYTES = 5 * 1024 * 1024;
 
 const hasDisplay = () => process.platform !== "linux" || Boolean(process.env.DISPLAY || process.env.WAYLAND_DISPLAY);
 
 /** Paths on the command line are meant from the folder in which npm was called. */
-const files = process.argv.slice(2).map((name) => resolve(process.env.INIT_CWD ?? process.cwd(), name));
+const given = process.argv.slice(2);
+const inBrowser = given.includes("--browser");
+const files = given.filter((name) => name !== "--browser").map((name) => resolve(process.env.INIT_CWD ?? process.cwd(), name));
 
 /** @returns what a browser window is told of a file: its name and text, or why it cannot be read. */
 function contentsOf(path) {
@@ -30,10 +35,10 @@ try {
   }
   await ensurePackages();
   await ensureBuilt();
-  const binary = await electronBinary();
+  const binary = inBrowser ? null : await electronBinary();
   if (binary !== null) startElectron(binary, files);
   else {
-    say("Electron is not here and cannot be downloaded, so the program opens in a browser window of its own.");
+    if (!inBrowser) say("Electron is not here and cannot be downloaded, so the program opens in a browser window of its own.");
     await startBrowser(files.map(contentsOf));
   }
 } catch (error) {
