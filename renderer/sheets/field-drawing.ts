@@ -22,6 +22,9 @@ export interface FieldChoice {
 }
 
 const LABEL_MM = 2.6;
+/** Height of a plate for volts, and for words, whose letters reach below the line. */
+const VOLTS_HEIGHT_MM = 0.9 * LABEL_MM;
+const WORDS_HEIGHT_MM = 1.14 * LABEL_MM;
 
 const pairs = (path: Float64Array, scale: number): Point[] =>
   Array.from({ length: path.length / 2 }, (_, k): Point => [path[2 * k] * scale, path[2 * k + 1] * scale]);
@@ -58,7 +61,7 @@ function voltLabels(plan: Plan, scale: number, places: LabelPlaces, fonts: Sheet
   return plan.equipotentials.flatMap(({ volts, paths }) => {
     const words = plainVolts(volts);
     const width = fonts.regular.widthOf(words, LABEL_MM) + 0.8;
-    const height = LABEL_MM * 0.9;
+    const height = VOLTS_HEIGHT_MM;
     return paths
       .map((path) => pairs(path, scale))
       .filter((chain) => chain.length > 1)
@@ -106,8 +109,8 @@ function partTags(setup: Setup, scale: number, places: LabelPlaces, fonts: Sheet
     for (const farMm of [4, 40]) {
       for (const words of tagsOf(part, setup.supply.volts)) {
         const width = fonts.bold.widthOf(words, LABEL_MM) + 0.8;
-        const middle = places.place(besideBox([left, bottom, right, top], width, LABEL_MM * 0.9, 1.2, farMm), width, LABEL_MM * 0.9);
-        if (middle !== null) return [plate(middle, words, LABEL_MM, [width, LABEL_MM * 0.9], true)];
+        const middle = places.place(besideBox([left, bottom, right, top], width, WORDS_HEIGHT_MM, 1.2, farMm), width, WORDS_HEIGHT_MM);
+        if (middle !== null) return [plate(middle, words, LABEL_MM, [width, WORDS_HEIGHT_MM], true)];
       }
     }
     return [];

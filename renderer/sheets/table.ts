@@ -18,6 +18,8 @@ export interface TablePage {
 
 const ROW_MM = 5.4;
 const HEADING_MM = 7.6;
+const NOTE_MM = 2.6;
+const NOTE_LINE_MM = 3.4;
 
 /** Breaks words into lines that fit a width. @returns at least one line. */
 export function wrapped(words: string, widthMm: number, sizeMm: number, fonts: SheetFonts, bold = false): string[] {
@@ -94,12 +96,13 @@ export function tablePages(
   };
   open();
   rows.forEach((row, index) => {
-    const height = "heading" in row ? HEADING_MM + (row.note === undefined ? 0 : 4) : ROW_MM;
+    const notes = "heading" in row && row.note !== undefined ? wrapped(row.note, width, NOTE_MM, fonts) : [];
+    const height = "heading" in row ? HEADING_MM + notes.length * NOTE_LINE_MM : ROW_MM;
     const needed = "heading" in row && index + 1 < rows.length ? height + ROW_MM : height;
     if (y - needed < bottom) open();
     if ("heading" in row) {
       items.push(text(x, y - 5.6, row.heading, 3.5, { bold: true }));
-      if (row.note !== undefined) items.push(text(x, y - 9.8, row.note, 2.6, { ink: 0.25 }));
+      for (const [k, words] of notes.entries()) items.push(text(x, y - 9.6 - k * NOTE_LINE_MM, words, NOTE_MM, { ink: 0.2 }));
     } else {
       let at = x;
       columns.forEach((column, place) => {

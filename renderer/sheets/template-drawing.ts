@@ -32,6 +32,8 @@ const TAG_MM = 3;
 const NUMBER_SIZES_MM = [2.5, 2];
 /** Share of the size that capitals and figures are high, with a little air. */
 const PLATE_HEIGHT = 0.86;
+/** The same for words, whose letters reach below the line. */
+const WORDS_HEIGHT = 1.14;
 
 /** @returns [left, bottom, right, top] of a tray's drawing, mm; the same mirrored. */
 export function drawingBounds(setup: Setup): Box {
@@ -92,7 +94,7 @@ function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items
   for (const { placed, tags, sizeMm, bold } of tagged) {
     const box = boundsOf(outlineOf(placed));
     const centre: Point = [(box[0] + box[2]) / 2, (box[1] + box[3]) / 2];
-    const height = sizeMm * PLATE_HEIGHT + 0.3;
+    const height = sizeMm * WORDS_HEIGHT;
     const found = (function* () {
       for (const farMm of [4, 60]) {
         for (const words of tags) {
