@@ -1,12 +1,12 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
-import { boundsOf, chainOf, outlineOf } from "../engine/geometry/outline";
+import { chainOf, outlineOf } from "../engine/geometry/outline";
 import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
 import { colourPicture, hatchedBands } from "./field-colours";
 import type { SheetFonts } from "./font-metrics";
-import { besideBox, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
+import { type Interval, type LabelPlaces, labelPlaces } from "./label-places";
 import { type ImageItem, line, outline, type PathItem, type Point, plate, type TextItem } from "./page";
-import { CHORD_MM, chainsOf, partMarks, tagsOf } from "./part-marks";
+import { besidePlaced, CHORD_MM, chainsOf, partMarks, tagsOf } from "./part-marks";
 import { type Drawing, drawingBounds } from "./template-drawing";
 
 /** How the potential between the lines is shown: in colour, hatched for grey printers, or not at all. */
@@ -105,11 +105,10 @@ function fieldLineItems(plan: Plan, scale: number): PathItem[] {
 
 function partTags(setup: Setup, scale: number, places: LabelPlaces, fonts: SheetFonts): TextItem[] {
   return setup.parts.flatMap((part): TextItem[] => {
-    const [left, bottom, right, top] = boundsOf(outlineOf(part)).map((value) => value * scale);
     for (const farMm of [4, 40]) {
       for (const words of tagsOf(part, setup.supply.volts)) {
         const width = fonts.bold.widthOf(words, LABEL_MM) + 0.8;
-        const middle = places.place(besideBox([left, bottom, right, top], width, WORDS_HEIGHT_MM, 1.2, farMm), width, WORDS_HEIGHT_MM);
+        const middle = places.place(besidePlaced(part, scale, width, WORDS_HEIGHT_MM, farMm), width, WORDS_HEIGHT_MM);
         if (middle !== null) return [plate(middle, words, LABEL_MM, [width, WORDS_HEIGHT_MM], true)];
       }
     }

@@ -134,3 +134,34 @@ export function* besideBox([left, bottom, right, top]: Box, width: number, heigh
     ] as const;
   }
 }
+
+/**
+ * Middles for a label against an outline itself, where a box round it would leave gaps: at its upper side first.
+ * @param chain the outline counter-clockwise, its solid on the left.
+ */
+export function* besideOutline(chain: readonly Point[], width: number, height: number, gapMm: number, farMm: number): Iterable<Point> {
+  const lengths = chain.map(([x, y], k) => {
+    const [nextX, nextY] = chain[(k + 1) % chain.length];
+    return Math.hypot(nextX - x, nextY - y);
+  });
+  const step = Math.max(2, lengths.reduce((sum, length) => sum + length, 0) / 60);
+  const places: { at: Point; out: Point }[] = [];
+  chain.forEach(([x, y], k) => {
+    const [nextX, nextY] = chain[(k + 1) % chain.length];
+    const count = Math.max(1, Math.round(lengths[k] / step));
+    if (lengths[k] === 0) return;
+    const out: Point = [(nextY - y) / lengths[k], (x - nextX) / lengths[k]];
+    for (let n = 0; n < count; n++) {
+      const share = (n + 0.5) / count;
+      places.push({ at: [x + share * (nextX - x), y + share * (nextY - y)], out });
+    }
+  });
+  places.sort((a, b) => b.out[1] - a.out[1]);
+  for (let gap = gapMm; gap <= farMm; gap = gap * 1.4 + 0.5) {
+    for (const { at, out } of places) {
+      // Pushed out until the label's nearest corner or side clears the tangent.
+      const push = gap + (Math.abs(out[0]) * width + Math.abs(out[1]) * height) / 2;
+      yield [at[0] + out[0] * push, at[1] + out[1] * push];
+    }
+  }
+}

@@ -1,7 +1,8 @@
-import type { Part } from "../../shared-types/setup";
+import type { Part, PlacedShape } from "../../shared-types/setup";
 import { radians } from "../../shared-types/units";
 import { boundsOf, chainOf, outlineOf } from "../engine/geometry/outline";
 import { distanceToOutline } from "../engine/geometry/signed-distance";
+import { besideBox, besideOutline } from "./label-places";
 import { line, outline, type PathItem, type Point } from "./page";
 
 /** Chords stray at most this from true arcs, mm: less than a printer's dot. */
@@ -80,4 +81,23 @@ export function partMarks(part: Part, saveInk: boolean): PathItem[] {
     outline(chains, 0.3),
     ...centreCross(part),
   ];
+}
+
+const TAG_GAP_MM = 1.2;
+
+/**
+ * @param scale paper mm for a tray mm.
+ * @returns middles for a tag of this size (paper mm) beside a part or slab: round its box where it fills it, else along its outline.
+ */
+export function besidePlaced(placed: PlacedShape, scale: number, width: number, height: number, farMm: number): Iterable<Point> {
+  const { shape, turnDeg } = placed;
+  const fillsItsBox =
+    shape.kind === "disc" || shape.kind === "ring" || (shape.kind !== "polygon" && shape.kind !== "arc" && turnDeg % 90 === 0);
+  const loops = outlineOf(placed);
+  if (fillsItsBox) {
+    const [left, bottom, right, top] = boundsOf(loops).map((value) => value * scale);
+    return besideBox([left, bottom, right, top], width, height, TAG_GAP_MM, farMm);
+  }
+  const chain = chainOf(loops[0], 0.2).map(([x, y]): Point => [x * scale, y * scale]);
+  return besideOutline(chain, width, height, TAG_GAP_MM, farMm);
 }

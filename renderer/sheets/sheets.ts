@@ -12,6 +12,7 @@ import type { BarePage, PackOptions } from "./pack";
 import type { Point } from "./page";
 import { type Sheet as PaperSheet, tilingFor } from "./paper";
 import { probeTable } from "./probe-table";
+import { recordPage } from "./record-page";
 import type { TablePage } from "./table";
 import { drawingBounds, trayDrawing } from "./template-drawing";
 import { columnsOf, rowsOf, tilesOf } from "./tiles";
@@ -77,7 +78,13 @@ export const SHEETS = {
     pages: (input) => flowed("Session pack", input, cover(input.setup, input.plan, input.fonts, input.contents, input.options.version)),
   },
   template: { title: "Tray template", pages: (input) => tiled("Tray template", input, true) },
-  record: { title: "Record sheet", pages: (input) => tiled("Record sheet", input, false) },
+  record: {
+    title: "Record sheet",
+    pages: (input) => [
+      ...tiled("Record sheet", input, false),
+      ...flowed("Record sheet, readings", input, recordPage(input.setup, upright(input))),
+    ],
+  },
   "probe-table": {
     title: "Probe table for staff",
     pages: (input) => tabled("Probe table for staff", input, probeTable(input.setup, input.plan, false, upright(input), input.fonts)),

@@ -1,11 +1,11 @@
 import type { Plan, ProbePoint } from "../../shared-types/plan";
-import type { Setup } from "../../shared-types/setup";
-import { boundsOf, chainOf, outlineOf } from "../engine/geometry/outline";
+import type { PlacedShape, Setup } from "../../shared-types/setup";
+import { chainOf, outlineOf, pointAlong } from "../engine/geometry/outline";
 import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
 import type { SheetFonts } from "./font-metrics";
-import { type Box, besideBox, besidePoint, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
+import { type Box, besidePoint, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
 import { circle, type ImageItem, line, outline, type PathItem, type Point, plate, type TextItem } from "./page";
-import { CHORD_MM, chainsOf, crossArmMm, partMarks, tagsOf } from "./part-marks";
+import { besidePlaced, CHORD_MM, chainsOf, crossArmMm, partMarks, tagsOf } from "./part-marks";
 
 /** What a drawing of the tray at full size shows; y away from the reader, origin in the tray's lower left corner. */
 export interface DrawingChoice {
@@ -78,6 +78,16 @@ function borderTowards([x, y]: Point, [middleX, middleY]: Point, width: number, 
   return [middleX + share * dx, middleY + share * dy];
 }
 
+/** The place of an outline that is nearest to a label, to half a millimetre or so. */
+function nearestOn(placed: PlacedShape, [x, y]: Point, width: number, height: number): Point {
+  const places = outlineOf(placed)
+    .flat()
+    .flatMap((piece) => Array.from({ length: 24 }, (_, k) => pointAlong(piece, k / 24)));
+  const away = ([px, py]: Point): number =>
+    Math.hypot(Math.max(0, Math.abs(px - x) - width / 2), Math.max(0, Math.abs(py - y) - height / 2));
+  return places.reduce((best, place) => (away(place) < away(best) ? place : best));
+}
+
 /** Tags of parts and slabs, each in its fullest wording that finds room. */
 function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items: (PathItem | TextItem)[]; leftOut: number } {
   const items: (PathItem | TextItem)[] = [];
@@ -92,14 +102,12 @@ function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items
   ];
   let leftOut = 0;
   for (const { placed, tags, sizeMm, bold } of tagged) {
-    const box = boundsOf(outlineOf(placed));
-    const centre: Point = [(box[0] + box[2]) / 2, (box[1] + box[3]) / 2];
     const height = sizeMm * WORDS_HEIGHT;
     const found = (function* () {
       for (const farMm of [4, 60]) {
         for (const words of tags) {
           const width = (bold ? fonts.bold : fonts.regular).widthOf(words, sizeMm) + 0.8;
-          const middle = places.place(besideBox(box, width, height, 1.2, farMm), width, height);
+          const middle = places.place(besidePlaced(placed, 1, width, height, farMm), width, height);
           if (middle !== null) yield { words, middle, width };
         }
       }
@@ -109,13 +117,9 @@ function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items
       continue;
     }
     const { words, middle, width } = found;
-    const gap = Math.max(
-      box[0] - middle[0] - width / 2,
-      middle[0] - width / 2 - box[2],
-      box[1] - middle[1] - height / 2,
-      middle[1] - height / 2 - box[3],
-    );
-    if (gap > 4) items.push(line([centre, borderTowards(centre, middle, width, height)], 0.1, 0.3));
+    const near = nearestOn(placed, middle, width, height);
+    const end = borderTowards(near, middle, width, height);
+    if (Math.hypot(end[0] - near[0], end[1] - near[1]) > 4) items.push(line([near, end], 0.1, 0.3));
     items.push(plate(middle, words, sizeMm, [width, height], bold));
   }
   return { items, leftOut };
