@@ -1,5 +1,7 @@
+import { crossingsOf } from "../geometry/crossings-of-pieces";
 import { distanceToOutline } from "../geometry/signed-distance";
 import type { FittedNetwork } from "./fit";
+import { wallThicknessMm } from "./layout";
 import { fitAtCentre, type ScatteredValues, scatteredValues } from "./local-polynomial";
 
 /** Potential and its slope at a place in the water. */
@@ -71,6 +73,7 @@ export function readerOf(network: FittedNetwork, map: ReadingMap, potentials: Fl
   const { grid, active, east, north, conduction, layout, localFields } = network;
   const { columns, rows, pitchXMm, pitchYMm } = grid;
   const { care } = map;
+  const plates = layout.insulators.filter(({ placed }) => wallThicknessMm(placed.shape) < 2 * Math.max(pitchXMm, pitchYMm));
   const weightsX = new Float64Array(4);
   const slopesX = new Float64Array(4);
   const weightsY = new Float64Array(4);
@@ -146,8 +149,24 @@ export function readerOf(network: FittedNetwork, map: ReadingMap, potentials: Fl
     return best;
   }
 
+  /** Whether a thin insulating plate stands between two places. */
+  function passesPlate(x0: number, y0: number, x1: number, y1: number): boolean {
+    if (x0 === x1 && y0 === y1) return false;
+    const way = { kind: "edge", x0, y0, x1, y1 } as const;
+    const [left, bottom, right, top] = [Math.min(x0, x1), Math.min(y0, y1), Math.max(x0, x1), Math.max(y0, y1)];
+    return plates.some(
+      ({ bounds, loops }) =>
+        bounds[0] <= right &&
+        bounds[2] >= left &&
+        bounds[1] <= top &&
+        bounds[3] >= bottom &&
+        loops.some((loop) => loop.some((piece) => crossingsOf(way, piece).length > 0)),
+    );
+  }
+
   /** Whether a node sees the place past a thin conductor: the middle of the way must be in the water as well. */
   function sameSide(x: number, y: number, nodeX: number, nodeY: number, body: number): boolean {
+    if (plates.length > 0 && passesPlate(x, y, nodeX, nodeY)) return false;
     if (body < 0) return true;
     const potential = localFields[body].at(x, y);
     return potential === null || (potential(nodeX, nodeY) > 0 && potential((x + nodeX) / 2, (y + nodeY) / 2) > 0);
