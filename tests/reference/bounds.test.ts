@@ -8,4 +8,4 @@ it("the bound that a number carries covers the true error in at least 95 % and i
   expect(coveredPlaces / places, inWords).toBeGreaterThanOrEqual(0.95);
   expect(coveredCurrents / currents, inWords).toBeGreaterThanOrEqual(0.9);
   expect(medianRatio, inWords).toBeLessThanOrEqual(10);
-}, 600_000);
+}, 1_200_000);

@@ -161,7 +161,7 @@ describe("a part that is dragged", () => {
     }
     expect(roughness(resistances.map((value) => value / resistances[0]))).toBeLessThanOrEqual(1e-4);
     expect(roughness(readings)).toBeLessThanOrEqual(1e-4);
-  }, 120_000);
+  }, 900_000);
 });
 
 /** Largest distance of a value from the cubic through its neighbours two and four steps away on each side. */
