@@ -3,6 +3,7 @@ import type { Plan, PlanOutcome } from "../shared-types/plan";
 import type { Setup } from "../shared-types/setup";
 import { setupId } from "../shared-types/setup-id";
 import { placesOf, qualityOf, type Request, requestOf, USAGE } from "./headless/arguments";
+import { jsonText } from "./headless/json-text";
 import { EXIT, Refusal } from "./headless/refusal";
 import { checkReport, probesReport, solveReport } from "./headless/reports";
 import { readSetup } from "./headless/setup-on-disk";
@@ -23,7 +24,7 @@ function planned(outcome: PlanOutcome): Plan {
 const printPlan = async (setup: Setup): Promise<PlanOutcome> => createPlanner().plan(setup, "print", clock);
 
 const print = (report: object): void => {
-  process.stdout.write(`${JSON.stringify(report, null, 2)}\n`);
+  process.stdout.write(`${jsonText(report)}\n`);
 };
 
 const say = (text: string): void => {

@@ -17,11 +17,30 @@ function worth(value: number | null, error: number): number | null {
   return figures >= MOST_FIGURES ? value : Number(value.toPrecision(figures));
 }
 
-/** @returns a bound rounded to three figures. */
-const bound = (error: number): number | null => (Number.isFinite(error) ? Number(error.toPrecision(3)) : null);
+/** @returns a bound rounded up to three figures; null for what is no number. */
+function bound(error: number): number | null {
+  if (!Number.isFinite(error)) return null;
+  const rounded = Number(error.toPrecision(3));
+  return rounded >= error ? rounded : Number((error * 1.005).toPrecision(3));
+}
 
 const boundedOf = (bounded: Bounded | null): { value: number | null; error: number | null } =>
   bounded === null ? { value: null, error: null } : { value: worth(bounded.value, bounded.error), error: bound(bounded.error) };
+
+function placeOf({ xMm, yMm, inside, volts, voltsError, fieldVPerM, directionDeg }: FieldReading): object {
+  if (volts === null) return { xMm, yMm, inside, volts, voltsError: null, fieldVPerM: null, directionDeg: null };
+  // A field that would not tell over a whole metre is rounding, and its direction means nothing.
+  const isCalm = fieldVPerM < voltsError;
+  return {
+    xMm,
+    yMm,
+    inside,
+    volts: worth(volts, voltsError),
+    voltsError: bound(voltsError),
+    fieldVPerM: isCalm ? 0 : Number(fieldVPerM.toPrecision(7)),
+    directionDeg: isCalm ? 0 : Number(directionDeg.toFixed(4)),
+  };
+}
 
 /** @returns the report of `solve`. */
 export function solveReport(plan: Plan, readings: readonly FieldReading[]): object {
@@ -47,15 +66,7 @@ export function solveReport(plan: Plan, readings: readonly FieldReading[]): obje
       currentA: worth(conductor.currentA, conductor.currentErrorA),
       currentErrorA: bound(conductor.currentErrorA),
     })),
-    at: readings.map(({ xMm, yMm, inside, volts, voltsError, fieldVPerM, directionDeg }) => ({
-      xMm,
-      yMm,
-      inside,
-      volts: worth(volts, voltsError),
-      voltsError: volts === null ? null : bound(voltsError),
-      fieldVPerM: volts === null ? null : Number(fieldVPerM.toPrecision(7)),
-      directionDeg: volts === null ? null : Number(directionDeg.toFixed(4)),
-    })),
+    at: readings.map(placeOf),
   };
 }
 
