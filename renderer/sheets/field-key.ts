@@ -28,11 +28,11 @@ function legend(left: number, bottom: number, width: number, [low, high]: Point)
 
 /** @returns the solved field: fitted to one page, or at full size on as many tiles as that needs. */
 export function fieldKeyPages(input: SheetInput, ink: FieldInk, fullSize: boolean): BarePage[] {
-  const { setup, plan, fonts, paper, stopped } = input;
+  const { setup, plan, fonts, paper, frame } = input;
   const bounds = drawingBounds(setup);
   const size: Point = [bounds[2] - bounds[0], bounds[3] - bounds[1]];
   if (fullSize) {
-    const tiling = tilingFor(size, paper, stopped);
+    const tiling = tilingFor(size, paper, frame);
     const drawing = fieldDrawing(
       setup,
       plan,
@@ -47,7 +47,7 @@ export function fieldKeyPages(input: SheetInput, ink: FieldInk, fullSize: boolea
     return tiles.map(({ label, ...page }) => ({ ...page, title: `Field key 1:1${tiles.length > 1 ? `, tile ${label}` : ""}` }));
   }
   const fits = [paper, [paper[1], paper[0]] as const].map(([widthMm, heightMm]) => {
-    const [left, bottom, right, top] = contentOf({ widthMm, heightMm, stopped });
+    const [left, bottom, right, top] = contentOf({ widthMm, heightMm, ...frame });
     const room = Math.min((right - left) / size[0], (top - bottom - LEGEND_MM) / size[1]);
     const reduction = REDUCTIONS.find((one) => 1 / one <= room + 1e-9) ?? 1 / room;
     return { widthMm, heightMm, left, bottom, right, top, reduction };

@@ -1,6 +1,6 @@
 import type { SheetFonts } from "./font-metrics";
 import { circle, type Item, line, outline, type PathItem, type Point, text } from "./page";
-import { PRINTER_EDGE_MM, STOP_BAND_MM } from "./paper";
+import { STOP_BAND_MM } from "./paper";
 
 /** What every page carries besides its content. */
 export interface PageFacts {
@@ -14,6 +14,8 @@ export interface PageFacts {
   readonly count: number;
   /** The correction for the short and the long side of the paper; null on a page that is printed without one. */
   readonly correction: Point | null;
+  /** What stays blank at every edge, mm. */
+  readonly edgeMm: number;
   /** Why the setup may not be used, or null. */
   readonly doNotUse: string | null;
 }
@@ -49,7 +51,7 @@ export function fitted(words: string, widthMm: number, sizeMm: number, fonts: Sh
 
 /** @returns what stands over and under a page's content: header first, as it is read. */
 export function furniture(widthMm: number, heightMm: number, facts: PageFacts, fonts: SheetFonts): { head: Item[]; foot: Item[] } {
-  const edge = PRINTER_EDGE_MM;
+  const edge = facts.edgeMm;
   const top = heightMm - edge;
   const right = widthMm - edge;
   const id = `Setup ${facts.setupId}`;
@@ -68,7 +70,7 @@ export function furniture(widthMm: number, heightMm: number, facts: PageFacts, f
       ],
       0.2,
     ),
-    ...(facts.doNotUse === null ? [] : stopBand(widthMm, heightMm, facts.doNotUse, fonts)),
+    ...(facts.doNotUse === null ? [] : stopBand(widthMm, heightMm, edge, facts.doNotUse, fonts)),
   ];
   const foot: Item[] = [
     ...checkBar(edge + 13, edge + 7, "x"),
@@ -90,9 +92,9 @@ function backdrop(widthMm: number, heightMm: number): Item[] {
 }
 
 /** A black band under the header that says that the setup may not be used, and why. */
-function stopBand(widthMm: number, heightMm: number, reason: string, fonts: SheetFonts): Item[] {
-  const [left, right] = [PRINTER_EDGE_MM, widthMm - PRINTER_EDGE_MM];
-  const top = heightMm - PRINTER_EDGE_MM - 11.4;
+function stopBand(widthMm: number, heightMm: number, edgeMm: number, reason: string, fonts: SheetFonts): Item[] {
+  const [left, right] = [edgeMm, widthMm - edgeMm];
+  const top = heightMm - edgeMm - 11.4;
   const bottom = top - STOP_BAND_MM + 2;
   const words = "DO NOT USE";
   const width = fonts.bold.widthOf(words, 6);

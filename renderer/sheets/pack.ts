@@ -5,7 +5,7 @@ import type { FieldInk } from "./field-drawing";
 import type { SheetFonts } from "./font-metrics";
 import { furniture } from "./furniture";
 import type { Item, Pack, Page, Point } from "./page";
-import { PAPERS, type PaperName } from "./paper";
+import { EDGE_RANGE_MM, PAPERS, type PaperName, PRINTER_EDGE_MM } from "./paper";
 import { SHEETS, type Sheet, type SheetInput, type SheetName } from "./sheets";
 
 /** What a pack is made of and for which printer. */
@@ -25,6 +25,10 @@ export interface PackOptions {
   readonly fieldInk?: FieldInk;
   /** The field key at full size on as many tiles as it needs; absent: fitted to one page. */
   readonly fieldFullSize?: boolean;
+  /** What the printer leaves blank at every edge, mm, 4 to 20; absent: 7. */
+  readonly edgeMm?: number;
+  /** Thickness of the tray's wall, mm: draws the outside of the base too; absent: the inside alone. */
+  readonly wallMm?: number;
 }
 
 /** A sheet's page before it gets header, footer and number. */
@@ -78,13 +82,16 @@ function contentsOf(bare: readonly { sheet: SheetName }[], pagesBefore: number):
 }
 
 /**
- * Composes the printed pack. Pure: the same input gives the same pages. Throws a RangeError for a printer scale that is not believed.
+ * Composes the printed pack. Pure: the same input gives the same pages. Throws a RangeError for a printer scale that is not believed, and for an edge out of range.
  */
 export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options: PackOptions): Pack {
   const fault = scaleFault(options.printerScale);
   if (fault !== null) throw new RangeError(fault);
   const reason = doNotUse(plan);
-  const input = { setup, plan, fonts, stopped: reason !== null, options, contents: [] };
+  const edgeMm = options.edgeMm ?? PRINTER_EDGE_MM;
+  const [leastMm, mostMm] = EDGE_RANGE_MM;
+  if (!(edgeMm >= leastMm && edgeMm <= mostMm)) throw new RangeError(`the blank edge is ${edgeMm} mm, allowed: ${leastMm} to ${mostMm} mm`);
+  const input = { setup, plan, fonts, frame: { stopped: reason !== null, edgeMm }, options, contents: [] };
   const others = options.sheets.filter((name) => name !== "cover").flatMap((name) => pagesOf(name, input));
   const withContents = (pagesBefore: number) => pagesOf("cover", { ...input, contents: contentsOf(others, pagesBefore) });
   // The cover's own length does not depend on the page numbers that it lists.
@@ -100,6 +107,7 @@ export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options
       number: index + 1,
       count: bare.length,
       correction: uncorrected ? null : options.printerScale,
+      edgeMm,
       doNotUse: reason,
     };
     const { head, foot } = furniture(widthMm, heightMm, facts, fonts);

@@ -11,7 +11,7 @@ export const PAPERS = {
 
 export type PaperName = keyof typeof PAPERS;
 
-/** What printers leave blank at every edge, mm (they differ: 4 to 6.7 mm); nothing is printed nearer. */
+/** What printers leave blank at every edge, mm (they differ: 4 to 6.7 mm); nothing is printed nearer unless a pack is ordered so. */
 export const PRINTER_EDGE_MM = 7;
 /** Room round a page's content: check bar and figures at the left, header above, check bar, figures and notes below. */
 const LEFT_MM = 13;
@@ -20,17 +20,25 @@ const BELOW_MM = 25;
 /** Height of the band that stands under the header while the setup may not be used. */
 export const STOP_BAND_MM = 11;
 
+/** The edges, mm, that a pack may be ordered with. */
+export const EDGE_RANGE_MM = [4, 20] as const;
+
+/** What all pages of a pack keep free. */
+export interface Frame {
+  /** Whether the band stands on them that forbids the use. */
+  readonly stopped: boolean;
+  /** What stays blank at every edge, mm. */
+  readonly edgeMm: number;
+}
+
 /** A page's size and what its furniture leaves. */
-export interface Sheet {
+export interface Sheet extends Frame {
   readonly widthMm: number;
   readonly heightMm: number;
-  /** Whether the band stands on it that forbids the use. */
-  readonly stopped: boolean;
 }
 
 /** The part of a page that its content has, [left, bottom, right, top] in mm. */
-export function contentOf({ widthMm, heightMm, stopped }: Sheet): readonly [number, number, number, number] {
-  const edge = PRINTER_EDGE_MM;
+export function contentOf({ widthMm, heightMm, stopped, edgeMm: edge }: Sheet): readonly [number, number, number, number] {
   return [edge + LEFT_MM, edge + BELOW_MM, widthMm - edge, heightMm - edge - ABOVE_MM - (stopped ? STOP_BAND_MM : 0)];
 }
 
@@ -51,11 +59,11 @@ const tilesAlong = (sizeMm: number, windowMm: number): number =>
  * Lays out tiles for a drawing of a size: the orientation with the fewest tiles, upright where both need as many.
  * @param paper its size upright, mm, as the printer sees true lengths.
  */
-export function tilingFor(drawing: Point, paper: Point, stopped: boolean): Tiling {
+export function tilingFor(drawing: Point, paper: Point, frame: Frame): Tiling {
   const options = [paper, [paper[1], paper[0]] as const].map(([widthMm, heightMm]): Tiling => {
-    const [left, bottom, right, top] = contentOf({ widthMm, heightMm, stopped });
+    const [left, bottom, right, top] = contentOf({ widthMm, heightMm, ...frame });
     const window: Point = [right - left, top - bottom];
-    return { widthMm, heightMm, stopped, columns: tilesAlong(drawing[0], window[0]), rows: tilesAlong(drawing[1], window[1]), window };
+    return { widthMm, heightMm, ...frame, columns: tilesAlong(drawing[0], window[0]), rows: tilesAlong(drawing[1], window[1]), window };
   });
   const [upright, across] = options;
   return across.columns * across.rows < upright.columns * upright.rows ? across : upright;

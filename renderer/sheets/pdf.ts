@@ -135,6 +135,18 @@ function fileIdOf({ setupId, date, title }: Pack): string {
  * @returns the pack as PDF: true to scale, fonts embedded, asking viewers not to scale it.
  */
 export function packPdf(pack: Pack, fonts: FontFiles, createdOn: string): Uint8Array<ArrayBuffer> {
+  const steps = packPdfSteps(pack, fonts, createdOn);
+  for (;;) {
+    const step = steps.next();
+    if (step.done === true) return step.value;
+  }
+}
+
+/**
+ * The same, page by page, for whoever shows progress, lets the window breathe between pages, or gives up half way.
+ * @returns yields the number of pages done, then returns the bytes.
+ */
+export function* packPdfSteps(pack: Pack, fonts: FontFiles, createdOn: string): Generator<number, Uint8Array<ArrayBuffer>> {
   const [first] = pack.pages;
   if (first === undefined) throw new RangeError("a pack without pages cannot be printed; choose at least one sheet");
   const sizeOf = ({ widthMm, heightMm, printerScale: [x, y] }: Page): [number, number] => [widthMm / x, heightMm / y];
@@ -159,10 +171,11 @@ export function packPdf(pack: Pack, fonts: FontFiles, createdOn: string): Uint8A
   });
   document.setLanguage("en-GB");
   document.viewerPreferences({ PrintScaling: "None", DisplayDocTitle: true });
-  pack.pages.forEach((page, index) => {
+  for (const [index, page] of pack.pages.entries()) {
     if (index > 0) document.addPage(sizeOf(page), orientation(sizeOf(page)));
     const pen = new PagePen(document, page.heightMm, ...page.printerScale);
     for (const item of page.items) pen.draw(item);
-  });
+    yield index + 1;
+  }
   return new Uint8Array(document.output("arraybuffer"));
 }

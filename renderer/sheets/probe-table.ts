@@ -36,7 +36,8 @@ export function probeTable(setup: Setup, plan: Plan, forClass: boolean, page: Sh
           plain(point.xMm, 1),
           plain(point.yMm, 1),
           plain(point.volts, decimals),
-          plain(point.bandV, decimals),
+          // Rounded up: the printed band is never narrower than the computed one.
+          plain(Math.ceil(point.bandV / digitVolts - 1e-6) * digitVolts, decimals),
           plain(1000 * point.voltsPerMm, 0),
         ],
   });

@@ -10,7 +10,7 @@ import { type Block, flowPages } from "./flow";
 import type { SheetFonts } from "./font-metrics";
 import type { BarePage, PackOptions } from "./pack";
 import type { Point } from "./page";
-import { type Sheet as PaperSheet, tilingFor } from "./paper";
+import { type Frame, type Sheet as PaperSheet, tilingFor } from "./paper";
 import { probeTable } from "./probe-table";
 import { recordPage } from "./record-page";
 import type { TablePage } from "./table";
@@ -24,8 +24,7 @@ export interface SheetInput {
   readonly fonts: SheetFonts;
   /** The paper upright, mm. */
   readonly paper: Point;
-  /** Whether the pages carry the band that forbids the use. */
-  readonly stopped: boolean;
+  readonly frame: Frame;
   readonly options: PackOptions;
   /** What the pack holds, for the cover; empty while the other sheets are made. */
   readonly contents: readonly ContentsEntry[];
@@ -38,7 +37,7 @@ export interface Sheet {
   readonly uncorrected?: boolean;
 }
 
-const upright = ({ paper: [widthMm, heightMm], stopped }: SheetInput): PaperSheet => ({ widthMm, heightMm, stopped });
+const upright = ({ paper: [widthMm, heightMm], frame }: SheetInput): PaperSheet => ({ widthMm, heightMm, ...frame });
 
 const tabled = (title: string, { paper: [widthMm, heightMm] }: SheetInput, pages: readonly TablePage[]): BarePage[] =>
   pages.map(({ items }, index) => ({
@@ -52,16 +51,17 @@ const flowed = (title: string, input: SheetInput, blocks: readonly Block[]): Bar
   tabled(title, input, flowPages(blocks, upright(input), input.fonts));
 
 /** A 1:1 sheet of the tray, on as many tiles as it needs. */
-const tiled = (title: string, { setup, plan, fonts, paper, stopped, options }: SheetInput, answers: boolean): BarePage[] => {
+const tiled = (title: string, { setup, plan, fonts, paper, frame, options }: SheetInput, answers: boolean): BarePage[] => {
   const mirrored = answers && options.mirrored;
-  const bounds = drawingBounds(setup);
-  const tiling = tilingFor([bounds[2] - bounds[0], bounds[3] - bounds[1]], paper, stopped);
-  const choice = { points: answers && options.points, grid: options.grid, saveInk: options.saveInk, mirrored };
+  const wallMm = options.wallMm ?? 0;
+  const bounds = drawingBounds(setup, wallMm);
+  const tiling = tilingFor([bounds[2] - bounds[0], bounds[3] - bounds[1]], paper, frame);
+  const choice = { points: answers && options.points, grid: options.grid, saveInk: options.saveInk, mirrored, wallMm };
   const drawing = trayDrawing(setup, plan, fonts, choice, columnsOf(bounds, tiling), rowsOf(bounds, tiling));
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
   const reader = mirrored ? "mirrored: lay it face down, ▼ this side towards the reader" : "▼ this side towards the reader";
   const missing = drawing.leftOut === 0 ? "" : ` · ${drawing.leftOut} numbers or names found no room: see the probe table`;
-  const note = `${reader} · thick outline: inside of the wall, its lower left corner is 0, 0${missing}`;
+  const note = `${reader} · thick outline: inside of the wall (lower left corner 0, 0)${wallMm > 0 ? "; thin: its outside" : ""}${missing}`;
   const tiles = tilesOf(drawing, tiling, { lengthMm, widthMm, mirrored, note }, fonts);
   return tiles.map(({ label, widthMm, heightMm, items }) => ({
     title: `${title} 1:1${mirrored ? ", mirrored" : ""}${tiles.length > 1 ? `, tile ${label}` : ""}`,

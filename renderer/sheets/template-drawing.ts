@@ -1,6 +1,6 @@
 import type { Plan, ProbePoint } from "../../shared-types/plan";
-import type { PlacedShape, Setup } from "../../shared-types/setup";
-import { chainOf, outlineOf, pointAlong } from "../engine/geometry/outline";
+import type { PlacedShape, Setup, Tray } from "../../shared-types/setup";
+import { chainOf, type Loop, outlineOf, pointAlong } from "../engine/geometry/outline";
 import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
 import type { SheetFonts } from "./font-metrics";
 import { type Box, besidePoint, type Interval, type LabelPlaces, labelPlaces } from "./label-places";
@@ -15,6 +15,8 @@ export interface DrawingChoice {
   readonly saveInk: boolean;
   /** To be read from below: x runs to the left. */
   readonly mirrored: boolean;
+  /** Thickness of the tray's wall, mm; 0 draws its inside alone. */
+  readonly wallMm: number;
 }
 
 export interface Drawing {
@@ -36,9 +38,20 @@ const PLATE_HEIGHT = 0.86;
 const WORDS_HEIGHT = 1.14;
 
 /** @returns [left, bottom, right, top] of a tray's drawing, mm; the same mirrored. */
-export function drawingBounds(setup: Setup): Box {
+export function drawingBounds(setup: Setup, wallMm = 0): Box {
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  return [-MARGIN_MM, -MARGIN_MM, lengthMm + MARGIN_MM, widthMm + MARGIN_MM];
+  const out = MARGIN_MM + wallMm;
+  return [-out, -out, lengthMm + out, widthMm + out];
+}
+
+/** The outside of the wall: the inside, larger all round by its thickness. */
+function outsideOf(tray: Tray, wallMm: number): Loop {
+  if (tray.shape === "circle")
+    return trayOutline(tray).map((piece) => (piece.kind === "bow" ? { ...piece, radius: piece.radius + wallMm } : piece));
+  const shift = (at: number): number => (at === 0 ? -wallMm : at + wallMm);
+  return trayOutline(tray).map((piece) =>
+    piece.kind === "edge" ? { ...piece, x0: shift(piece.x0), y0: shift(piece.y0), x1: shift(piece.x1), y1: shift(piece.y1) } : piece,
+  );
 }
 
 /** Lines of the grid by weight: every 10 mm, every 5 mm, every millimetre. */
@@ -172,7 +185,7 @@ export function trayDrawing(
   rows: readonly Interval[],
 ): Drawing {
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  const bounds = drawingBounds(setup);
+  const bounds = drawingBounds(setup, choice.wallMm);
   // Everything is composed as seen from above and turned over at the end, so the tiles are turned over first.
   const seenColumns = choice.mirrored ? columns.map(([from, to]): Interval => [lengthMm - to, lengthMm - from]) : columns;
   const places = labelPlaces([0.6, 0.6, lengthMm - 0.6, widthMm - 0.6], seenColumns, rows);
@@ -195,6 +208,7 @@ export function trayDrawing(
   const items: (PathItem | TextItem)[] = [
     ...gridItems(lengthMm, widthMm, choice),
     outline([wall], 0.45),
+    ...(choice.wallMm > 0 ? [outline([chainOf(outsideOf(setup.tray, choice.wallMm), CHORD_MM)], 0.2)] : []),
     ...slabs.map((chains) => ({ ...outline(chains, 0.25, 0.15), dashMm: [3, 1.5] as const })),
     ...setup.parts.flatMap((part) => partMarks(part, choice.saveInk)),
     ...tags.items,

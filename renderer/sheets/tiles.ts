@@ -2,7 +2,7 @@ import type { SheetFonts } from "./font-metrics";
 import { alignmentCross } from "./furniture";
 import type { Box, Interval } from "./label-places";
 import { box, type ClippedItem, type Item, line, type PathItem, type Point, plateOf, type TextItem, text } from "./page";
-import { contentOf, OVERLAP_MM, PRINTER_EDGE_MM, type Tiling, tileIntervals, tileLabel } from "./paper";
+import { contentOf, OVERLAP_MM, type Tiling, tileIntervals, tileLabel } from "./paper";
 import type { Drawing } from "./template-drawing";
 
 /** A drawing spread over pages: what each page shows, without header and footer. */
@@ -110,7 +110,7 @@ function assemblyMap(right: number, bottom: number, { columns, rows }: Tiling, c
 /** Cuts a drawing into tiles of true size, in the order in which they are read: from the far side, left to right. */
 export function tilesOf(drawing: Drawing, tiling: Tiling, axis: AxisWords, fonts: SheetFonts): TilePage[] {
   const { bounds } = drawing;
-  const { widthMm, heightMm, columns, rows, window } = tiling;
+  const { widthMm, heightMm, columns, rows, window, edgeMm } = tiling;
   const content = contentOf(tiling);
   const [across, along] = [columnsOf(bounds, tiling), rowsOf(bounds, tiling)];
   const single = columns * rows === 1;
@@ -131,7 +131,7 @@ export function tilesOf(drawing: Drawing, tiling: Tiling, axis: AxisWords, fonts
       const seen: Box = [shown[0] + offset[0], shown[1] + offset[1], shown[2] + offset[0], shown[3] + offset[1]];
       const clipped: ClippedItem = { kind: "clipped", window: seen, offset, items: shownIn(shown, items) };
       const label = tileLabel(column, row);
-      const right = widthMm - PRINTER_EDGE_MM;
+      const right = widthMm - edgeMm;
       const guide = `Tile ${label} of ${columns * rows}: lay cross on cross, trim one sheet along the dashes.`;
       const noteWidth = fonts.regular.widthOf(axis.note, 2.4);
       const noteX = Math.max(content[0] + noteWidth / 2, Math.min(content[2] - noteWidth / 2, (seen[0] + seen[2]) / 2));
@@ -140,10 +140,7 @@ export function tilesOf(drawing: Drawing, tiling: Tiling, axis: AxisWords, fonts
         ...(row === 0 ? [text(noteX, seen[1] - 6.3, axis.note, 2.4, { anchor: "middle", ink: 0.1 })] : []),
         ...(single
           ? []
-          : [
-              text(right, PRINTER_EDGE_MM + 14.2, guide, 2.5, { anchor: "end" }),
-              ...assemblyMap(right, PRINTER_EDGE_MM + 1, tiling, column, row),
-            ]),
+          : [text(right, edgeMm + 14.2, guide, 2.5, { anchor: "end" }), ...assemblyMap(right, edgeMm + 1, tiling, column, row)]),
       ];
       pages.push({ label, widthMm, heightMm, items: [clipped, ...furniture] });
     }

@@ -89,7 +89,7 @@ describe("the template as SVG", () => {
   it("is as large as the tray in millimetres and names its setup", async () => {
     const { setup } = EXAMPLES[0];
     const plan = await planned(setup);
-    const svg = templateSvg(setup, plan, FONTS, { points: true, grid: "coarse", saveInk: true, mirrored: false });
+    const svg = templateSvg(setup, plan, FONTS, { points: true, grid: "coarse", saveInk: true, mirrored: false, wallMm: 0 });
     const [, width, height] = /width="([\d.]+)mm" height="([\d.]+)mm" viewBox="0 0 \1 \2"/.exec(svg) ?? [];
     expect(Number(width)).toBeCloseTo(300 + 2 * 0.8 + 4, 3);
     expect(Number(height)).toBeCloseTo(200 + 2 * 0.8 + 4, 3);

@@ -101,15 +101,15 @@ describe("the pack of an example, all sheets", () => {
 
 describe("tiles", () => {
   it("lie so that the fewest are needed, and together cover the drawing", () => {
-    const tiling = tilingFor([302, 202], [210, 297], false);
+    const tiling = tilingFor([302, 202], [210, 297], { stopped: false, edgeMm: PRINTER_EDGE_MM });
     expect(tiling.columns * tiling.rows).toBe(2);
-    expect(tilingFor([302, 202], [297, 420], false)).toMatchObject({ columns: 1, rows: 1 });
+    expect(tilingFor([302, 202], [297, 420], { stopped: false, edgeMm: PRINTER_EDGE_MM })).toMatchObject({ columns: 1, rows: 1 });
     for (const size of [
       [600, 400],
       [1000, 30],
       [2000, 2000],
     ] as const) {
-      const { columns, rows, window } = tilingFor(size, [210, 297], false);
+      const { columns, rows, window } = tilingFor(size, [210, 297], { stopped: false, edgeMm: PRINTER_EDGE_MM });
       expect(columns * (window[0] - OVERLAP_MM) + OVERLAP_MM).toBeGreaterThanOrEqual(size[0] - 1e-9);
       expect(rows * (window[1] - OVERLAP_MM) + OVERLAP_MM).toBeGreaterThanOrEqual(size[1] - 1e-9);
     }

@@ -58,6 +58,12 @@ export const printed = (pdf: Uint8Array): Print[] =>
       .map((name) => readGreyMap(readFileSync(join(folder, name))));
   });
 
+/** @returns the paper of a printer that makes 100 mm too long or too short by these scales along its short and its long side. */
+export function onFaultyPrinter(print: Print, [short, long]: readonly [number, number]): Print {
+  const [x, y] = print.widthMm > print.heightMm ? [long, short] : [short, long];
+  return { widthMm: print.widthMm * x, heightMm: print.heightMm * y, darkness: (atX, atY) => print.darkness(atX / x, atY / y) };
+}
+
 /** @returns what one of Poppler's readers (pdftotext, pdffonts) says of a PDF. */
 export const readPdf = (reader: "pdftotext" | "pdffonts", pdf: Uint8Array, options: readonly string[] = []): string =>
   withPdf(pdf, (file) => execFileSync(reader, [...options, file, ...(reader === "pdftotext" ? ["-"] : [])], { encoding: "utf8" }));

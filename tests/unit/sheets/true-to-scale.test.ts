@@ -2,13 +2,14 @@ import { describe, expect, it } from "vitest";
 import { outlineOf, pointAlong } from "../../../renderer/engine/geometry/outline";
 import { traySizeMm } from "../../../renderer/engine/geometry/tray-outline";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
+import type { PackOptions } from "../../../renderer/sheets/pack";
 import type { PaperName } from "../../../renderer/sheets/paper";
 import { pointsOf } from "../../../renderer/sheets/template-drawing";
 import type { Plan } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import { randomSetup } from "../../reference/random-setups";
 import { packOf, pdfOf, planned } from "./packs";
-import { dotNear, lineAcross, type Print, printed } from "./printed";
+import { dotNear, lineAcross, onFaultyPrinter, type Print, printed } from "./printed";
 
 /**
  * The main promise of the paper, checked on the paper: the PDF is rendered at 300 dots an inch, its tiles are joined by their
@@ -38,9 +39,9 @@ interface PlacedTile {
  * Prints a template and joins its tiles: the first one by the tray's own corner or by what its page says, every other one by
  * laying its crosses on those of a neighbour.
  */
-function joined(setup: Setup, plan: Plan, paper: PaperName, mirrored = false): PlacedTile[] {
-  const pack = packOf(setup, plan, { paper, mirrored });
-  const prints = printed(pdfOf(pack));
+function joined(setup: Setup, plan: Plan, order: Partial<PackOptions>): PlacedTile[] {
+  const pack = packOf(setup, plan, order);
+  const prints = printed(pdfOf(pack)).map((print) => onFaultyPrinter(print, order.printerScale ?? [1, 1]));
   const tiles = pack.pages.map(({ items }, index) => {
     const clipped = items.find((item) => item.kind === "clipped");
     if (clipped?.kind !== "clipped") throw new Error("a tile shows no drawing");
@@ -83,14 +84,9 @@ function joined(setup: Setup, plan: Plan, paper: PaperName, mirrored = false): P
 }
 
 /** @param drawn what is printed, `setup` what is expected. @returns places of outlines and points that were looked for, and how far (mm) each was off; Infinity where nothing was found. */
-function misplacements(
-  setup: Setup,
-  plan: Plan,
-  paper: PaperName,
-  mirrored = false,
-  drawn: Setup = setup,
-): { what: string; offMm: number }[] {
-  const tiles = joined(drawn, plan, paper, mirrored);
+function misplacements(setup: Setup, plan: Plan, order: Partial<PackOptions>, drawn: Setup = setup): { what: string; offMm: number }[] {
+  const tiles = joined(drawn, plan, order);
+  const mirrored = order.mirrored ?? false;
   const [lengthMm] = traySizeMm(setup.tray);
   const seen = ([x, y]: Place): Place => (mirrored ? [lengthMm - x, y] : [x, y]);
   const onPaper = ([x, y]: Place, edgeMm: number): { tile: PlacedTile; at: Place }[] =>
@@ -137,24 +133,84 @@ const PAPERS: readonly PaperName[] = ["a4", "a3", "a2", "letter", "tabloid"];
 describe("a printed template", () => {
   for (const [index, example] of EXAMPLES.entries()) {
     const paper = PAPERS[index % PAPERS.length];
-    it(`of ‘${example.title}’ on ${paper} has parts and points where the setup has them, and both check bars 100 mm long`, async () => {
+    it(`of ‘${example.title}’ on ${paper} has parts and points where the setup has them`, async () => {
       const plan = await planned(example.setup);
-      const found = misplacements(example.setup, plan, paper);
+      const found = misplacements(example.setup, plan, { paper });
       expect(found.length).toBeGreaterThan(30);
       expect(offenders(found)).toEqual([]);
     });
   }
 
-  for (const seed of [3, 4, 5, 6, 7, 8]) {
-    it(`on A4 joins by its crosses, random tray ${seed}`, async () => {
+  for (let seed = 1; seed <= 30; seed++) {
+    const paper = PAPERS[seed % PAPERS.length];
+    it(`of random tray ${seed} on ${paper} joins by its crosses and is true`, async () => {
       const setup = randomSetup(seed, { insulators: true, slabs: true, tilt: true });
-      expect(offenders(misplacements(setup, await planned(setup), "a4"))).toEqual([]);
+      expect(offenders(misplacements(setup, await planned(setup), { paper }))).toEqual([]);
     });
   }
 
+  it("comes out true from a printer that makes 100 mm 97 mm across and 102 mm along, upright and across alike", async () => {
+    const printerScale = [0.97, 1.02] as const;
+    for (const [number, paper] of [
+      [1, "a4"],
+      [1, "a3"],
+      [3, "letter"],
+    ] as const) {
+      const { setup } = EXAMPLES[number];
+      expect(offenders(misplacements(setup, await planned(setup), { paper, printerScale })), paper).toEqual([]);
+    }
+  });
+
+  it("keeps the paper's own size, whatever the correction", async () => {
+    const { setup } = EXAMPLES[1];
+    const plan = await planned(setup);
+    const pack = packOf(setup, plan, {
+      paper: "a3",
+      sheets: ["template", "probe-table", "field-key", "calibration"],
+      printerScale: [0.97, 1.02],
+    });
+    const sizes = printed(pdfOf(pack)).map(({ widthMm, heightMm }) => [widthMm, heightMm].map(Math.round).sort((a, b) => a - b));
+    expect(pack.pages.some(({ widthMm, heightMm }) => widthMm > heightMm)).toBe(true);
+    for (const size of sizes) expect(size).toEqual([297, 420]);
+  });
+
+  it("can show the outside of the wall, and keep a wider edge", async () => {
+    const { setup } = EXAMPLES[1];
+    const plan = await planned(setup);
+    const order = { paper: "a3", wallMm: 4, edgeMm: 12 } as const;
+    expect(offenders(misplacements(setup, plan, order))).toEqual([]);
+    const [tile] = joined(setup, plan, order);
+    const [x, y] = tile.origin;
+    for (const [place, across] of [
+      [
+        [x - 4, y + 90],
+        [1, 0],
+      ],
+      [
+        [x + 304, y + 90],
+        [1, 0],
+      ],
+      [
+        [x + 80, y - 4],
+        [0, 1],
+      ],
+      [
+        [x + 80, y + 204],
+        [0, 1],
+      ],
+    ] as const)
+      expect(Math.abs(lineAcross(tile.print, place, across, 1) ?? Number.NaN)).toBeLessThan(WITHIN_MM);
+    const { widthMm, heightMm, darkness } = tile.print;
+    for (let share = 0; share <= 1; share += 0.002)
+      for (const depth of [1, 6, 11]) {
+        expect(darkness(share * widthMm, depth) + darkness(share * widthMm, heightMm - depth)).toBe(0);
+        expect(darkness(depth, share * heightMm) + darkness(widthMm - depth, share * heightMm)).toBe(0);
+      }
+  });
+
   it("mirrored is the same seen from below", async () => {
     const { setup } = EXAMPLES[1];
-    expect(offenders(misplacements(setup, await planned(setup), "a4", true))).toEqual([]);
+    expect(offenders(misplacements(setup, await planned(setup), { mirrored: true }))).toEqual([]);
   });
 
   it("has check bars of 100 mm on every page", async () => {
@@ -187,7 +243,7 @@ describe("a printed template", () => {
     const { setup } = EXAMPLES[0];
     const [first, ...others] = setup.parts;
     const shifted: Setup = { ...setup, parts: [{ ...first, xMm: first.xMm + 0.25 }, ...others] };
-    const found = misplacements(setup, await planned(setup), "a3", false, shifted);
+    const found = misplacements(setup, await planned(setup), { paper: "a3" }, shifted);
     expect(offenders(found).some((words) => words.startsWith(first.id))).toBe(true);
   });
 });
