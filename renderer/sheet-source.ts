@@ -3,7 +3,7 @@ import boldUrl from "../node_modules/dejavu-fonts-ttf/ttf/DejaVuSansCondensed-Bo
 import { version } from "../package.json";
 import type { Plan } from "../shared-types/plan";
 import type { Setup } from "../shared-types/setup";
-import type { SheetChoice, SheetSource } from "./panels/sheets-desk";
+import type { SheetChoice, SheetSource } from "./panels/sheet-choice";
 import { readFontMetrics } from "./sheets/font-metrics";
 import { composePack, scaleFault } from "./sheets/pack";
 import { packPdf } from "./sheets/pdf";
@@ -38,6 +38,7 @@ export async function createSheetSource(): Promise<SheetSource> {
       grid: "fine",
       saveInk: choice.saveInk,
       mirrored: choice.mirrored,
+      fieldFullSize: choice.fieldFullSize,
     });
   return {
     pageNames: SHEET_NAMES.map((name) => [name, SHEETS[name].title]),

@@ -58,17 +58,21 @@ export function commandsOf({ document, window, files, trayView, save, print }: C
   return (command) => acts[command]?.();
 }
 
+/** A field in which nothing is half typed keeps no undo of its own. */
+const isCleanField = (target: EventTarget | null): boolean => target instanceof HTMLElement && target.dataset.clean === "true";
 const isTextField = (target: EventTarget | null): boolean =>
   target instanceof HTMLElement && (target.matches("input:not([type=checkbox]), textarea, select") || target.isContentEditable);
 
-/** Keys that the window itself hears: those that mean something else in a text field. Text fields keep them. */
+/** Keys that the window itself hears: those that mean something else in a text field. Text fields keep them while something is typed. */
 export function actOnKey(event: KeyboardEvent, act: Act): void {
-  if (event.defaultPrevented || isTextField(event.target)) return;
+  if (event.defaultPrevented) return;
   const mod = event.ctrlKey || event.metaKey;
   const pressed = `${mod ? "Mod+" : ""}${event.shiftKey ? "Shift+" : ""}${event.key.length === 1 ? event.key.toUpperCase() : event.key}`;
   const meant = pressed === "Mod+Y" ? "Mod+Shift+Z" : pressed;
   const entry = commandEntries().find(({ keys, heardBy }) => heardBy === "window" && keys === meant);
   if (entry === undefined) return;
+  const travels = entry.command === "undo" || entry.command === "redo";
+  if (isTextField(event.target) && !(travels && isCleanField(event.target))) return;
   event.preventDefault();
   act(entry.command);
 }

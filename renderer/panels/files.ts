@@ -2,7 +2,10 @@ import type { FileHandle, Host, KeptDraft, OpenOutcome } from "../../shared-type
 import { parseSetup, parseSetupText, setupText } from "../../shared-types/parse-setup";
 import type { Setup } from "../../shared-types/setup";
 import type { Document } from "../document/document";
+import { texts } from "../texts/texts";
 import type { Message, WindowStore } from "./window-state";
+
+const words = texts.files;
 
 /** Opening and saving: what host, document and window do together. */
 export interface Files {
@@ -22,7 +25,7 @@ export interface Files {
 const EMPTY_TRAY: unknown = {
   format: "fieldtray.setup",
   version: 1,
-  title: "New tray",
+  title: words.newTitle,
   tray: { shape: "rectangle", lengthMm: 300, widthMm: 200 },
   water: { depthMm: 12, conductivityUsPerCm: 500 },
   supply: { waveform: "ac", frequencyHz: 50, volts: 6 },
@@ -41,7 +44,7 @@ const nameFor = (setup: Setup): string => {
     .toLowerCase()
     .replace(/[^\p{L}\p{N}]+/gu, "-")
     .replace(/^-+|-+$/g, "");
-  return `${plain === "" ? "tray" : plain}.fieldtray.json`;
+  return `${plain === "" ? words.fileName : plain}.fieldtray.json`;
 };
 
 export function filesOf(host: Host, document: Document, window: WindowStore): Files {
@@ -52,7 +55,7 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
       lines,
       choices: [
         {
-          label: "Copy details",
+          label: words.copyDetails,
           choose: () => void host.details().then((details) => host.copyText(`${title}\n${lines.join("\n")}\n${details}`)),
         },
       ],
@@ -67,17 +70,17 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
 
   function take(file: FileHandle, text: string): void {
     const parsed = parseSetupText(text);
-    if (parsed.ok) replaceBy(parsed.value, `open ${file.name}`, file);
+    if (parsed.ok) replaceBy(parsed.value, words.steps.open(file.name), file);
     else
       fail(
-        `${file.name} was not opened. Your tray is unchanged.`,
+        words.notOpened(file.name),
         parsed.problems.slice(0, 6).map(({ message }) => message),
       );
   }
 
   function takeOutcome(outcome: OpenOutcome): void {
     if (outcome.kind === "opened") take(outcome.file, outcome.text);
-    else if (outcome.kind === "failed") fail("The file was not opened.", [outcome.message]);
+    else if (outcome.kind === "failed") fail(words.noFileOpened, [outcome.message]);
   }
 
   async function save(as = false, overwrite = false): Promise<boolean> {
@@ -91,18 +94,16 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
       case "cancelled":
         return false;
       case "failed":
-        fail("The setup was not saved.", [outcome.message]);
+        fail(words.notSaved, [outcome.message]);
         return false;
       case "changed": {
         const taken = window.tell({
           tone: "question",
-          title: outcome.gone
-            ? `${outcome.file.name} is no longer there.`
-            : `Another program changed ${outcome.file.name} since it was read.`,
-          lines: ["Nothing has been written yet."],
+          title: outcome.gone ? words.gone(outcome.file.name) : words.changed(outcome.file.name),
+          lines: [words.nothingWritten],
           choices: [
-            { label: "Write mine over it", choose: () => void save(false, true).then(() => taken()) },
-            { label: "Save under another name", choose: () => void save(true).then(() => taken()) },
+            { label: words.writeOver, choose: () => void save(false, true).then(() => taken()) },
+            { label: words.otherName, choose: () => void save(true).then(() => taken()) },
           ],
         });
         return false;
@@ -113,38 +114,35 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
   function bringBack(draft: KeptDraft): void {
     const parsed = parseSetupText(draft.text);
     if (parsed.ok) {
-      replaceBy(parsed.value, `bring back ${draft.title}`, draft.file, true);
+      replaceBy(parsed.value, words.steps.bringBack(draft.title), draft.file, true);
       void host.discardDraft(draft.id);
     } else
       fail(
-        "The kept work cannot be read.",
+        words.keptUnreadable,
         parsed.problems.slice(0, 3).map(({ message }) => message),
       );
   }
 
   function offerKept(draft: KeptDraft, count: number): Omit<Message, "id"> {
-    const name = draft.title === "" ? "An untitled tray" : draft.title;
     const at = new Date(draft.keptAtMs).toLocaleString(undefined, { dateStyle: "medium", timeStyle: "short" });
     return {
       tone: "question",
-      title: `${name} was left behind unsaved`,
-      lines: [
-        `Kept ${at}${draft.file === null ? ", never saved" : `, from ${draft.file.name}`}.${count > 1 ? ` ${count - 1} more on the start page.` : ""}`,
-      ],
+      title: words.offer.title(draft.title === "" ? words.offer.untitled : draft.title),
+      lines: [words.offer.line(at, draft.file?.name ?? null, count - 1)],
       choices: [
-        { label: "Bring it back", choose: () => bringBack(draft) },
-        { label: "Not wanted", choose: () => void host.discardDraft(draft.id) },
+        { label: words.offer.bringBack, choose: () => bringBack(draft) },
+        { label: words.start.notWanted, choose: () => void host.discardDraft(draft.id) },
       ],
     };
   }
 
   return {
-    newSetup: () => replaceBy(emptyTray(), "new tray", null),
+    newSetup: () => replaceBy(emptyTray(), words.steps.fresh, null),
     open: async () => takeOutcome(await host.openFile()),
     openRecent: async (handle) => takeOutcome(await host.readFile(handle)),
     save,
     take,
-    showExample: (title, setup) => replaceBy(setup, `open example ${title}`, null),
+    showExample: (title, setup) => replaceBy(setup, words.steps.example(title), null),
     bringBack,
     offerKept,
   };

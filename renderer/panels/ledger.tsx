@@ -1,89 +1,114 @@
+import { memo } from "react";
 import { useStore } from "zustand";
-import type { Bounded, Finding, Severity } from "../../shared-types/plan";
+import type { Finding, Plan } from "../../shared-types/plan";
 import { applyRemedy } from "../document/commands/bench";
 import type { Document } from "../document/document";
 import { fixed, trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
+import { texts } from "../texts/texts";
 import { FindingsList, SeveritySign } from "./bench/findings-list";
 import { showFinding } from "./bench/show-finding";
+import { boundedText, percentText } from "./bounded-text";
+import { IconButton } from "./icon-button";
 import type { WindowStore } from "./window-state";
 
-/** As many digits as the bound supports, at least three and at most six figures. */
-function bounded({ value, error }: Bounded, unit: string): string {
-  const figures = Math.min(6, Math.max(3, Math.floor(Math.log10(Math.abs(value) / Math.max(error, 1e-12 * Math.abs(value))))));
-  const decimals = Math.max(0, figures - 1 - Math.floor(Math.log10(Math.abs(value))));
-  return `${fixed(value, Math.min(6, decimals))} ${unit}`;
-}
+const words = texts.window.ledger;
+const NO_FINDINGS: readonly Finding[] = [];
+/** Power follows from volts, exactly given, and the current. */
+const powerOf = ({ powerW, currentA }: Plan) => ({
+  value: powerW,
+  error: (powerW * currentA.error) / Math.max(Math.abs(currentA.value), 1e-30),
+});
 
-function inUnits(bound: Bounded, unit: string): string {
-  const size = Math.abs(bound.value);
-  if (size === 0 || !Number.isFinite(size)) return Number.isFinite(size) ? `0 ${unit}` : "none flows";
-  const [factor, prefix] =
-    size >= 1e6 ? [1e-6, "M"] : size >= 1e4 ? [1e-3, "k"] : size >= 1 ? [1, ""] : size >= 1e-3 ? [1e3, "m"] : [1e6, "µ"];
-  return bounded({ value: bound.value * factor, error: bound.error * factor }, `${prefix}${unit}`);
-}
-
-const WORDS: Readonly<Record<Severity, readonly [string, string]>> = {
-  stop: ["stop", "stops"],
-  caution: ["caution", "cautions"],
-  note: ["note", "notes"],
-};
-
-function Entry({ name, value }: { readonly name: string; readonly value: string }) {
+function Entry({ name, value, hint }: { readonly name: string; readonly value: string; readonly hint?: string }) {
   return (
-    <div className="ledger-entry">
+    <div className="ledger-entry" title={hint}>
       <dt>{name}</dt>
       <dd>{value}</dd>
     </div>
   );
 }
 
-/** The bottom line: what the present plan says, how sure it is, and what the rules found. */
-export function Ledger({
-  document,
-  planning,
-  window,
-}: {
+const Numbers = memo(function Numbers({ plan }: { readonly plan: Plan | null }) {
+  const { nothing } = words;
+  const resistance = plan === null ? nothing : plan.resistanceOhm === null ? words.severalPotentials : boundedText(plan.resistanceOhm, "Ω");
+  return (
+    <dl>
+      <Entry name={words.resistance} value={resistance} />
+      <Entry name={words.current} value={plan === null ? nothing : boundedText(plan.currentA, "A")} />
+      <Entry name={words.power} value={plan === null ? nothing : boundedText(powerOf(plan), "W")} />
+      <Entry name={words.span} value={plan === null ? nothing : words.spanText(trimmed(plan.spanV[0], 2), trimmed(plan.spanV[1], 2))} />
+      <Entry
+        name={words.picture}
+        hint={words.pictureLong}
+        value={plan === null ? nothing : words.pictureText(trimmed(plan.numerics.pitchMm, 2), percentText(plan.currentA))}
+      />
+    </dl>
+  );
+});
+
+/** What a probe would read under the pointer. */
+function UnderPointer({ window }: { readonly window: WindowStore }) {
+  const readout = useStore(window, (state) => state.readout);
+  return (
+    <p className="ledger-readout">
+      {readout !== null &&
+        words.place(fixed(readout.xMm, 1), fixed(readout.yMm, 1)) +
+          (readout.volts === null ? "" : words.reading(fixed(readout.volts, 3), fixed(readout.fieldVPerCm, 3)))}
+    </p>
+  );
+}
+
+interface LedgerProps {
   readonly document: Document;
   readonly planning: Planning;
   readonly window: WindowStore;
-}) {
-  const { plan, refusal, busy, progress } = useStore(planning);
-  const readout = useStore(window, (state) => state.readout);
+}
+
+function FindingsCard({
+  document,
+  window,
+  findings,
+}: Pick<LedgerProps, "document" | "window"> & { readonly findings: readonly Finding[] }) {
+  return (
+    <section
+      className="float-card findings-sheet"
+      aria-label={texts.window.findings.title}
+      onKeyDown={(event) => event.key === "Escape" && window.set({ findingsShown: false })}
+    >
+      <header className="card-head">
+        <h2>{texts.window.findings.title}</h2>
+        <IconButton icon="close" name={texts.window.findings.close} onPress={() => window.set({ findingsShown: false })} />
+      </header>
+      <FindingsList
+        findings={findings}
+        onShow={(finding) => showFinding(document, finding, finding.partIds.length > 0 ? undefined : () => window.goTo("bench"))}
+        onApply={(finding) => {
+          if (finding.edit !== null) document.run(applyRemedy(finding.edit));
+        }}
+      />
+    </section>
+  );
+}
+
+/** The bottom line: what the present plan says, how sure it is, and what the rules found. */
+export function Ledger({ document, planning, window }: LedgerProps) {
+  const plan = useStore(planning, (state) => state.plan);
+  const refusal = useStore(planning, (state) => state.refusal);
+  const busy = useStore(planning, (state) => state.busy);
+  const percent = useStore(planning, (state) => Math.round(state.progress * 100));
   const findingsShown = useStore(window, (state) => state.findingsShown);
-  const findings: readonly Finding[] = refusal?.findings ?? plan?.findings ?? [];
+  const findings = refusal?.findings ?? plan?.findings ?? NO_FINDINGS;
   const counts = (["stop", "caution", "note"] as const).map(
     (severity) => [severity, findings.filter((one) => one.severity === severity).length] as const,
   );
-  const current = refusal === null ? plan : null;
   return (
     <footer className="ledger">
-      <dl>
-        <Entry
-          name="Resistance"
-          value={current === null ? "–" : current.resistanceOhm === null ? "several potentials" : inUnits(current.resistanceOhm, "Ω")}
-        />
-        <Entry name="Current" value={current === null ? "–" : inUnits(current.currentA, "A")} />
-        <Entry name="Power" value={current === null ? "–" : inUnits({ value: current.powerW, error: current.powerW * 1e-3 }, "W")} />
-        <Entry name="Span" value={current === null ? "–" : `${trimmed(current.spanV[0], 2)} to ${trimmed(current.spanV[1], 2)} V`} />
-        <Entry
-          name="Pitch, bound"
-          value={
-            current === null
-              ? "–"
-              : `${trimmed(current.numerics.pitchMm, 2)} mm, ${((100 * current.currentA.error) / Math.max(current.currentA.value, 1e-30)).toPrecision(1)} %`
-          }
-        />
-      </dl>
-      <p className="ledger-readout">
-        {readout !== null &&
-          `x ${fixed(readout.xMm, 1)}  y ${fixed(readout.yMm, 1)} mm${
-            readout.volts === null ? "" : `   ${fixed(readout.volts, 3)} V   ${fixed(readout.fieldVPerCm, 3)} V/cm`
-          }`}
-      </p>
+      <Numbers plan={refusal === null ? plan : null} />
+      <UnderPointer window={window} />
       {busy && (
         <p className="ledger-busy" role="status">
-          solving {Math.round(progress * 100)} %
+          {words.solving(percent)}
         </p>
       )}
       <button
@@ -93,26 +118,16 @@ export function Ledger({
         onClick={() => window.set({ findingsShown: !findingsShown })}
       >
         {findings.length === 0
-          ? "No findings"
+          ? texts.window.findings.none
           : counts
               .filter(([, count]) => count > 0)
               .map(([severity, count]) => (
                 <span key={severity}>
-                  <SeveritySign severity={severity} /> {count} {WORDS[severity][count === 1 ? 0 : 1]}
+                  <SeveritySign severity={severity} /> {texts.window.findings.count(severity, count)}
                 </span>
               ))}
       </button>
-      {findingsShown && (
-        <section className="findings-sheet" aria-label="Findings">
-          <FindingsList
-            findings={findings}
-            onShow={(finding) => showFinding(document, finding, finding.partIds.length > 0 ? undefined : () => window.goTo("bench"))}
-            onApply={(finding) => {
-              if (finding.edit !== null) document.run(applyRemedy(finding.edit));
-            }}
-          />
-        </section>
-      )}
+      {findingsShown && <FindingsCard document={document} window={window} findings={findings} />}
     </footer>
   );
 }

@@ -1,4 +1,5 @@
 import { useStore } from "zustand";
+import { texts } from "../texts/texts";
 import { Icon } from "./icons";
 import type { WindowStore } from "./window-state";
 
@@ -11,7 +12,7 @@ export function Messages({ window }: { readonly window: WindowStore }) {
         <section key={id} className={`message message-${tone}`} role={tone === "done" ? "status" : "alertdialog"} aria-label={title}>
           <header>
             <h2>{title}</h2>
-            <button type="button" className="quiet" aria-label="Close this message" onClick={() => window.dismiss(id)}>
+            <button type="button" className="quiet" aria-label={texts.window.messages.close} onClick={() => window.dismiss(id)}>
               <Icon name="close" />
             </button>
           </header>

@@ -1,127 +1,154 @@
+import { type KeyboardEvent, memo, useCallback, useState } from "react";
 import { useStore } from "zustand";
 import type { ProbePoint } from "../../shared-types/plan";
-import type { Problem } from "../../shared-types/result";
 import type { Probing } from "../../shared-types/setup";
 import { changeProbing } from "../document/commands/bench";
 import type { Document } from "../document/document";
 import { fixed, trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
+import { texts } from "../texts/texts";
+import { tried } from "./field-surroundings";
 import { NumberField } from "./number-field";
-import { LENGTHS_IN_MM } from "./read-number";
 import type { WindowStore } from "./window-state";
 
-const SETTINGS: readonly (readonly [keyof Probing, string, string, number])[] = [
-  ["levels", "Levels", "", 1],
-  ["pointsPerLevel", "Points a level", "", 1],
-  ["wallClearanceMm", "Clear of walls", "mm", 1],
-  ["partClearanceMm", "Clear of parts", "mm", 1],
-  ["probeTipMm", "Probe tip", "mm", 0.1],
-  ["placementMm", "Placement ±", "mm", 0.1],
+const words = texts.probe;
+
+const SETTINGS: readonly (readonly [key: keyof Probing, unit: string, step: number])[] = [
+  ["levels", "", 1],
+  ["pointsPerLevel", "", 1],
+  ["wallClearanceMm", "mm", 1],
+  ["partClearanceMm", "mm", 1],
+  ["probeTipMm", "mm", 0.1],
+  ["placementMm", "mm", 0.1],
 ];
+
+/** How many levels and points, and how far they keep clear. */
+export function ProbeSettings({ document }: { readonly document: Document }) {
+  const probing = useStore(document, (state) => state.setup.probing);
+  return (
+    <section className="probe-settings" aria-label={words.settingsLabel}>
+      <h2>{words.title}</h2>
+      {SETTINGS.map(([key, unit, step]) => (
+        <NumberField
+          key={key}
+          label={words.settings[key]}
+          unit={unit}
+          value={probing[key]}
+          step={step}
+          setting={`probing.${key}`}
+          onSet={(value, stepping) => tried(document, changeProbing({ [key]: value }), stepping)}
+        />
+      ))}
+    </section>
+  );
+}
 
 /** Digits that the meter shows on the range in use. */
 const decimalsOf = (digitVolts: number): number => Math.max(0, Math.ceil(-Math.log10(digitVolts) - 1e-9));
 
-function PointRow(props: { readonly point: ProbePoint; readonly decimals: number; readonly window: WindowStore }) {
-  const { point, decimals, window } = props;
-  const mark = (on: boolean): void => window.set({ markedPoints: new Set(on ? [point.n] : []) });
+const PointRow = memo(function PointRow(props: {
+  readonly point: ProbePoint;
+  readonly decimals: number;
+  /** The one stop of the Tab key in the list. */
+  readonly stop: boolean;
+  readonly onMark: (n: number | null) => void;
+}) {
+  const { point, decimals, stop, onMark } = props;
+  const { n } = point;
   return (
-    <tr onPointerEnter={() => mark(true)} onPointerLeave={() => mark(false)}>
-      <th scope="row">{point.n}</th>
+    <tr onPointerEnter={() => onMark(n)} onPointerLeave={() => onMark(null)}>
+      <th scope="row">
+        <button type="button" data-point={n} tabIndex={stop ? 0 : -1} onFocus={() => onMark(n)} onBlur={() => onMark(null)}>
+          {n}
+        </button>
+      </th>
       <td>{trimmed(point.xMm, 1)}</td>
       <td>{trimmed(point.yMm, 1)}</td>
       <td>{fixed(point.volts, decimals)}</td>
-      <td>± {fixed(point.bandV, decimals)}</td>
+      <td>{fixed(point.bandV, decimals)}</td>
       <td>{fixed(point.voltsPerMm * 1000, 0)}</td>
     </tr>
   );
+});
+
+/** Up and down the list of points, Home and End to its ends. */
+function moveAmongPoints(event: KeyboardEvent<HTMLTableElement>): void {
+  const buttons = [...event.currentTarget.querySelectorAll<HTMLElement>("[data-point]")];
+  const { activeElement } = globalThis.document;
+  const at = activeElement instanceof HTMLElement ? buttons.indexOf(activeElement) : -1;
+  const to = { ArrowDown: at + 1, ArrowUp: at - 1, Home: 0, End: buttons.length - 1 }[event.key];
+  if (to === undefined || at < 0) return;
+  event.preventDefault();
+  buttons[Math.min(buttons.length - 1, Math.max(0, to))]?.focus();
 }
 
-const HEAD = (
-  <thead>
-    <tr>
-      <th scope="col">No.</th>
-      <th scope="col">x mm</th>
-      <th scope="col">y mm</th>
-      <th scope="col">reads V</th>
-      <th scope="col">band V</th>
-      <th scope="col">mV/mm</th>
-    </tr>
-  </thead>
-);
-
-/** Levels and points of the probe plan: how many, how clear, and what the meter should read at each. */
-export function ProbePanel({
-  document,
-  planning,
-  window,
-}: {
-  readonly document: Document;
+export interface ProbePanelProps {
   readonly planning: Planning;
   readonly window: WindowStore;
-}) {
-  const probing = useStore(document, (state) => state.setup.probing);
+  readonly onSaveTable: () => void;
+}
+
+/** The points of the probe plan by level, with what the meter should read at each. */
+export function ProbePanel({ planning, window, onSaveTable }: ProbePanelProps) {
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
-  const tried = (change: Partial<Probing>): readonly Problem[] => {
-    const result = document.run(changeProbing(change));
-    return result.ok ? [] : result.problems;
-  };
-  const decimals = plan === null ? 2 : decimalsOf(plan.bench.meter.digitVolts);
+  const [stopAt, setStopAt] = useState(1);
+  const mark = useCallback(
+    (n: number | null) => {
+      window.set({ markedPoints: new Set(n === null ? [] : [n]) });
+      if (n !== null) setStopAt(n);
+    },
+    [window],
+  );
+  if (refusal !== null || plan === null) {
+    return (
+      <section className="card" aria-label={words.points}>
+        <h2>{words.points}</h2>
+        <p className="hint">{refusal === null ? words.coming : words.noField(refusal.message)}</p>
+      </section>
+    );
+  }
+  const decimals = decimalsOf(plan.bench.meter.digitVolts);
+  const groups = [
+    ...plan.probing.levels.map(({ volts, note, points }) => ({ title: words.level(trimmed(volts, 3)), note, points })),
+    ...(plan.probing.checks.length > 0 ? [{ title: words.checks, note: null, points: plan.probing.checks }] : []),
+  ];
+  const all = groups.flatMap(({ points }) => points);
+  const stop = all.some(({ n }) => n === stopAt) ? stopAt : all[0]?.n;
   return (
-    <>
-      <section className="card" aria-label="Probe plan settings">
-        <h2>Probe plan</h2>
-        <div className="grid-2">
-          {SETTINGS.map(([key, label, unit, step]) => (
-            <NumberField
-              key={key}
-              label={label}
-              unit={unit}
-              {...(unit === "mm" ? { units: LENGTHS_IN_MM } : {})}
-              value={probing[key]}
-              step={step}
-              setting={`probing.${key}`}
-              onSet={(value) => tried({ [key]: value })}
-            />
-          ))}
-        </div>
-      </section>
-      <section className="card points" aria-label="Points">
-        <h2>Points</h2>
-        {refusal !== null && <p className="hint">No points without a field: {refusal.message}</p>}
-        {refusal === null && plan === null && <p className="hint">The points come with the field.</p>}
-        {refusal === null &&
-          plan?.probing.levels.map((level) => (
-            <div key={level.volts} className="level">
-              <h3>{trimmed(level.volts, 3)} V</h3>
-              {level.note !== null && <p className="hint">{level.note}</p>}
-              {level.points.length > 0 && (
-                <table>
-                  {HEAD}
-                  <tbody>
-                    {level.points.map((point) => (
-                      <PointRow key={point.n} point={point} decimals={decimals} window={window} />
-                    ))}
-                  </tbody>
-                </table>
-              )}
-            </div>
-          ))}
-        {refusal === null && (plan?.probing.checks.length ?? 0) > 0 && (
-          <div className="level">
-            <h3>Checks of loose conductors</h3>
-            <table>
-              {HEAD}
-              <tbody>
-                {plan?.probing.checks.map((point) => (
-                  <PointRow key={point.n} point={point} decimals={decimals} window={window} />
-                ))}
-              </tbody>
-            </table>
-          </div>
-        )}
-      </section>
-    </>
+    <section className="card points" aria-label={words.points}>
+      <header className="card-head">
+        <h2>
+          {words.points} <span className="count">{words.count(all.length, plan.probing.levels.length)}</span>
+        </h2>
+        <button type="button" onClick={onSaveTable} disabled={all.length === 0}>
+          {words.saveTable}
+        </button>
+      </header>
+      <table onKeyDown={moveAmongPoints}>
+        <thead>
+          <tr>
+            {words.columns.map((column, index) => (
+              <th key={column} scope="col" title={words.columnsLong[index]}>
+                {column}
+              </th>
+            ))}
+          </tr>
+        </thead>
+        {groups.map(({ title, note, points }) => (
+          <tbody key={title}>
+            <tr className="level">
+              <th colSpan={6} scope="rowgroup">
+                <h3>{title}</h3>
+                {note !== null && <p className="hint">{note}</p>}
+              </th>
+            </tr>
+            {points.map((point) => (
+              <PointRow key={point.n} point={point} decimals={decimals} stop={point.n === stop} onMark={mark} />
+            ))}
+          </tbody>
+        ))}
+      </table>
+    </section>
   );
 }

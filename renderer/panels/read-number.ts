@@ -3,12 +3,23 @@
  * unit behind it where the field has one.
  */
 
-/** Factors from a unit to the field's own. */
+/** Factors from a unit, in small letters, to the field's own. */
 export type Units = Readonly<Record<string, number>>;
 
 export const LENGTHS_IN_MM: Units = { mm: 1, cm: 10, m: 1000, in: 25.4, '"': 25.4 };
-export const ANGLES_IN_DEG: Units = { "°": 1, deg: 1, rad: 180 / Math.PI };
-export const NO_UNITS: Units = {};
+
+const KNOWN: Readonly<Record<string, Units>> = {
+  mm: LENGTHS_IN_MM,
+  "°": { "°": 1, deg: 1, rad: 180 / Math.PI },
+  V: { v: 1, mv: 1e-3, kv: 1e3 },
+  A: { a: 1, ma: 1e-3 },
+  Hz: { hz: 1, khz: 1e3 },
+  min: { min: 1, h: 60 },
+  "µS/cm": { "µs/cm": 1, "us/cm": 1, "ms/cm": 1e3, "s/m": 1e4, "ms/m": 10 },
+};
+
+/** @returns the units that a field in `unit` understands behind a number; its own at least. */
+export const unitsFor = (unit: string): Units => KNOWN[unit] ?? (unit === "" ? {} : { [unit.toLowerCase()]: 1 });
 
 type Token = number | string;
 
@@ -69,12 +80,15 @@ function sumOf(tokens: readonly Token[]): number | null {
   return at === tokens.length ? value : null;
 }
 
-/** @returns the number that a text stands for in the field's own unit, or null when it stands for none. */
-export function readNumber(text: string, units: Units): number | null {
-  let rest = text.trim().replace(/\s+$/, "");
-  let factor = 1;
+/**
+ * @param bare what a number without a unit is to be multiplied by: mm in an inch where the user thinks in inches.
+ * @returns the number that a text stands for in the field's own unit, or null when it stands for none.
+ */
+export function readNumber(text: string, units: Units, bare = 1): number | null {
+  let rest = text.trim();
+  let factor = bare;
   for (const unit of Object.keys(units).sort((a, b) => b.length - a.length)) {
-    if (rest.toLowerCase().endsWith(unit)) {
+    if (rest.toLowerCase().replace("μ", "µ").endsWith(unit)) {
       rest = rest.slice(0, -unit.length);
       factor = units[unit];
       break;
@@ -83,5 +97,5 @@ export function readNumber(text: string, units: Units): number | null {
   const tokens = tokensOf(rest.trimEnd());
   if (tokens === null || tokens.length === 0) return null;
   const value = sumOf(tokens);
-  return value === null || !Number.isFinite(value * factor) ? null : value * factor;
+  return value === null || !Number.isFinite(value * factor) ? null : Number((value * factor).toPrecision(12));
 }

@@ -4,27 +4,22 @@ import { addSlab } from "../document/commands/bench";
 import { addPart, freePlaceMm } from "../document/commands/parts";
 import type { Document } from "../document/document";
 import { FIRST_SHAPES, SHELF_PART_TYPE, shelfPartText } from "../document/shelf-part";
-import { boundsOf, outlineOf } from "../engine/geometry/outline";
 import { traySizeMm } from "../engine/geometry/tray-outline";
+import { texts } from "../texts/texts";
+import { choicesOf } from "./fields";
+import { boxOf } from "./many-tools";
 import { PartPicture } from "./part-picture";
 
-const NAMES: readonly (readonly [ShapeKind, string])[] = [
-  ["bar", "Bar"],
-  ["disc", "Disc"],
-  ["ring", "Ring"],
-  ["arc", "Arc"],
-  ["frame", "Frame"],
-  ["polygon", "Outline"],
-];
+const words = texts.layOut.shelf;
 
-/** A slab as the shelf gives it out: half the usual tray, a third of its depth. */
+/** A slab as the shelf gives it out: a good part of the usual tray, a third of its depth. */
 const FIRST_SLAB: Shape = { kind: "bar", lengthMm: 80, widthMm: 120 };
 const FIRST_THICKNESS_MM = 4;
 
 /** The middle of free water for a new shape. */
 function freePlace(setup: Setup, shape: Shape): readonly [number, number] {
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  return freePlaceMm(setup, shape, (thing) => boundsOf(outlineOf(thing)), [0, 0, lengthMm, widthMm]);
+  return freePlaceMm(setup, shape, boxOf, [0, 0, lengthMm, widthMm]);
 }
 
 /** The shelf of parts: dragged onto the tray, or placed in free water by a click or the Enter key. */
@@ -39,11 +34,11 @@ export function Shelf({ document }: { readonly document: Document }) {
     event.dataTransfer.effectAllowed = "copy";
   }
   return (
-    <section className="shelf" aria-label="Shelf of parts">
-      <h2>Shelf</h2>
-      <p className="hint">Drag onto the tray, or press Enter to place.</p>
+    <section className="shelf" aria-label={words.label}>
+      <h2>{words.title}</h2>
+      <p className="hint">{words.hint}</p>
       <ul>
-        {NAMES.map(([kind, name]) => (
+        {choicesOf<ShapeKind>(words.shapes).map(([kind, name]) => (
           <li key={kind}>
             <button type="button" className="shelf-part" draggable onDragStart={(event) => lift(event, kind)} onClick={() => place(kind)}>
               <PartPicture shape={FIRST_SHAPES[kind]} />
@@ -55,10 +50,12 @@ export function Shelf({ document }: { readonly document: Document }) {
           <button
             type="button"
             className="shelf-part"
+            aria-label={words.slabLong}
+            title={words.slabLong}
             onClick={() => document.run(addSlab(FIRST_SLAB, FIRST_THICKNESS_MM, ...freePlace(document.getState().setup, FIRST_SLAB)))}
           >
             <PartPicture shape={FIRST_SLAB} plate />
-            <span>Slab on the bed</span>
+            <span>{words.slab}</span>
           </button>
         </li>
       </ul>

@@ -1,78 +1,101 @@
 import type { ReactNode } from "react";
 import { useStore } from "zustand";
+import type { Host, Settings } from "../../shared-types/host";
 import type { Document } from "../document/document";
 import type { Planning } from "../document/planning";
+import { texts } from "../texts/texts";
 import { BenchDesk } from "./bench/bench-desk";
+import type { Act } from "./commands";
+import { FaultCard, FaultGuard } from "./fault-card";
 import type { Files } from "./files";
 import { KeysCard } from "./keys-card";
 import { Ledger } from "./ledger";
 import { Messages } from "./messages";
 import { PartCard } from "./part-card";
-import { ProbePanel } from "./probe-panel";
+import { PartsInTray } from "./parts-in-tray";
+import { ProbePanel, ProbeSettings } from "./probe-panel";
+import { SettingsCard } from "./settings-card";
 import { Shelf } from "./shelf";
-import { Rail, TopBar, type TopBarProps } from "./top-bar";
-import { ShownCard, TrayCard } from "./tray-card";
+import { Rail, TopBar } from "./top-bar";
+import { SupplyCard, TrayCard, WaterCard } from "./tray-card";
 import type { WindowStore } from "./window-state";
 
-export interface ShellProps extends Omit<TopBarProps, "files"> {
+const words = texts.window;
+
+export interface ShellProps {
+  readonly host: Host;
   readonly document: Document;
   readonly planning: Planning;
   readonly window: WindowStore;
   readonly files: Files;
-  /** The tray with its zoom buttons; stays mounted while desks change beside it. */
+  readonly settings: Settings;
+  readonly onSettings: (change: Partial<Settings>) => void;
+  readonly onTheme: () => void;
+  readonly onPrint: () => void;
+  readonly onSaveTable: () => void;
+  readonly act: Act;
+  /** The tray with its view bar; it stays mounted, and where it is, while desks change beside it. */
   readonly tray: ReactNode;
   readonly sheets: ReactNode;
   readonly startPage: ReactNode;
 }
 
+/** The cards of laying out: those of the selected parts, else those of the tray. */
+function LayOutCards({ document, planning }: Pick<ShellProps, "document" | "planning">) {
+  const selected = useStore(document, (state) => state.selection.length > 0);
+  if (selected) return <PartCard document={document} planning={planning} />;
+  return (
+    <>
+      <TrayCard document={document} />
+      <WaterCard document={document} />
+      <SupplyCard document={document} />
+    </>
+  );
+}
+
+/** What stands left and right of the tray on the desks that show it. */
+function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "probe-plan" }) {
+  const { host, document, planning, window, desk } = props;
+  const partWords = texts.layOut.parts;
+  return (
+    <>
+      <aside className="left" aria-label={texts.layOut.parts.title}>
+        {desk === "lay-out" && <Shelf document={document} />}
+        {desk === "probe-plan" && <ProbeSettings document={document} />}
+        <PartsInTray document={document} none={desk === "lay-out" ? partWords.none : partWords.noneElsewhere} />
+      </aside>
+      <main className="tray-place" aria-label={words.tray}>
+        {props.tray}
+      </main>
+      <aside className="side" aria-label={words.sides[desk]}>
+        <FaultGuard key={desk} host={host}>
+          {desk === "lay-out" && <LayOutCards document={document} planning={planning} />}
+          {desk === "bench" && <BenchDesk document={document} planning={planning} />}
+          {desk === "probe-plan" && <ProbePanel planning={planning} window={window} onSaveTable={props.onSaveTable} />}
+        </FaultGuard>
+      </aside>
+    </>
+  );
+}
+
 /** The window: rail, top bar, ledger, and the desk's cards round the tray. */
 export function Shell(props: ShellProps) {
-  const { document, planning, window } = props;
-  const { desk, startPage } = useStore(window);
-  const selected = useStore(document, (state) => state.selection.length > 0);
+  const { host, document, planning, window, settings } = props;
+  const desk = useStore(window, (state) => state.desk);
+  const startPage = useStore(window, (state) => state.startPage);
   const fault = useStore(planning, (state) => state.fault);
   return (
     <div className={`shell desk-${startPage ? "start" : desk}`}>
       <Rail window={window} />
-      <TopBar {...props} />
+      <TopBar {...props} theme={settings.theme} />
       {startPage && props.startPage}
-      {!startPage && desk === "sheets" && props.sheets}
-      {!startPage && desk !== "sheets" && (
-        <>
-          {desk === "lay-out" && (
-            <aside className="left">
-              <Shelf document={document} />
-            </aside>
-          )}
-          <main className="tray-place" aria-label="Tray">
-            {props.tray}
-          </main>
-          <aside className="side" aria-label={desk === "bench" ? "Bench" : desk === "probe-plan" ? "Probe plan" : "Part and tray"}>
-            {desk === "lay-out" && (
-              <>
-                {selected ? <PartCard document={document} planning={planning} /> : <TrayCard document={document} />}
-                <ShownCard document={document} window={window} />
-              </>
-            )}
-            {desk === "bench" && <BenchDesk document={document} planning={planning} />}
-            {desk === "probe-plan" && <ProbePanel document={document} planning={planning} window={window} />}
-          </aside>
-        </>
-      )}
+      {!startPage && desk === "sheets" && <FaultGuard host={host}>{props.sheets}</FaultGuard>}
+      {!startPage && desk !== "sheets" && <TrayDesk {...props} desk={desk} />}
       <Ledger document={document} planning={planning} window={window} />
-      <KeysCard window={window} />
+      <KeysCard window={window} act={props.act} />
+      <SettingsCard window={window} settings={settings} onSettings={props.onSettings} />
       <Messages window={window} />
-      {fault !== null && (
-        <section className="message message-problem fault" role="alertdialog" aria-label="The field could not be solved">
-          <h2>The field could not be solved</h2>
-          <p>{fault}</p>
-          <div className="choices">
-            <button type="button" onClick={planning.retry}>
-              Try again
-            </button>
-          </div>
-        </section>
-      )}
+      {fault !== null && <FaultCard host={host} title={words.fault.field} message={fault} onAgain={planning.retry} />}
     </div>
   );
 }

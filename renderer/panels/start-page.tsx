@@ -1,9 +1,14 @@
-import { useEffect, useState } from "react";
-import type { Host, KeptDraft, RecentFile } from "../../shared-types/host";
+import { type ReactNode, useEffect, useState } from "react";
+import type { Host, KeptDraft, RecentFile, Settings } from "../../shared-types/host";
+import { parseSetupText } from "../../shared-types/parse-setup";
 import type { Setup } from "../../shared-types/setup";
-import { chainOf, outlineOf } from "../engine/geometry/outline";
-import { trayOutline, traySizeMm } from "../engine/geometry/tray-outline";
+import { texts } from "../texts/texts";
 import type { Files } from "./files";
+import { IconButton } from "./icon-button";
+import { pictureOf } from "./recent-pictures";
+import { type Pictured, picturedOf, TrayPicture } from "./tray-picture";
+
+const words = texts.files.start;
 
 /** A ready setup with a picture of its own. */
 export interface StartExample {
@@ -13,130 +18,140 @@ export interface StartExample {
   readonly setup: Setup;
 }
 
-const pathOf = (loops: readonly (readonly (readonly [number, number])[])[], top: number): string =>
-  loops.map((chain) => `M${chain.map(([x, y]) => `${x.toFixed(2)} ${(top - y).toFixed(2)}`).join("L")}Z`).join("");
+const when = (ms: number): string => new Date(ms).toLocaleString(undefined, { dateStyle: "medium", timeStyle: "short" });
 
-/** A small picture of a tray, drawn from its setup. */
-export function TrayPicture({ setup, heightPx = 120 }: { readonly setup: Setup; readonly heightPx?: number }) {
-  const [lengthMm, widthMm] = traySizeMm(setup.tray);
-  const margin = 0.05 * Math.max(lengthMm, widthMm);
-  const outlineFor = (thing: Setup["parts"][number] | Setup["water"]["slabs"][number]): string =>
-    pathOf(
-      outlineOf(thing).map((loop) => chainOf(loop, lengthMm / 400)),
-      widthMm,
-    );
+function Tile(props: {
+  readonly pictured: Pictured | null;
+  readonly title: string;
+  readonly children: ReactNode;
+  readonly onPress: () => void;
+}) {
   return (
-    <svg
-      className="tray-picture"
-      viewBox={`${-margin} ${-margin} ${lengthMm + 2 * margin} ${widthMm + 2 * margin}`}
-      height={heightPx}
-      aria-hidden="true"
-      preserveAspectRatio="xMidYMid meet"
-    >
-      <path className="picture-water" d={pathOf([chainOf(trayOutline(setup.tray), lengthMm / 400)], widthMm)} />
-      {setup.water.slabs.map((slab) => (
-        <path key={slab.id} className="picture-slab" d={outlineFor(slab)} />
-      ))}
-      {setup.parts.map((part) => (
-        <path key={part.id} className={`picture-${part.role}`} fillRule="evenodd" d={outlineFor(part)} />
-      ))}
-    </svg>
+    <button type="button" className="tile" onClick={props.onPress}>
+      <span className="tile-picture">{props.pictured !== null && <TrayPicture {...props.pictured} />}</span>
+      <strong>{props.title}</strong>
+      {props.children}
+    </button>
   );
 }
 
-const when = (ms: number): string => new Date(ms).toLocaleString(undefined, { dateStyle: "medium", timeStyle: "short" });
-
-export interface StartPageProps {
-  readonly host: Host;
-  readonly files: Files;
-  readonly examples: readonly StartExample[];
-  readonly onBack: (() => void) | null;
-}
-
-/** Examples, recent setups, and work that was left behind unsaved. */
-export function StartPage({ host, files, examples, onBack }: StartPageProps) {
-  const [recent, setRecent] = useState<readonly RecentFile[]>([]);
+function KeptWork({ host, files }: { readonly host: Host; readonly files: Files }) {
   const [drafts, setDrafts] = useState<readonly KeptDraft[]>([]);
   useEffect(() => {
-    host.recentFiles().then(setRecent, () => setRecent([]));
     host.keptDrafts().then(setDrafts, () => setDrafts([]));
   }, [host]);
   function drop(draft: KeptDraft): void {
     setDrafts(drafts.filter(({ id }) => id !== draft.id));
     void host.discardDraft(draft.id);
   }
+  if (drafts.length === 0) return null;
   return (
-    <main className="start-page">
+    <section aria-label={words.keptLabel}>
+      <h2>{words.kept}</h2>
+      <ul className="tiles">
+        {drafts.map((draft) => {
+          const parsed = parseSetupText(draft.text);
+          return (
+            <li key={draft.id} className="kept">
+              <Tile
+                pictured={parsed.ok ? picturedOf(parsed.value) : null}
+                title={draft.title === "" ? texts.files.untitled : draft.title}
+                onPress={() => {
+                  files.bringBack(draft);
+                  drop(draft);
+                }}
+              >
+                <span>{texts.files.keptAt(when(draft.keptAtMs), draft.file?.name ?? null)}</span>
+                <span className="tile-action">{words.bringBack}</span>
+              </Tile>
+              <button type="button" onClick={() => drop(draft)}>
+                {words.notWanted}
+              </button>
+            </li>
+          );
+        })}
+      </ul>
+    </section>
+  );
+}
+
+function RecentSetups({ host, files, settings }: { readonly host: Host; readonly files: Files; readonly settings: Settings }) {
+  const [recent, setRecent] = useState<readonly RecentFile[]>([]);
+  useEffect(() => {
+    host.recentFiles().then(setRecent, () => setRecent([]));
+  }, [host]);
+  if (recent.length === 0) return null;
+  return (
+    <section aria-label={words.recentLabel}>
+      <h2>{words.recent}</h2>
+      <ul className="tiles tiles-small">
+        {recent.map(({ file, openedAtMs }) => (
+          <li key={file.handle} className="recent">
+            <Tile
+              pictured={pictureOf(settings.preferences, file.handle)}
+              title={file.name.replace(/\.fieldtray\.json$/, "")}
+              onPress={() => void files.openRecent(file.handle)}
+            >
+              <span className="tile-place" title={file.place}>
+                {file.place}
+              </span>
+              <span>{when(openedAtMs)}</span>
+            </Tile>
+            <IconButton
+              icon="close"
+              name={words.forget(file.name)}
+              onPress={() => {
+                setRecent(recent.filter((other) => other.file.handle !== file.handle));
+                void host.forgetRecent(file.handle);
+              }}
+            />
+          </li>
+        ))}
+      </ul>
+    </section>
+  );
+}
+
+export interface StartPageProps {
+  readonly host: Host;
+  readonly files: Files;
+  readonly examples: readonly StartExample[];
+  readonly settings: Settings;
+  readonly onBack: () => void;
+}
+
+/** Examples, recent setups, and work that was left behind unsaved. */
+export function StartPage({ host, files, examples, settings, onBack }: StartPageProps) {
+  return (
+    // biome-ignore lint/a11y/noNoninteractiveTabindex: a scrolling area must be reachable by keyboard (WCAG 2.1.1)
+    <main className="start-page" tabIndex={0}>
       <header>
         <div>
-          <h1>Plan a tray before any water is poured</h1>
-          <p>Begin with an empty tray, a setup of yours, or one of the ready ones from the prep room of Saltmarsh College.</p>
+          <h1>{words.title}</h1>
+          <p>{words.line}</p>
         </div>
         <div className="choices">
           <button type="button" className="strong" onClick={files.newSetup}>
-            Empty tray
+            {words.empty}
           </button>
           <button type="button" onClick={() => void files.open()}>
-            Open a setup…
+            {words.open}
           </button>
-          {onBack !== null && (
-            <button type="button" onClick={onBack}>
-              Back to the tray
-            </button>
-          )}
+          <button type="button" onClick={onBack}>
+            {words.back}
+          </button>
         </div>
       </header>
-      {drafts.length > 0 && (
-        <section aria-label="Unsaved work" className="kept">
-          <h2>Left behind unsaved</h2>
-          <ul>
-            {drafts.map((draft) => (
-              <li key={draft.id}>
-                <span>
-                  <strong>{draft.title === "" ? "Untitled tray" : draft.title}</strong> kept {when(draft.keptAtMs)}
-                  {draft.file === null ? ", never saved" : `, from ${draft.file.name}`}
-                </span>
-                <button
-                  type="button"
-                  onClick={() => {
-                    files.bringBack(draft);
-                    drop(draft);
-                  }}
-                >
-                  Bring back
-                </button>
-                <button type="button" onClick={() => drop(draft)}>
-                  Not wanted
-                </button>
-              </li>
-            ))}
-          </ul>
-        </section>
-      )}
-      {recent.length > 0 && (
-        <section aria-label="Recent setups">
-          <h2>Recent</h2>
-          <ul className="recent">
-            {recent.map(({ file, openedAtMs }) => (
-              <li key={file.handle}>
-                <button type="button" onClick={() => void files.openRecent(file.handle)}>
-                  <strong>{file.name}</strong> <span>{file.place}</span> <span>{when(openedAtMs)}</span>
-                </button>
-              </li>
-            ))}
-          </ul>
-        </section>
-      )}
-      <section aria-label="Examples">
-        <h2>Ready setups</h2>
-        <ul className="examples">
+      <KeptWork host={host} files={files} />
+      <RecentSetups host={host} files={files} settings={settings} />
+      <section aria-label={words.examplesLabel}>
+        <h2>{words.examples}</h2>
+        <ul className="tiles">
           {examples.map(({ id, title, purpose, setup }) => (
             <li key={id}>
-              <button type="button" onClick={() => files.showExample(title, setup)}>
-                <TrayPicture setup={setup} />
-                <strong>{title}</strong>
+              <Tile pictured={picturedOf(setup)} title={title} onPress={() => files.showExample(title, setup)}>
                 <span>{purpose}</span>
-              </button>
+              </Tile>
             </li>
           ))}
         </ul>

@@ -1,17 +1,11 @@
 import { useStore } from "zustand";
-import type { Problem } from "../../shared-types/result";
-import type { Tray } from "../../shared-types/setup";
-import { changeSupply, changeTray, changeWater, setTitle } from "../document/commands/bench";
+import type { Supply, Tray } from "../../shared-types/setup";
+import { changeSupply, changeTray, changeWater, setNotes, setTitle } from "../document/commands/bench";
 import type { Document } from "../document/document";
-import type { Edit } from "../document/edit";
-import { ChoiceField, NumberField, Switch, TextField } from "./number-field";
-import { ANGLES_IN_DEG, LENGTHS_IN_MM } from "./read-number";
-import type { WindowStore } from "./window-state";
-
-const TRAY_SHAPES = [
-  ["rectangle", "Rectangular"],
-  ["circle", "Round"],
-] as const;
+import { texts } from "../texts/texts";
+import { tried } from "./field-surroundings";
+import { ChoiceField, choicesOf, TextField } from "./fields";
+import { NumberField } from "./number-field";
 
 /** The same tray in the other shape, as wide as it was. */
 function reshaped(tray: Tray, shape: Tray["shape"]): Tray {
@@ -23,114 +17,137 @@ function reshaped(tray: Tray, shape: Tray["shape"]): Tray {
     : { shape: "circle", diameterMm: Math.min(tray.lengthMm, tray.widthMm), ...common };
 }
 
-/** The tray, its water and the supply, as far as laying out needs them. */
+/** The tray itself: title, shape and sizes. */
 export function TrayCard({ document }: { readonly document: Document }) {
-  const setup = useStore(document, (state) => state.setup);
-  const { tray, water, supply } = setup;
-  const tried = (edit: Edit): readonly Problem[] => {
-    const result = document.run(edit);
-    return result.ok ? [] : result.problems;
-  };
-  const length = (label: string, key: "lengthMm" | "widthMm" | "diameterMm" | "wallHeightMm", value: number) => (
+  const title = useStore(document, (state) => state.setup.title);
+  const notes = useStore(document, (state) => state.setup.notes);
+  const tray = useStore(document, (state) => state.setup.tray);
+  const words = texts.layOut.tray;
+  const length = (key: "lengthMm" | "widthMm" | "diameterMm" | "wallHeightMm" | "baseMm", value: number, step = 5) => (
     <NumberField
-      label={label}
+      label={words[key]}
       unit="mm"
-      units={LENGTHS_IN_MM}
       value={value}
-      step={5}
+      step={step}
       setting={`tray.${key}`}
-      onSet={(size) => tried(changeTray({ ...tray, [key]: size } as Tray))}
+      onSet={(size, stepping) => tried(document, changeTray({ ...tray, [key]: size } as Tray), stepping)}
     />
   );
+  const bases: readonly (readonly [string, string])[] = choicesOf(words.bases);
   return (
-    <section className="card" aria-label="Tray and water">
-      <h2>Tray</h2>
-      <TextField label="Title" value={setup.title} onSet={(title) => tried(setTitle(title))} />
-      <ChoiceField
-        label="Shape"
-        value={tray.shape}
-        choices={TRAY_SHAPES}
-        onSet={(shape) => document.run(changeTray(reshaped(tray, shape)))}
-      />
-      {tray.shape === "rectangle" ? (
-        <div className="pair">
-          {length("Length (x)", "lengthMm", tray.lengthMm)}
-          {length("Width (y)", "widthMm", tray.widthMm)}
-        </div>
-      ) : (
-        length("Diameter", "diameterMm", tray.diameterMm)
-      )}
-      {length("Wall height", "wallHeightMm", tray.wallHeightMm)}
-      <h3>Water</h3>
-      <NumberField
-        label="Depth at the centre"
-        unit="mm"
-        units={LENGTHS_IN_MM}
-        value={water.depthMm}
-        step={0.5}
-        setting="water.depthMm"
-        onSet={(depthMm) => tried(changeWater({ depthMm }))}
-      />
-      <div className="pair">
-        <NumberField
-          label="Deeper to +x"
-          unit="°"
-          units={ANGLES_IN_DEG}
-          value={water.tiltXDeg}
-          step={0.1}
-          setting="water.tiltXDeg"
-          onSet={(tiltXDeg) => tried(changeWater({ tiltXDeg }))}
+    <section className="card" aria-label={words.title}>
+      <h2>{words.title}</h2>
+      <TextField label={words.setupTitle} value={title} onSet={(next) => tried(document, setTitle(next))} />
+      <div className="grid-3">
+        <ChoiceField
+          label={words.shape}
+          value={tray.shape}
+          choices={[
+            ["rectangle", words.rectangle],
+            ["circle", words.circle],
+          ]}
+          onSet={(shape) => document.run(changeTray(reshaped(tray, shape)))}
         />
-        <NumberField
-          label="Deeper to +y"
-          unit="°"
-          units={ANGLES_IN_DEG}
-          value={water.tiltYDeg}
-          step={0.1}
-          setting="water.tiltYDeg"
-          onSet={(tiltYDeg) => tried(changeWater({ tiltYDeg }))}
-        />
+        {tray.shape === "rectangle" ? (
+          <>
+            {length("lengthMm", tray.lengthMm)}
+            {length("widthMm", tray.widthMm)}
+          </>
+        ) : (
+          length("diameterMm", tray.diameterMm)
+        )}
       </div>
-      <NumberField
-        label="Conductivity at 25 °C"
-        unit="µS/cm"
-        value={water.conductivityUsPerCm}
-        step={10}
-        setting="water.conductivityUsPerCm"
-        onSet={(conductivityUsPerCm) => tried(changeWater({ conductivityUsPerCm }))}
-      />
-      <h3>Supply</h3>
-      <NumberField
-        label={supply.waveform === "ac" ? "Voltage (rms)" : "Voltage"}
-        unit="V"
-        value={supply.volts}
-        step={0.5}
-        setting="supply.volts"
-        onSet={(volts) => tried(changeSupply({ volts }))}
-      />
+      <div className="grid-3">
+        <ChoiceField
+          label={words.base}
+          value={tray.baseMaterial}
+          setting="tray.baseMaterial"
+          choices={bases}
+          onSet={(baseMaterial) => document.run(changeTray({ ...tray, baseMaterial }))}
+        />
+        {length("baseMm", tray.baseMm, 1)}
+        {length("wallHeightMm", tray.wallHeightMm)}
+      </div>
+      <TextField label={words.notes} lines={2} value={notes} onSet={(next) => tried(document, setNotes(next))} />
     </section>
   );
 }
 
-const SHOWN = [
-  ["picture", "Potential in colours"],
-  ["equipotentials", "Equipotentials"],
-  ["fieldLines", "Field lines"],
-  ["points", "Probe points"],
-  ["tags", "Tags of parts"],
-] as const;
-
-/** What the tray shows. */
-export function ShownCard({ document, window }: { readonly document: Document; readonly window: WindowStore }) {
-  const shown = useStore(window, (state) => state.shown);
-  const snapping = useStore(document, (state) => state.snapping);
+/** The water, as far as laying out needs it. */
+export function WaterCard({ document }: { readonly document: Document }) {
+  const water = useStore(document, (state) => state.setup.water);
+  const words = texts.layOut.water;
+  const field = (
+    key: "depthMm" | "tiltXDeg" | "tiltYDeg" | "conductivityUsPerCm" | "temperatureC",
+    label: string,
+    unit: string,
+    step: number,
+  ) => (
+    <NumberField
+      label={label}
+      unit={unit}
+      value={water[key]}
+      step={step}
+      setting={`water.${key}`}
+      onSet={(value, stepping) => tried(document, changeWater({ [key]: value }), stepping)}
+    />
+  );
   return (
-    <section className="card" aria-label="What the tray shows">
-      <h2>On the tray</h2>
-      {SHOWN.map(([key, label]) => (
-        <Switch key={key} label={label} on={shown[key]} onSet={(on) => window.set({ shown: { ...shown, [key]: on } })} />
-      ))}
-      <Switch label="Snap to whole millimetres" on={snapping} onSet={document.setSnapping} />
+    <section className="card" aria-label={words.title}>
+      <h2>{words.title}</h2>
+      {field("depthMm", words.depth, "mm", 0.5)}
+      {field("conductivityUsPerCm", words.conductivity, "µS/cm", 10)}
+      {field("temperatureC", words.temperature, "°C", 0.5)}
+      <div className="grid-2">
+        {field("tiltXDeg", words.tiltX, "°", 0.1)}
+        {field("tiltYDeg", words.tiltY, "°", 0.1)}
+      </div>
+    </section>
+  );
+}
+
+/** What an AC supply is taken to give before it is told. */
+const MAINS_HZ = 50;
+
+/** The supply, as far as laying out needs it. */
+export function SupplyCard({ document }: { readonly document: Document }) {
+  const supply = useStore(document, (state) => state.setup.supply);
+  const words = texts.layOut.supply;
+  const set = (change: Partial<Supply>, stepping = false) => tried(document, changeSupply(change), stepping);
+  return (
+    <section className="card" aria-label={words.title}>
+      <h2>{words.title}</h2>
+      <div className="grid-3">
+        <NumberField
+          label={supply.waveform === "ac" ? words.voltsAc : words.voltsDc}
+          unit="V"
+          value={supply.volts}
+          step={0.5}
+          setting="supply.volts"
+          onSet={(volts, stepping) => set({ volts }, stepping)}
+        />
+        <ChoiceField
+          label={words.waveform}
+          value={supply.waveform}
+          setting="supply.waveform"
+          choices={[
+            ["ac", words.ac],
+            ["dc", words.dc],
+          ]}
+          onSet={(waveform) => set({ waveform, ...(waveform === "ac" && supply.frequencyHz <= 0 ? { frequencyHz: MAINS_HZ } : {}) })}
+        />
+        {supply.waveform === "ac" && (
+          <NumberField
+            label={words.frequency}
+            unit="Hz"
+            value={supply.frequencyHz}
+            step={10}
+            setting="supply.frequencyHz"
+            onSet={(frequencyHz, stepping) => set({ frequencyHz }, stepping)}
+          />
+        )}
+      </div>
+      <p className="hint">{words.more}</p>
     </section>
   );
 }

@@ -20,12 +20,7 @@ export interface PointerReadout {
 /** The places of work round the tray. */
 export type Desk = "lay-out" | "bench" | "probe-plan" | "sheets";
 
-export const DESKS: readonly { readonly desk: Desk; readonly name: string }[] = [
-  { desk: "lay-out", name: "Lay out" },
-  { desk: "bench", name: "Bench" },
-  { desk: "probe-plan", name: "Probe plan" },
-  { desk: "sheets", name: "Sheets" },
-];
+export const DESKS: readonly Desk[] = ["lay-out", "bench", "probe-plan", "sheets"];
 
 /** Something to tell the user that stays until it is dismissed or answered. */
 export interface Message {
@@ -40,6 +35,7 @@ export interface WindowState {
   readonly desk: Desk;
   readonly startPage: boolean;
   readonly keysShown: boolean;
+  readonly settingsShown: boolean;
   readonly findingsShown: boolean;
   readonly shown: Shown;
   readonly readout: PointerReadout | null;
@@ -62,6 +58,7 @@ export function createWindowStore(): WindowStore {
     desk: "lay-out",
     startPage: false,
     keysShown: false,
+    settingsShown: false,
     findingsShown: false,
     shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
     readout: null,
@@ -77,7 +74,12 @@ export function createWindowStore(): WindowStore {
     getInitialState: store.getInitialState,
     set: setState,
     goTo: (desk) =>
-      setState(({ shown }) => ({ desk, startPage: false, shown: { ...shown, points: desk === "probe-plan" || shown.points } })),
+      setState(({ desk: from, shown }) => ({
+        desk,
+        startPage: false,
+        // The points come and go with their desk, unless the user has them shown elsewhere too.
+        shown: { ...shown, points: desk === "probe-plan" || (shown.points && from !== "probe-plan") },
+      })),
     tell: (message) => {
       const id = next++;
       setState({ messages: [...getState().messages.slice(-3), { ...message, id }] });

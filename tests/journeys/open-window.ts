@@ -3,9 +3,10 @@ import { createServer, type Server } from "node:http";
 import { extname, join, normalize } from "node:path";
 import { fileURLToPath } from "node:url";
 import { test as base, expect, type Page } from "@playwright/test";
+import { POLICY } from "../../build-resources/window-server.mjs";
 
-/** The built window, served as the program serves it: same policy, nothing from elsewhere. */
-const folder = fileURLToPath(new URL("../../dist/renderer", import.meta.url));
+/** The built window, served as the program serves it: same policy, nothing from elsewhere. WINDOW_FOLDER names another build of it. */
+const folder = process.env.WINDOW_FOLDER ?? fileURLToPath(new URL("../../dist/renderer", import.meta.url));
 
 const TYPES: Readonly<Record<string, string>> = {
   ".html": "text/html; charset=utf-8",
@@ -14,9 +15,6 @@ const TYPES: Readonly<Record<string, string>> = {
   ".ttf": "font/ttf",
   ".svg": "image/svg+xml",
 };
-const POLICY =
-  "default-src 'none'; script-src 'self' 'wasm-unsafe-eval'; worker-src 'self'; style-src 'self' 'unsafe-inline'; img-src 'self' data: blob:; font-src 'self'; connect-src 'self'";
-
 function serve(): Promise<Server> {
   const server = createServer((request, response) => {
     const path = decodeURIComponent(new URL(request.url ?? "/", "http://window").pathname);
@@ -47,6 +45,7 @@ export const test = base.extend<{ page: Page }, { address: string }>({
   page: async ({ page, address }, use) => {
     const faults: string[] = [];
     page.on("pageerror", (error) => faults.push(error.message));
+    page.on("console", (line) => line.type() === "error" && faults.push(line.text()));
     await page.goto(address);
     await expect(ledger(page, "Resistance")).toContainText("Ω");
     await use(page);

@@ -32,7 +32,7 @@ const KIND_NAMES: Readonly<Record<ShapeKind, string>> = {
   ring: "Ring",
   arc: "Arc",
   frame: "Frame",
-  polygon: "Outline",
+  polygon: "Polygon",
 };
 
 /** An electrode is what a tray lacks first: one at each lead; what comes after floats. */
