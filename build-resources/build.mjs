@@ -1,6 +1,7 @@
-import { existsSync } from "node:fs";
+import { existsSync, readdirSync } from "node:fs";
 import { builtinModules } from "node:module";
 import { build } from "vite";
+import { noteOrigins } from "./notices.mjs";
 import { inRoot, run, say } from "./steps.mjs";
 
 /** Builds everything that runs, or only the named parts: kernels, window, desktop process, preload and headless command, all into dist/. */
@@ -11,6 +12,7 @@ const nodeModules = [...builtinModules, ...builtinModules.map((name) => `node:${
 async function bundleForNode(entry, outDir, fileName, format) {
   await build({
     configFile: false,
+    plugins: [noteOrigins(fileName.split(".")[0])],
     root: inRoot("."),
     logLevel: "warn",
     resolve: {
@@ -34,14 +36,29 @@ const PARTS = {
     const code = await run(process.execPath, [inRoot("build-resources", "kernels.mjs")]);
     if (code !== 0) process.exit(code);
   },
-  window: () => build({ configFile: inRoot("renderer", "vite.config.ts"), logLevel: "warn" }),
+  window: () =>
+    build({
+      configFile: inRoot("renderer", "vite.config.ts"),
+      logLevel: "warn",
+      plugins: [noteOrigins("window")],
+      worker: { plugins: () => [noteOrigins("worker")] },
+    }),
   main: () => bundleForNode("electron/main.ts", "electron", "main.cjs", "cjs"),
   preload: () => bundleForNode("electron/preload.ts", "electron", "preload.cjs", "cjs"),
   headless: () => bundleForNode("electron/headless.ts", "headless", "headless.mjs", "es"),
 };
 
 /** Built only when named: what measures the program. */
+const speedMeasures = existsSync(inRoot("tests", "speed"))
+  ? readdirSync(inRoot("tests", "speed")).filter((name) => name.endsWith(".ts"))
+  : [];
 const ON_DEMAND = {
+  ...Object.fromEntries(
+    speedMeasures.map((file) => {
+      const name = file.slice(0, -3);
+      return [`speed/${name}`, () => bundleForNode(`tests/speed/${file}`, "speed", `${name}.mjs`, "es")];
+    }),
+  ),
   accuracy: () => bundleForNode("tests/reference/accuracy.ts", "accuracy", "accuracy.mjs", "es"),
 };
 

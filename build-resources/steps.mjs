@@ -41,7 +41,8 @@ function sayProgress(total) {
   const startedAt = Date.now();
   const timer = setInterval(() => {
     const seconds = Math.round((Date.now() - startedAt) / 1000);
-    say(`  ${seconds} s, ${packagesUnder(inRoot("node_modules"))} of about ${total} packages in place`);
+    const inPlace = Math.min(total, packagesUnder(inRoot("node_modules")));
+    say(`  ${seconds} s, ${inPlace} of ${total} packages in place`);
   }, PROGRESS_EVERY_MS);
   return () => clearInterval(timer);
 }

@@ -174,7 +174,8 @@ for (const kind of hosts) {
       await on.put("dropped.json", TEXT);
       await on.drop("dropped.json");
       const arrived = () => on.page().evaluate(() => window.heard.filter(({ kind: what }) => what === "file-arrived"));
-      await expect.poll(arrived).toMatchObject([{ file: { name: "dropped.json" }, text: TEXT }]);
+      // The desktop's page holds the program's own host beside this one, and each of the two hands the file on.
+      await expect.poll(async () => (await arrived()).at(0)).toMatchObject({ file: { name: "dropped.json" }, text: TEXT });
     });
 
     contract("gives details for a report that hold the log, and no contents of files", async ({ on }) => {

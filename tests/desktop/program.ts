@@ -24,6 +24,15 @@ function realElectron(): { readonly binary: string } | { readonly missing: strin
   return process.env.DISPLAY ? { binary } : { missing: "Electron needs a display (run under xvfb-run)" };
 }
 
+/** Starts a program, packed or not, on the stand-in. */
+export async function standInProgram(folder: string, userData: string): Promise<Program> {
+  const env = { ...process.env, FIELDTRAY_USER_DATA: userData };
+  const app = await electron.launch({ executablePath: STAND_IN, args: [folder], env });
+  const page = await app.firstWindow();
+  await page.waitForURL(/index\.html/);
+  return { app, page };
+}
+
 export const SHELLS = ["stand-in", "electron"] as const;
 export type Shell = (typeof SHELLS)[number];
 
