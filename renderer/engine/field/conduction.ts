@@ -1,6 +1,6 @@
 import type { Setup } from "../../../shared-types/setup";
 import { radians } from "../../../shared-types/units";
-import type { Loop } from "../geometry/outline";
+import { type Loop, type Piece, pointAlong } from "../geometry/outline";
 import { covers, distanceToOutline } from "../geometry/signed-distance";
 import { depthFromWallMm, traySizeMm } from "../geometry/tray-outline";
 import { crossingsBetween, type ScanAxis } from "./crossings";
@@ -12,8 +12,8 @@ import { markDisc, markNear } from "./ownership";
 const NEAR_INSULATOR = 1;
 const NEAR_STEP = 2;
 const NEAR_CORNER = 4;
-/** Lines between two neighbouring nodes on which a thin plate is looked for. */
-const PLATE_SCANS = 8;
+/** Chords for which a bow is taken when its shadow on a link is worked out. */
+const BOW_CHORDS = 64;
 /** Cells round an insulator's corner in which its own flow is fitted. */
 const MOST_REACH_CELLS = 16;
 /** Within so many cells of the waterline the depth changes too fast for local potentials to hold. */
@@ -96,6 +96,51 @@ function openIntervals(
   return open;
 }
 
+/** Where a strip ends: the middles of a bar's or an arc's end faces. */
+function tipsOf({ shape, xMm, yMm, turnDeg }: Solid["placed"]): readonly (readonly [number, number])[] {
+  const at = (radius: number, angleDeg: number): readonly [number, number] => [
+    xMm + radius * Math.cos(radians(turnDeg + angleDeg)),
+    yMm + radius * Math.sin(radians(turnDeg + angleDeg)),
+  ];
+  if (shape.kind === "bar") {
+    const across = shape.widthMm > shape.lengthMm ? 90 : 0;
+    const half = Math.max(shape.lengthMm, shape.widthMm) / 2;
+    return [at(half, across), at(half, across + 180)];
+  }
+  if (shape.kind !== "arc") return [];
+  const middle = (shape.outerMm + shape.innerMm) / 4;
+  return [at(middle, shape.sweepDeg / 2), at(middle, -shape.sweepDeg / 2)];
+}
+
+/** What a piece of an outline spans across a link's axis between two positions along it, mm. */
+function shadowOf(piece: Piece, axis: ScanAxis, from: number, to: number): [number, number][] {
+  const chords = piece.kind === "edge" ? 1 : BOW_CHORDS;
+  const spans: [number, number][] = [];
+  for (let k = 0; k < chords; k++) {
+    const [a, b] = [pointAlong(piece, k / chords), pointAlong(piece, (k + 1) / chords)];
+    const [along0, across0, along1, across1] = axis === "row" ? [a[0], a[1], b[0], b[1]] : [a[1], a[0], b[1], b[0]];
+    if (Math.max(along0, along1) < from || Math.min(along0, along1) > to) continue;
+    const at = (position: number): number => {
+      const share = along0 === along1 ? 0 : Math.min(1, Math.max(0, (position - along0) / (along1 - along0)));
+      return across0 + share * (across1 - across0);
+    };
+    const ends = along0 === along1 ? [across0, across1] : [at(from), at(to)];
+    spans.push([Math.min(...ends), Math.max(...ends)]);
+  }
+  return spans;
+}
+
+/** The intervals across a link's axis that a plate covers at one position along it, within the link's band. */
+function coveredAlong(plate: Solid, face: Face, position: number): [number, number][] {
+  const scan: ScanAxis = face.axis === "row" ? "column" : "row";
+  const cuts = [face.from, ...crossingsBetween(plate.loops, scan, position, face.from, face.to), face.to];
+  return cuts.slice(1).flatMap((to, index): [number, number][] => {
+    const across = (cuts[index] + to) / 2;
+    const [x, y] = face.axis === "row" ? [position, across] : [across, position];
+    return covers(plate.placed, x, y) ? [[cuts[index], to]] : [];
+  });
+}
+
 const GAUSS_2 = 0.5 / Math.sqrt(3);
 
 /**
@@ -166,8 +211,9 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
   }
 
   /**
-   * The part of a link's band that no thin plate stands in anywhere between its two nodes: a plate may lie beside the dual
-   * face, and a slit ends where it ends. Plates thinner than two cells would leak if only the face itself were looked at.
+   * What thin plates leave of a link. A plate thinner than two cells may lie beside the dual face, so a link that a plate
+   * crosses is shut whole: any share left open would join the two sides through a node between them. Only where a plate
+   * ends within the link's band is the band narrowed to what the plate's shadow leaves, so that slits have their true width.
    */
   function besideThinPlates(face: Face, open: readonly [number, number][]): [number, number][] {
     const end = face.start + face.pitch;
@@ -176,26 +222,31 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
       return low <= end && high >= face.start && near0 <= face.to && near1 >= face.from;
     });
     if (near.length === 0) return [...open];
-    const scan: ScanAxis = face.axis === "row" ? "column" : "row";
-    let free: [number, number][] = [...open];
-    for (let k = 0; k <= PLATE_SCANS; k++) {
-      const position = face.start + (k / PLATE_SCANS) * face.pitch;
-      free = free.flatMap(([from, to]) => {
-        const cuts = [from, to];
-        for (const plate of near) cuts.push(...crossingsBetween(plate.loops, scan, position, from, to));
-        cuts.sort((a, b) => a - b);
-        const kept: [number, number][] = [];
-        for (let index = 0; index + 1 < cuts.length; index++) {
-          const across = (cuts[index] + cuts[index + 1]) / 2;
-          const [x, y] = face.axis === "row" ? [position, across] : [across, position];
-          if (cuts[index + 1] > cuts[index] && !near.some((plate) => covers(plate.placed, x, y))) kept.push([cuts[index], cuts[index + 1]]);
-        }
-        return kept;
-      });
+    const hasTip = near.some(({ placed }) =>
+      tipsOf(placed).some(([x, y]) => {
+        const [along, across] = face.axis === "row" ? [x, y] : [y, x];
+        return along >= face.start && along <= end && across >= face.from && across <= face.to;
+      }),
+    );
+    if (!hasTip) {
+      return near.some((plate) => crossingsBetween(plate.loops, face.axis, face.line, face.start, end).length > 0) ? [] : [...open];
     }
-    // A plate thinner than the scans' distance may slip between them; the link's own line cannot miss it.
-    const hit = near.some((plate) => crossingsBetween(plate.loops, face.axis, face.line, face.start, end).length > 0);
-    return hit ? free.filter(([from, to]) => !(from <= face.line && face.line <= to)) : free;
+    // The shadow of a plate on the band: what its outline spans between the nodes, and what it covers at the two ends.
+    const blocked = near.flatMap((plate) => [
+      ...plate.loops.flat().flatMap((piece) => shadowOf(piece, face.axis, face.start, end)),
+      ...[face.start, end].flatMap((position) => coveredAlong(plate, face, position)),
+    ]);
+    return blocked.reduce<[number, number][]>(
+      (free, [low, high]) =>
+        free.flatMap(([from, to]): [number, number][] => {
+          const parts: [number, number][] = [
+            [from, Math.min(to, low)],
+            [Math.max(from, high), to],
+          ];
+          return parts.filter(([a, b]) => b > a);
+        }),
+      [...open],
+    );
   }
 
   function along(axis: ScanAxis, column: number, row: number): number {

@@ -1,6 +1,8 @@
 import { type ConductorReading, type FieldPicture, type FieldReading, OWNER_NOTHING, OWNER_WATER } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import { degrees, MM_PER_M } from "../../../shared-types/units";
+import { gapMm } from "../geometry/clearance";
+import { boxGapMm, outlined } from "../geometry/overlap";
 import { covers, distanceToOutline } from "../geometry/signed-distance";
 import { depthFromWallMm } from "../geometry/tray-outline";
 import { waterDepthMm } from "../geometry/water-depth";
@@ -70,6 +72,29 @@ function cutOffOf(layout: FieldLayout, waters: readonly number[], taps: readonly
     const driven = taps.some((other, index) => other !== tap && waters[index] === waters[electrode]);
     return driven ? [] : [setup.parts[layout.conductors[electrode].index].id];
   });
+}
+
+/** A slit between thin plates is seen to half a cell at each side; below this many cells that is told as a bound of its own. */
+const SLIT_CELLS = 8;
+
+/** Share of current and span that an ill-resolved slit between insulating plates may cost: half a cell over its width. */
+function slitShare({ network }: SolvedGrid): number {
+  const { layout, grid } = network;
+  const pitch = Math.max(grid.pitchXMm, grid.pitchYMm);
+  const shapes = layout.insulators.map(({ placed }) => ({
+    shape: outlined(placed),
+    thin: wallThicknessMm(placed.shape) < THIN_PLATE_CELLS * pitch,
+  }));
+  let share = 0;
+  shapes.forEach((first, index) => {
+    for (const second of shapes.slice(index + 1)) {
+      if (!first.thin && !second.thin) continue;
+      if (boxGapMm(first.shape.box, second.shape.box) > SLIT_CELLS * pitch) continue;
+      const gap = gapMm(first.shape, second.shape);
+      if (gap > 0 && gap < SLIT_CELLS * pitch) share = Math.max(share, (0.5 * pitch) / gap);
+    }
+  });
+  return Math.min(0.5, share);
 }
 
 /** Root mean square of the grids' difference over the nodes that both have, as a share of the span. */
@@ -248,7 +273,7 @@ export function superposerOf(solution: FieldSolution): Superposer {
       picture: pictureOf(fine, near),
       surfaceFields: largestSurfaceFields(fine, near),
       factor: convergenceFactor(fine),
-      typicalShare: convergenceFactor(fine) * typicalDifference(fine, near, coarse, far),
+      typicalShare: convergenceFactor(fine) * typicalDifference(fine, near, coarse, far) + slitShare(fine) / TYPICAL_SHARE,
     };
     remembered = { key, perVolt };
     return perVolt;
