@@ -39,7 +39,10 @@ const files = knownFiles();
 const settings = ownFile(inUserData("settings.json"), settingsSchema, settingsSchema.parse({}), note);
 const drafts = keepDrafts(inUserData("drafts"), files, Date.now, note);
 const recentList = ownFile(inUserData("recent.json"), recentSchema, [], note);
-const recent = recentSetups(recentList, files, Date.now, refreshMenu);
+const recent = recentSetups(recentList, files, Date.now, (list, opened) => {
+  refreshMenu(list);
+  if (opened !== null) app.addRecentDocument(opened);
+});
 const place = ownFile(inUserData("window.json"), windowPlaceSchema.nullable(), null, note);
 const windows = openWindows({
   preload: preloadPath(),

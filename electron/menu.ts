@@ -14,8 +14,14 @@ export interface MenuActions {
 
 const SEPARATOR: MenuItemConstructorOptions = { type: "separator" };
 
-function itemOf({ command, label, keys, heardBy }: CommandEntry, act: MenuActions): MenuItemConstructorOptions {
-  const accelerator = keys === null ? {} : { accelerator: keys.replace("Mod", "CmdOrCtrl"), registerAccelerator: heardBy === "host" };
+/** A Mac takes each key of the menu bar from the page, so that one without ⌘ (Delete) would no longer reach a text field. */
+const mayHold = (keys: string | null, onMac: boolean): keys is string =>
+  keys !== null && (!onMac || keys.includes("Mod") || /^F\d/.test(keys));
+
+function itemOf({ command, label, keys, heardBy }: CommandEntry, act: MenuActions, onMac: boolean): MenuItemConstructorOptions {
+  const accelerator = !mayHold(keys, onMac)
+    ? {}
+    : { accelerator: keys.replace("Mod", "CmdOrCtrl"), registerAccelerator: heardBy === "host" };
   return { id: command, label, ...accelerator, click: () => act.command(command) };
 }
 
@@ -31,7 +37,7 @@ function recentMenu(recent: readonly RecentFile[], act: MenuActions): MenuItemCo
 export function menuTemplate(recent: readonly RecentFile[], act: MenuActions, onMac: boolean): MenuItemConstructorOptions[] {
   const menus = COMMAND_MENUS.map(({ label, groups }) => ({
     label,
-    submenu: groups.flatMap((group, index) => [...(index === 0 ? [] : [SEPARATOR]), ...group.map((entry) => itemOf(entry, act))]),
+    submenu: groups.flatMap((group, index) => [...(index === 0 ? [] : [SEPARATOR]), ...group.map((entry) => itemOf(entry, act, onMac))]),
   }));
   const within = (label: string): MenuItemConstructorOptions[] => menus.find((menu) => menu.label === label)?.submenu ?? [];
   const file = within("File");

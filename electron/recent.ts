@@ -16,24 +16,27 @@ export interface Recent {
   readonly forget: (path: string) => Promise<void>;
 }
 
-/** @param onChange is told the new list, for the menu. */
+/** @param onChange is told the new list and what was opened, for the menu and the system. */
 export function recent(
   store: OwnFile<z.infer<typeof recentSchema>>,
   files: KnownFiles,
   now: () => number,
-  onChange: (list: readonly RecentFile[]) => void,
+  onChange: (list: readonly RecentFile[], opened: string | null) => void,
 ): Recent {
   const shown = (list: z.infer<typeof recentSchema>): readonly RecentFile[] =>
     list.map(({ path, openedAtMs }) => ({ file: files.handleOf(path), openedAtMs }));
 
-  async function replace(change: (list: z.infer<typeof recentSchema>) => z.infer<typeof recentSchema>): Promise<void> {
+  async function replace(
+    opened: string | null,
+    change: (list: z.infer<typeof recentSchema>) => z.infer<typeof recentSchema>,
+  ): Promise<void> {
     const list = change(await store.read()).slice(0, RECENT_KEPT);
-    onChange(shown(list));
+    onChange(shown(list), opened);
     await store.write(list);
   }
   return {
     list: async () => shown(await store.read()),
-    note: (path) => replace((list) => [{ path, openedAtMs: now() }, ...list.filter((entry) => entry.path !== path)]),
-    forget: (path) => replace((list) => list.filter((entry) => entry.path !== path)),
+    note: (path) => replace(path, (list) => [{ path, openedAtMs: now() }, ...list.filter((entry) => entry.path !== path)]),
+    forget: (path) => replace(null, (list) => list.filter((entry) => entry.path !== path)),
   };
 }

@@ -161,6 +161,38 @@ for (const shell of SHELLS) {
       await expect.poll(() => titleOf(second)).toContain("•");
     });
 
+    test("a page that dies is told of, started again, and its work is offered there", async ({ bench }) => {
+      const program = await bench.start();
+      await retitle(program, "Died with its page");
+      await expect.poll(() => draftsIn(bench.userData).length).toBe(1);
+      await answerQuestion(program, "Start it again");
+      await program.app.evaluate(({ BrowserWindow }) => BrowserWindow.getAllWindows()[0].webContents.forcefullyCrashRenderer());
+      await expect.poll(() => lastQuestion(program)).toBe("The window has stopped working.");
+      const offer = async (): Promise<number> => {
+        const pages = program.app.windows().filter((page) => !page.isClosed());
+        const counts = await Promise.all(
+          pages.map((page) =>
+            page
+              .locator(".message", { hasText: "Died with its page" })
+              .count()
+              .catch(() => 0),
+          ),
+        );
+        return counts.reduce((sum, count) => sum + count, 0);
+      };
+      await expect.poll(offer, { timeout: 30_000 }).toBe(1);
+    });
+
+    test("two windows keep two drafts, and each only its own", async ({ bench }) => {
+      const program = await bench.start();
+      const [second] = await Promise.all([program.app.waitForEvent("window"), choose(program, "new-window")]);
+      await expect(second.getByRole("heading", { level: 1 })).toBeVisible({ timeout: 30_000 });
+      await retitle(program, "In the first window");
+      await retitle({ app: program.app, page: second }, "In the second window");
+      await expect.poll(() => draftsIn(bench.userData).length).toBe(2);
+      await expect(second.locator(".message", { hasText: "In the first window" })).toHaveCount(0);
+    });
+
     test("a second start hands its file to the first and ends", async ({ bench }) => {
       const program = await bench.start();
       const path = join(bench.folder, "handed-over.fieldtray.json");
@@ -272,3 +304,17 @@ for (const shell of SHELLS) {
     });
   });
 }
+
+test("sheets go to the system's print dialog at their actual size, and a refusal is told in words", async ({ bench }) => {
+  const program = await bench.start();
+  const { app, page } = program;
+  await expect(page.locator(".ledger-entry", { hasText: "Resistance" }).locator("dd")).toContainText("Ω", { timeout: 30_000 });
+  await choose(program, "print");
+  const job = () => app.evaluate(({ webContents }) => Reflect.get(webContents, "lastPrint") ?? null);
+  await expect.poll(job, { timeout: 30_000 }).toMatchObject({
+    head: "%PDF-",
+    job: { silent: false, scaleFactor: 100, margins: { marginType: "none" } },
+  });
+  await expect(page.locator(".message", { hasText: "no printer in the stand-in" })).toBeVisible();
+  await expect.poll(() => app.evaluate(({ BrowserWindow }) => BrowserWindow.getAllWindows().length)).toBe(1);
+});

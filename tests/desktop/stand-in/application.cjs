@@ -25,6 +25,9 @@ class Application extends EventEmitter {
     if (!(name in this.paths)) throw new Error(`the stand-in knows no folder ${name}`);
     return this.paths[name];
   }
+  addRecentDocument(path) {
+    this.recentDocuments = [path, ...(this.recentDocuments ?? [])];
+  }
   getVersion() {
     return this.version;
   }

@@ -74,7 +74,10 @@ class WebContents extends EventEmitter {
       const { action } = this.opensWindows({ url: popup.url() });
       if (action === "deny") popup.close().catch(() => {});
     });
-    page.on("crash", () => this.emit("render-process-gone", {}, { reason: "crashed", exitCode: 1 }));
+    page.on("crash", () => {
+      this.page = null;
+      this.emit("render-process-gone", {}, { reason: "crashed", exitCode: 1 });
+    });
     page.on("domcontentloaded", () => this.emit("dom-ready"));
     await this.watchNavigation();
     await this.applyPermissions();
@@ -116,8 +119,13 @@ class WebContents extends EventEmitter {
     const [message] = parts;
     this.page.evaluate(([name, text]) => window.__standInReceive(name, text), [channel, clone.pack(message)]).catch(() => {});
   }
-  print(_job, done) {
-    setTimeout(() => done(false, "no printer in the stand-in"));
+  /** What was printed last can be looked at by a test, which may also answer in a printer's place. */
+  print(job, done) {
+    WebContents.lastPrint = { job, bytes: this.pdf?.length ?? 0, head: Buffer.from(this.pdf?.subarray(0, 5) ?? []).toString("latin1") };
+    setTimeout(() => done(...(WebContents.printerAnswers ?? [false, "no printer in the stand-in"])));
+  }
+  forcefullyCrashRenderer() {
+    this.cdp.send("Page.crash").catch(() => {});
   }
   edit(command) {
     this.page.evaluate((name) => document.execCommand(name), command).catch(() => {});
