@@ -54,12 +54,12 @@ export async function importDocument(page: Window, kind: "csv" | "json"): Promis
 /**
  * Shows a PDF in the browser's own viewer, which prints it at actual size (the file asks for that); a frame inside this page would be
  * fitted to the paper. Where no window may be opened, the PDF is offered for saving.
- * @param serverAddress of the local window server, which can show the file under its own name; null without one.
+ * @param serverAddress of the local window server's store, beside which it can show the file under its own name; null without one.
  */
 export async function printDocument(page: Window, { title, bytes }: PrintRequest, serverAddress: string | null): Promise<PrintOutcome> {
   const address =
     (serverAddress === null ? null : await shownByServer(page, title, bytes, serverAddress)) ?? URL.createObjectURL(asBlob(bytes, "pdf"));
-  const opened = page.open(address, "_blank");
+  const opened = page.open(address, "_blank", "popup,width=1000,height=800");
   if (address.startsWith("blob:")) page.setTimeout(() => URL.revokeObjectURL(address), 600_000);
   if (opened !== null) return { kind: "shown" };
   const saved = await exportDocument(page, { suggestedName: `${title}.pdf`, kind: "pdf", bytes });
@@ -68,7 +68,7 @@ export async function printDocument(page: Window, { title, bytes }: PrintRequest
 
 async function shownByServer(page: Window, title: string, bytes: Uint8Array, serverAddress: string): Promise<string | null> {
   const name = `${title.replace(/[^\p{L}\p{N} ._-]+/gu, " ").trim() || "sheets"}.pdf`;
-  const address = new URL(`print/${encodeURIComponent(name)}`, serverAddress).href;
+  const address = new URL(`../print/${encodeURIComponent(name)}`, serverAddress).href;
   const kept = await page.fetch(address, { method: "PUT", body: asBlob(bytes, "pdf") }).catch(() => null);
   return kept?.ok === true ? address : null;
 }

@@ -109,6 +109,19 @@ test("the window shows an example, served from this machine alone; closing it en
   expect(existsSync(join(desk.profile, "fieldtray-window.json"))).toBe(false);
 });
 
+test("printing shows the sheets in the browser's own viewer, under a name that tells what they are", async ({ desk }) => {
+  desk.start();
+  const browser = await desk.browser();
+  const page = await firstPage(browser);
+  await expect(page.locator(".ledger-entry", { hasText: "Resistance" }).locator("dd")).toContainText("Ω", { timeout: 30_000 });
+  await page.keyboard.press("Control+p");
+  await expect.poll(() => pagesOf(browser).map((one) => one.url()), { timeout: 30_000 }).toHaveLength(2);
+  const shown = pagesOf(browser).find((one) => one !== page);
+  await expect.poll(() => shown?.url()).toMatch(/\/print\/[^/]+\.pdf$/);
+  const head = await fetch(shown?.url() ?? "").then(async (answer) => (await answer.text()).slice(0, 5));
+  expect(head).toBe("%PDF-");
+});
+
 test("a second start opens a second window with its file and ends; the first goes on", async ({ desk }) => {
   const first = desk.start();
   const browser = await desk.browser();
