@@ -54,7 +54,7 @@ function along(chain: readonly Point[], share: number): { place: Point; directio
   return null;
 }
 
-const plainVolts = (volts: number): string => `${Number(volts.toPrecision(4))} V`.replace("-", "−");
+const plainVolts = (volts: number): string => `${Number(volts.toPrecision(3))} V`.replace("-", "−");
 
 /** Volts in a gap of their own line, on the longest path of every level first. */
 function voltLabels(plan: Plan, scale: number, places: LabelPlaces, fonts: SheetFonts): TextItem[] {

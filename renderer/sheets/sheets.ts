@@ -61,7 +61,7 @@ const tiled = (title: string, { setup, plan, fonts, paper, frame, options }: She
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
   const reader = mirrored ? "mirrored: lay it face down, ▼ this side towards the reader" : "▼ this side towards the reader";
   const missing = drawing.leftOut === 0 ? "" : ` · ${drawing.leftOut} numbers or names found no room: see the probe table`;
-  const note = `${reader} · thick outline: inside of the wall (lower left corner 0, 0)${wallMm > 0 ? "; thin: its outside" : ""}${missing}`;
+  const note = `${reader} · thick outline: inside of the wall (0, 0 at its lower ${mirrored ? "right" : "left"} corner)${wallMm > 0 ? "; thin: its outside" : ""}${missing}`;
   const tiles = tilesOf(drawing, tiling, { lengthMm, widthMm, mirrored, note }, fonts);
   return tiles.map(({ label, widthMm, heightMm, items }) => ({
     title: `${title} 1:1${mirrored ? ", mirrored" : ""}${tiles.length > 1 ? `, tile ${label}` : ""}`,

@@ -91,14 +91,15 @@ function borderTowards([x, y]: Point, [middleX, middleY]: Point, width: number, 
   return [middleX + share * dx, middleY + share * dy];
 }
 
-/** The place of an outline that is nearest to a label, to half a millimetre or so. */
-function nearestOn(placed: PlacedShape, [x, y]: Point, width: number, height: number): Point {
+/** The place of an outline that is nearest to a label, and the gap between them, mm. */
+function nearestOn(placed: PlacedShape, [x, y]: Point, width: number, height: number): { place: Point; gapMm: number } {
   const places = outlineOf(placed)
     .flat()
     .flatMap((piece) => Array.from({ length: 24 }, (_, k) => pointAlong(piece, k / 24)));
   const away = ([px, py]: Point): number =>
     Math.hypot(Math.max(0, Math.abs(px - x) - width / 2), Math.max(0, Math.abs(py - y) - height / 2));
-  return places.reduce((best, place) => (away(place) < away(best) ? place : best));
+  const place = places.reduce((best, one) => (away(one) < away(best) ? one : best));
+  return { place, gapMm: away(place) };
 }
 
 /** Tags of parts and slabs, each in its fullest wording that finds room. */
@@ -130,9 +131,8 @@ function tagItems(setup: Setup, places: LabelPlaces, fonts: SheetFonts): { items
       continue;
     }
     const { words, middle, width } = found;
-    const near = nearestOn(placed, middle, width, height);
-    const end = borderTowards(near, middle, width, height);
-    if (Math.hypot(end[0] - near[0], end[1] - near[1]) > 4) items.push(line([near, end], 0.1, 0.3));
+    const { place, gapMm } = nearestOn(placed, middle, width, height);
+    if (gapMm > 4) items.push(line([place, borderTowards(place, middle, width, height)], 0.1, 0.3));
     items.push(plate(middle, words, sizeMm, [width, height], bold));
   }
   return { items, leftOut };
