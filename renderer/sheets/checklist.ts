@@ -1,98 +1,12 @@
 import type { Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { isSaltSolution } from "../engine/bench/water-conductivity";
-import {
-  CHLORINE_CEILING,
-  dryHandsLimit,
-  FREEBOARD,
-  HYDROGEN_CAUTION,
-  HYDROGEN_FLAMMABLE,
-  type Limit,
-  POWER,
-  SAFETY_SENTENCE,
-  SAFETY_SOURCE,
-  sourceOf,
-  WARMING,
-  wetHandsLimit,
-} from "../engine/findings/limits";
-import { current, shown } from "../engine/findings/wording";
+import { SAFETY_SENTENCE, wetHandsLimit } from "../engine/findings/limits";
+import { current } from "../engine/findings/wording";
+import { keptWords, numberRows } from "./checklist-numbers";
 import type { Block } from "./flow";
 
 /** The low-voltage checklist: what a safety officer reads, sees to and signs. */
-
-type NumberRow = readonly [quantity: string, here: string, limit: string, source: string];
-
-const limitWords = ({ value, unit }: Limit): string => `${value} ${unit}`;
-
-/** The numbers that matter, each beside its limit and the limit's source. */
-function numberRows(setup: Setup, plan: Plan): NumberRow[] {
-  const { supply, session, water } = setup;
-  const { circuit, heat, gas, geometry } = plan.bench;
-  const kind = supply.waveform === "ac" ? "V AC" : "V DC";
-  const wet = wetHandsLimit(supply.waveform, isSaltSolution(water.salt));
-  const dry = dryHandsLimit(supply.waveform);
-  const standing = Math.max(supply.volts, supply.openCircuitVolts ?? 0);
-  const open = supply.openCircuitVolts === undefined ? "; with nothing connected: to be measured below" : " with nothing connected";
-  const energyJ = plan.powerW * session.minutes * 60;
-  const rows: NumberRow[] = [
-    ["Highest voltage anywhere", `${shown(standing, 4)} ${kind}${open}`, `at most ${limitWords(wet)}, wet hands`, sourceOf(wet)],
-    ["", "", `at most ${limitWords(dry)}, dry hands`, sourceOf(dry)],
-    [
-      "Between any two metals that hands can touch",
-      `${shown(plan.spanV[1] - plan.spanV[0], 4)} ${kind}`,
-      `at most ${limitWords(wet)}, wet hands`,
-      sourceOf(wet),
-    ],
-    [
-      "Waveform",
-      supply.waveform === "ac" ? `AC, ${shown(supply.frequencyHz, 4)} Hz` : "DC",
-      "AC preferred",
-      "DC polarises the electrodes (common practice, no source)",
-    ],
-    ["Source of the supply", supply.source, "safety isolating transformer or battery", sourceOf(SAFETY_SOURCE)],
-    [
-      "Current of one tray",
-      current(circuit.currentA.value),
-      `${current(circuit.currentLimitA)} limit set at the supply`,
-      "the supply's own current limit",
-    ],
-    ["Power of one tray", `${shown(plan.powerW)} W`, `at most ${limitWords(POWER)}`, sourceOf(POWER)],
-    ["Energy in the session", `${shown(energyJ)} J in ${shown(session.minutes)} min, each tray`, "for the record", "power × time"],
-    ["Warming, at most", `${shown(heat.riseOverSessionK)} K over the session`, `at most ${limitWords(WARMING)}`, sourceOf(WARMING)],
-    ["Wall above the water", `${shown(geometry.freeboardMm)} mm`, `at least ${limitWords(FREEBOARD)}`, sourceOf(FREEBOARD)],
-  ];
-  if (gas === null) rows.push(["Gas", "AC: little or none", "no odour, no steady bubbles", "see the findings (an estimate)"]);
-  else {
-    rows.push(
-      [
-        "Hydrogen, at most",
-        `${shown(gas.hydrogenMl)} mL a tray: ${shown(gas.hydrogenVolPercent)} vol % in ${shown(gas.hoodLitres)} L of still air`,
-        `at most ${limitWords(HYDROGEN_CAUTION)}; flammable from ${limitWords(HYDROGEN_FLAMMABLE)}`,
-        `${sourceOf(HYDROGEN_CAUTION)}; ${sourceOf(HYDROGEN_FLAMMABLE)}`,
-      ],
-      [
-        "Chlorine, at most",
-        gas.chlorineMl > 0
-          ? `${shown(gas.chlorineMl)} mL a tray: ${shown(gas.chlorineRoomPpm)} ppm in ${shown(session.roomCubicMetres)} m³`
-          : "none: no chloride in the water",
-        `at most ${limitWords(CHLORINE_CEILING)}`,
-        sourceOf(CHLORINE_CEILING),
-      ],
-    );
-  }
-  const salt = plan.bench.water.saltToTarget;
-  const added =
-    salt !== null
-      ? `${shown(salt.perTrayG)} g of sodium chloride a tray, ${shown(salt.allTraysG)} g in all`
-      : water.salt === "none"
-        ? "none"
-        : `${water.salt}, already in the water`;
-  rows.push(
-    ["Chemical added", added, salt === null ? "for the record" : "never with DC", salt === null ? "the setup" : sourceOf(CHLORINE_CEILING)],
-    ["Trays at the same time", `${session.trays}`, "each on its own isolated output", "common practice, no source"],
-  );
-  return rows;
-}
 
 /** What is to be looked at, in our words, with the source of what is a rule. */
 function inspections(setup: Setup, plan: Plan): { title: string; ticks: string[] }[] {
@@ -166,12 +80,13 @@ export function checklist(setup: Setup, plan: Plan): Block[] {
     {
       kind: "table",
       columns: [
-        { head: "", share: 22, bold: true },
-        { head: "this setup", share: 26 },
-        { head: "limit", share: 22 },
-        { head: "source of the limit", share: 30 },
+        { head: "", share: 23, bold: true },
+        { head: "this setup", share: 24 },
+        { head: "limit", share: 23 },
+        { head: "kept", share: 6, bold: true },
+        { head: "source of the limit", share: 28 },
       ],
-      rows: numberRows(setup, plan),
+      rows: numberRows(setup, plan).map((row) => [row.quantity, row.here, row.limit, keptWords(row), row.source]),
     },
     { kind: "heading", words: findings.length === 0 ? "Findings: none" : "Findings" },
     ...(findings.length === 0

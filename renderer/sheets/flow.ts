@@ -46,6 +46,8 @@ const BODY_MM = 3;
 const LINE_MM = 4.1;
 const CELL_MM = 2.75;
 const CELL_LINE_MM = 3.7;
+/** Air between the header's line and what a page begins with. */
+export const AIR_MM = 2;
 
 const linesOf = (lines: readonly string[], sizeMm: number, leadMm: number, bold: boolean, indent = 0): Slice => ({
   heightMm: lines.length * leadMm + 1,
@@ -138,7 +140,8 @@ function slicesOf(block: Block, width: number, fonts: SheetFonts): Slice[] {
             ),
           ];
         });
-      return [{ heightMm: 9.4, draw }];
+      // Lines to sign on stand together: a signature on a page of its own signs nothing.
+      return [{ heightMm: 9.4, keepWithNext: true, draw }];
     }
     case "picture":
       return [{ heightMm: block.heightMm, draw: (left, top) => block.draw(left, top, width) }];
@@ -149,7 +152,8 @@ function slicesOf(block: Block, width: number, fonts: SheetFonts): Slice[] {
 
 /** @returns the items of each page that the blocks fill; a heading never stands alone at the foot. */
 export function flowPages(blocks: readonly Block[], sheet: Sheet, fonts: SheetFonts): { readonly items: readonly Item[] }[] {
-  const [left, bottom, right, top] = contentOf(sheet);
+  const [left, bottom, right, ceiling] = contentOf(sheet);
+  const top = ceiling - AIR_MM;
   // The figures' row under a drawing is free here.
   const floor = bottom - 5;
   const slices = blocks.flatMap((block) => slicesOf(block, right - left, fonts));

@@ -6,6 +6,7 @@ import type { SheetFonts } from "./font-metrics";
 import { furniture } from "./furniture";
 import type { Item, Pack, Page, Point } from "./page";
 import { EDGE_RANGE_MM, PAPERS, type PaperName, PRINTER_EDGE_MM } from "./paper";
+import { printable } from "./printable";
 import { SHEETS, type Sheet, type SheetInput, type SheetName } from "./sheets";
 
 /** What a pack is made of and for which printer. */
@@ -52,8 +53,12 @@ export function scaleFault(scale: Point): string | null {
 
 const titleOf = ({ title }: Setup): string => (title.trim() === "" ? "Untitled tray" : title);
 
-/** @returns the first stop that the rules found, in words, or null. */
-const doNotUse = (plan: Plan): string | null => plan.findings.find(({ severity }) => severity === "stop")?.message ?? null;
+/** @returns the first stop that the rules found, in words, and how many there are; or null. */
+function doNotUse({ findings }: Plan): string | null {
+  const stops = findings.filter(({ severity }) => severity === "stop");
+  if (stops.length === 0) return null;
+  return stops.length === 1 ? stops[0].message : `1 of ${stops.length} reasons: ${stops[0].message}`;
+}
 
 /** @returns the printer's scale along a page's own x and y: the long side of the paper keeps its scale when the page lies across. */
 const scaleOn = ({ widthMm, heightMm }: BarePage, [short, long]: Point): Point => (widthMm > heightMm ? [long, short] : [short, long]);
@@ -84,9 +89,10 @@ function contentsOf(bare: readonly { sheet: SheetName }[], pagesBefore: number):
 /**
  * Composes the printed pack. Pure: the same input gives the same pages. Throws a RangeError for a printer scale that is not believed, and for an edge out of range.
  */
-export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options: PackOptions): Pack {
+export function composePack(givenSetup: Setup, givenPlan: Plan, fonts: SheetFonts, options: PackOptions): Pack {
   const fault = scaleFault(options.printerScale);
   if (fault !== null) throw new RangeError(fault);
+  const [setup, plan] = [printable(givenSetup, fonts), printable(givenPlan, fonts)];
   const reason = doNotUse(plan);
   const edgeMm = options.edgeMm ?? PRINTER_EDGE_MM;
   const [leastMm, mostMm] = EDGE_RANGE_MM;
@@ -113,5 +119,5 @@ export function composePack(setup: Setup, plan: Plan, fonts: SheetFonts, options
     const { head, foot } = furniture(widthMm, heightMm, facts, fonts);
     return { sheet, title, widthMm, heightMm, printerScale: scale, items: [...head, ...items, ...foot] };
   });
-  return { title: titleOf(setup), setupId: plan.setupId, date: options.date, version: options.version, pages };
+  return { title: titleOf(givenSetup), setupId: plan.setupId, date: options.date, version: options.version, pages };
 }

@@ -1,5 +1,5 @@
 import type { Setup } from "../../shared-types/setup";
-import type { Block } from "./flow";
+import { AIR_MM, type Block } from "./flow";
 import { type Item, line, text } from "./page";
 import { contentOf, type Sheet } from "./paper";
 
@@ -54,7 +54,7 @@ function readings(left: number, top: number, width: number, heightMm: number): I
 /** @returns blocks that fill one page. */
 export function recordPage(setup: Setup, sheet: Sheet): Block[] {
   const [, bottom, , top] = contentOf(sheet);
-  const heightMm = top - bottom + 5 - ABOVE_MM - 1;
+  const heightMm = top - bottom + 5 - AIR_MM - ABOVE_MM - 1;
   const frequency = setup.supply.waveform === "ac" ? ["Frequency Hz"] : [];
   return [
     { kind: "fields", labels: ["Names", "Group"] },

@@ -21,14 +21,27 @@ const HEADING_MM = 7.6;
 const NOTE_MM = 2.6;
 const NOTE_LINE_MM = 3.4;
 
+/** Cuts a word that is wider than a line into pieces that fit; others stay whole. */
+function pieces(word: string, fits: (words: string) => boolean): string[] {
+  if (fits(word)) return [word];
+  const cut: string[] = [""];
+  for (const sign of word) {
+    const last = cut.length - 1;
+    if (cut[last] === "" || fits(cut[last] + sign)) cut[last] += sign;
+    else cut.push(sign);
+  }
+  return cut;
+}
+
 /** Breaks words into lines that fit a width. @returns at least one line. */
 export function wrapped(words: string, widthMm: number, sizeMm: number, fonts: SheetFonts, bold = false): string[] {
   const metrics = bold ? fonts.bold : fonts.regular;
+  const fits = (some: string): boolean => metrics.widthOf(some, sizeMm) <= widthMm;
   const lines: string[] = [];
   let current = "";
-  for (const word of words.split(/\s+/)) {
+  for (const word of words.split(/\s+/).flatMap((one) => pieces(one, fits))) {
     const longer = current === "" ? word : `${current} ${word}`;
-    if (current !== "" && metrics.widthOf(longer, sizeMm) > widthMm) {
+    if (current !== "" && !fits(longer)) {
       lines.push(current);
       current = word;
     } else current = longer;

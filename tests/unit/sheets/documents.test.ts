@@ -1,5 +1,7 @@
 import { beforeAll, describe, expect, it } from "vitest";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
+import { type NumberRow, numberRows } from "../../../renderer/sheets/checklist-numbers";
+import type { Page } from "../../../renderer/sheets/page";
 import { packPdfSteps } from "../../../renderer/sheets/pdf";
 import { PRESETS, SHEET_NAMES, SHEETS, type SheetName } from "../../../renderer/sheets/sheets";
 import type { Plan } from "../../../shared-types/plan";
@@ -16,6 +18,8 @@ const pagesOf = (setup: Setup, plan: Plan, sheets: readonly SheetName[], more = 
     .filter((page) => page.trim() !== "");
 /** Words in a row, however the page breaks them. */
 const flat = (words: string): string => words.replace(/\s+/g, " ");
+
+const textsOn = ({ items }: Page): string[] => items.flatMap((item) => (item.kind === "text" ? [item.text] : []));
 
 const { setup } = EXAMPLES[1];
 let plan: Plan;
@@ -43,6 +47,28 @@ describe("the low-voltage checklist", () => {
     expect(words).toContain("6 V AC");
     expect(words).toContain("at most 12 V AC, wet hands");
     expect(words).toContain("IEC 60364-4-41");
+  });
+
+  it("says of each limit whether it is kept, and of wet hands at 48 V that it is not", async () => {
+    const cells = (rows: readonly NumberRow[]): string[] => rows.map(({ quantity, kept }) => `${quantity}: ${kept}`);
+    const kept = cells(numberRows(setup, plan));
+    expect(kept).toContain("Highest voltage anywhere: true");
+    expect(kept.some((words) => words.endsWith("false"))).toBe(false);
+    const strong = soundSetup({ ...setup, supply: { ...setup.supply, volts: 9, openCircuitVolts: 48, source: "unknown" } });
+    const broken = cells(numberRows(strong, await planned(strong)));
+    for (const quantity of ["Highest voltage anywhere", "", "Between any two metals that hands can touch", "Source of the supply"])
+      expect(broken).toContain(`${quantity}: false`);
+    expect(flat(pagesOf(strong, await planned(strong), ["checklist"]).join(" "))).toContain("NO");
+  });
+
+  it("is signed on one page, however many findings there are", () => {
+    const [finding] = plan.findings;
+    for (let count = 0; count <= 24; count++) {
+      const { pages } = packOf(setup, { ...plan, findings: Array.from({ length: count }, () => finding) }, { sheets: ["checklist"] });
+      const signed = pages.map(textsOn).filter((words) => words.includes("Signed"));
+      expect(signed).toHaveLength(1);
+      for (const field of ["Inspected by", "Competent person", "Next review"]) expect(signed[0], `${count} findings`).toContain(field);
+    }
   });
 
   it("cautions about hydrogen and dissolved metal on DC, and has its numbers from the plan", async () => {

@@ -127,6 +127,26 @@ const large = (): Setup =>
     notes: "Four tables pushed together. ".repeat(60),
   });
 
+const endless = (sign: string, count: number): string => sign.repeat(count);
+
+/** Words without a place to break them, and words in scripts that the sheets' font lacks. */
+const oddWords = (): Setup => {
+  const [first, second] = pair(80, 130, 100, 30);
+  return trayWith(
+    [
+      { ...first, name: endless("W", 80), material: endless("m", 60) },
+      { ...second, id: endless("電", 40), name: "電極 🙂" },
+    ],
+    {
+      title: endless("W", 200),
+      notes: `${endless("x", 690)}\n電場`,
+      water: { depthMm: 10, conductivityUsPerCm: 500, salt: endless("s", 60), slabs: [slab] },
+      supply: { waveform: "ac", volts: 6, source: endless("S", 60) },
+    },
+  );
+};
+const slab = { id: endless("b", 40), xMm: 150, yMm: 170, thicknessMm: 4, shape: { kind: "bar", lengthMm: 60, widthMm: 20 } };
+
 const SETUPS: readonly (readonly [string, () => Setup])[] = [
   ...EXAMPLES.map((example) => [`‘${example.title}’`, () => example.setup] as const),
   ...[11, 12, 13, 14, 15, 16].map(
@@ -134,6 +154,7 @@ const SETUPS: readonly (readonly [string, () => Setup])[] = [
   ),
   ["64 parts and 240 points asked for", crowded],
   ["a tray like a matchbox", tiny],
+  ["words that cannot be broken or set", oddWords],
   ["a tray like a table, with stop findings", large],
 ];
 
