@@ -186,20 +186,25 @@ function reachOfElectrodes(
  * Turns a layout into a network on a grid by finite volumes. Conductors cut the links where their outline is (second order
  * whatever the part's place on the grid); insulators and walls narrow the dual faces; depth weighs every link.
  */
-export function discretise(layout: FieldLayout, grid: Grid): Network {
+export function* discretise(layout: FieldLayout, grid: Grid): Generator<void, Network> {
   const { columns, rows } = grid;
   const ownership = ownNodes(layout, grid);
   const wall = layout.setup.tray.shape === "circle" ? trayOutline(layout.setup.tray) : null;
   const isInsulated = (node: number): boolean => ownership.owner[node] >= 0 && ownership.body[node] < 0;
+  yield;
   const cut = cutLinks(layout, grid, ownership);
+  yield;
   const conduction = conductionOf(layout, grid, wall, isInsulated);
   const east = new Float64Array(columns * rows);
   const north = new Float64Array(columns * rows);
   const contactMaps = layout.conductors.map(() => new Map<number, number>());
   const bridges: Bridge[] = [];
   const context = { layout, grid, ownership, conduction };
+  yield;
   linkNodes("row", east, cut.row, context, contactMaps, bridges);
+  yield;
   linkNodes("column", north, cut.column, context, contactMaps, bridges);
+  yield;
   tieSmallConductors(layout, grid, ownership, conduction, contactMaps);
   const reach = reachOfElectrodes({ grid, east, north }, layout.electrodeCount, contactMaps, bridges);
   let lostNodes = 0;

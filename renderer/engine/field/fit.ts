@@ -9,6 +9,8 @@ import { type LocalField, type LocalPotential, localFieldOf } from "./local-fiel
  * exponentially fitted schemes of D. N. de G. Allen & R. V. Southwell, Q. J. Mech. Appl. Math. 8 (1955) 129.
  */
 
+/** Nodes looked at between two chances to pause: well under ten milliseconds. */
+const PAUSE_EVERY = 500;
 /** Fitted conductances beyond these multiples of the plain one mean that the local potential does not apply. */
 const LEAST_OF_PLAIN = 0.05;
 const MOST_OF_PLAIN = 20;
@@ -65,13 +67,13 @@ function plainNodesOf(network: Network): (node: number) => boolean {
     [node, node + 1, node - 1, node + grid.columns, node - grid.columns].every((one) => !conduction.nearInsulator(one));
 }
 
-function fitBody(
+function* fitBody(
   network: Network,
   body: number,
   field: LocalField,
   shared: ReadonlySet<number>,
   isPlain: (node: number) => boolean,
-): Contact {
+): Generator<void, Contact> {
   const { grid, active, layout } = network;
   const { columns, rows, pitchXMm, pitchYMm } = grid;
   const contact = network.contacts[body];
@@ -97,6 +99,7 @@ function fitBody(
     if (fitted !== null && fitted > 0 && likely) ties.set(node, fitted);
   });
   const [left, bottom, right, top] = layout.conductors[body].bounds;
+  let looked = 0;
   const margin = field.widestReachMm;
   for (
     let row = Math.max(0, Math.floor((bottom - margin) / pitchYMm));
@@ -110,6 +113,7 @@ function fitBody(
     ) {
       const node = row * columns + column;
       if (active[node] === 0 || ties.has(node) || shared.has(node) || !isPlain(node)) continue;
+      if (++looked % PAUSE_EVERY === 0) yield;
       const potential = field.featureAt(column * pitchXMm, row * pitchYMm);
       const fitted = fittedAt(node, potential);
       if (fitted === null) continue;
@@ -126,8 +130,8 @@ export interface FittedNetwork extends Network {
   readonly localFields: readonly LocalField[];
 }
 
-/** @returns the network with fitted contacts. Nodes next to two conductors, to insulators or depth steps stay plain. */
-export function fitContacts(network: Network): FittedNetwork {
+/** @returns the network with fitted contacts. Nodes next to two conductors, to insulators or depth steps stay plain. Yields now and then. */
+export function* fitContacts(network: Network): Generator<void, FittedNetwork> {
   const { layout, grid } = network;
   const seen = new Set<number>();
   const shared = new Set<number>();
@@ -145,6 +149,7 @@ export function fitContacts(network: Network): FittedNetwork {
       Math.min(Infinity, ...others.map((other) => distanceToOutline(other.loops, x, y)));
     return localFieldOf(conductor, layout.setup, smallestReachMm, clearanceMm);
   });
-  const contacts = localFields.map((field, body) => fitBody(network, body, field, shared, isPlain));
+  const contacts: Contact[] = [];
+  for (const [body, field] of localFields.entries()) contacts.push(yield* fitBody(network, body, field, shared, isPlain));
   return { ...network, contacts, localFields };
 }

@@ -23,9 +23,9 @@ export interface FieldSolution {
 }
 
 function* solveGrid(layout: FieldLayout, grid: Grid, tolerance: number, onSolved: (share: number) => void): Generator<void, SolvedGrid> {
-  const plain = discretise(layout, grid);
+  const plain = yield* discretise(layout, grid);
   yield;
-  const network = fitContacts(plain);
+  const network = yield* fitContacts(plain);
   yield;
   const units = yield* solveUnitPotentials(network, tolerance, onSolved);
   return { network, units, map: readingMap(network) };
