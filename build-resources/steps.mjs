@@ -94,11 +94,15 @@ export async function ensureDebianPackages(wanted) {
   const names = [...new Set(missing.map(([, name]) => name))];
   const environment = { ...process.env, DEBIAN_FRONTEND: "noninteractive" };
   say(`installing Debian's ${names.join(", ")} …`);
-  const install = () => run("apt-get", ["install", "-y", "-qq", "--no-install-recommends", ...names], { env: environment, quiet: true });
+  const startedAt = Date.now();
+  const timer = setInterval(() => say(`  ${Math.round((Date.now() - startedAt) / 1000)} s, still downloading and unpacking`), 5000);
+  const apt = (...args) => run("apt-get", ["-qq", ...args], { env: environment, stdio: "ignore" });
+  const install = () => apt("install", "-y", "--no-install-recommends", ...names);
   if ((await install()) !== 0) {
-    await run("apt-get", ["update", "-qq"], { env: environment, quiet: true });
+    await apt("update");
     await install();
   }
+  clearInterval(timer);
   return missing.filter(([command]) => !onPath(command)).map(([command]) => command);
 }
 
