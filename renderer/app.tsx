@@ -145,6 +145,7 @@ export function App({ host }: { readonly host: Host }) {
             onSettings={changeSettings}
             onSave={() => void handOver.savePdf()}
             onPrint={() => void handOver.print()}
+            onSaveDrawing={(kind) => void handOver.saveDrawing(kind)}
           />
         }
       />

@@ -9,6 +9,8 @@ import { composePack, scaleFault } from "./sheets/pack";
 import { packPdf } from "./sheets/pdf";
 import { PRESETS, SHEET_NAMES, SHEETS } from "./sheets/sheets";
 import { pageSvg } from "./sheets/svg";
+import { templateDxf } from "./sheets/template-dxf";
+import { templateSvg } from "./sheets/template-svg";
 
 /** Joins the sheets to the window: brings the fonts and today's date, which the pure code does not know. */
 
@@ -35,10 +37,12 @@ export async function createSheetSource(): Promise<SheetSource> {
       date: today().printed,
       version,
       points: choice.withPoints,
-      grid: "fine",
+      grid: choice.grid,
       saveInk: choice.saveInk,
       mirrored: choice.mirrored,
       fieldFullSize: choice.fieldFullSize,
+      edgeMm: choice.edgeMm,
+      wallMm: choice.wallMm,
     });
   return {
     pageNames: SHEET_NAMES.map((name) => [name, SHEETS[name].title]),
@@ -52,6 +56,12 @@ export async function createSheetSource(): Promise<SheetSource> {
         heightMm: page.heightMm,
         svg: pageSvg(page),
       })),
+    drawing: async (kind, setup, plan, choice) => {
+      const { withPoints: points, grid, saveInk, mirrored, wallMm } = choice;
+      const text =
+        kind === "dxf" ? templateDxf(setup, plan, points) : templateSvg(setup, plan, metrics, { points, grid, saveInk, mirrored, wallMm });
+      return new TextEncoder().encode(text);
+    },
     pdf: async (setup, plan, choice) => packPdf(pack(setup, plan, choice), { regular, bold }, today().iso),
   };
 }

@@ -53,7 +53,7 @@ export function commandsOf({ document, window, files, trayView, save, print }: C
     "desk-probe-plan": go("probe-plan"),
     "desk-sheets": go("sheets"),
     "start-page": () => window.set({ startPage: true }),
-    keys: () => window.set({ keysShown: !window.getState().keysShown }),
+    keys: () => window.set({ keysShown: !window.getState().keysShown, settingsShown: false, findingsShown: false }),
   };
   return (command) => acts[command]?.();
 }

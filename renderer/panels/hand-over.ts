@@ -2,7 +2,7 @@ import type { Host } from "../../shared-types/host";
 import type { Plan } from "../../shared-types/plan";
 import { texts } from "../texts/texts";
 import type { Printable } from "./print-plan";
-import type { SheetChoice, SheetSource } from "./sheet-choice";
+import type { DrawingKind, SheetChoice, SheetSource } from "./sheet-choice";
 import type { WindowStore } from "./window-state";
 
 const words = texts.sheets;
@@ -10,6 +10,7 @@ const words = texts.sheets;
 export interface HandOver {
   readonly savePdf: () => Promise<void>;
   readonly print: () => Promise<void>;
+  readonly saveDrawing: (kind: DrawingKind) => Promise<void>;
   /** The probe table for a spreadsheet. */
   readonly saveTable: () => Promise<void>;
 }
@@ -43,7 +44,11 @@ export function handOverOf(
 
   const pdfOf = async ({ setup, plan }: Printable) => (await loadSheets()).pdf(setup, plan, choice());
 
-  async function exported(suggestedName: string, kind: "pdf" | "csv", bytes: Uint8Array<ArrayBuffer>): Promise<string | null> {
+  async function exported(
+    suggestedName: string,
+    kind: "pdf" | "csv" | DrawingKind,
+    bytes: Uint8Array<ArrayBuffer>,
+  ): Promise<string | null> {
     const outcome = await host.exportFile({ suggestedName: suggestedName.slice(0, 200), kind, bytes });
     if (outcome.kind === "saved") {
       window.tell({ tone: "done", title: words.saved(outcome.name), lines: kind === "pdf" ? [words.savedLine] : [], choices: [] });
@@ -57,6 +62,11 @@ export function handOverOf(
       hand(async (from, title) => {
         const outcome = await host.printPdf({ title: title.slice(0, 300), bytes: await pdfOf(from) });
         return outcome.kind === "failed" ? outcome.message : null;
+      }, words.notHandedOver),
+    saveDrawing: (kind) =>
+      hand(async ({ setup, plan }, title) => {
+        const bytes = await (await loadSheets()).drawing(kind, setup, plan, choice());
+        return exported(words.drawingName(title, kind), kind, bytes);
       }, words.notHandedOver),
     saveTable: () =>
       hand(({ plan }, title) => exported(words.tableName(title), "csv", new TextEncoder().encode(tableOf(plan))), words.notHandedOverTable),

@@ -115,7 +115,7 @@ export function Ledger({ document, planning, window }: LedgerProps) {
         type="button"
         className="ledger-findings"
         aria-expanded={findingsShown}
-        onClick={() => window.set({ findingsShown: !findingsShown })}
+        onClick={() => window.set({ findingsShown: !findingsShown, keysShown: false, settingsShown: false })}
       >
         {findings.length === 0
           ? texts.window.findings.none

@@ -12,6 +12,7 @@ export interface PagePicture {
   readonly svg: string;
 }
 
+export type DrawingKind = "dxf" | "svg";
 export type Paper = Settings["paper"];
 
 /** What is to be printed. */
@@ -23,7 +24,12 @@ export interface SheetChoice {
   readonly mirrored: boolean;
   /** The field key as large as the tray, not on one page. */
   readonly fieldFullSize: boolean;
-  /** What the printer makes of a true length along x and y; 1 where it prints true. */
+  readonly grid: "fine" | "coarse";
+  /** Thickness of the tray's wall, mm: draws the outside of the base too; 0 draws the inside alone. */
+  readonly wallMm: number;
+  /** What the printer leaves blank at every edge, mm, 4 to 20. */
+  readonly edgeMm: number;
+  /** What the printer makes of a true length along the short and the long side of the paper; 1 where it prints true. */
   readonly printerScale: readonly [number, number];
 }
 
@@ -36,6 +42,9 @@ export const FIRST_CHOICE: PageChoice = {
   saveInk: false,
   mirrored: false,
   fieldFullSize: false,
+  grid: "fine",
+  wallMm: 0,
+  edgeMm: 7,
 };
 
 /** Whoever makes the sheets; loaded when first used. */
@@ -46,6 +55,8 @@ export interface SheetSource {
   /** @returns why a printer's scale is not believed, or null. */
   readonly scaleFault: (scale: readonly [number, number]) => string | null;
   readonly pictures: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<readonly PagePicture[]>;
+  /** The template in one piece at true size, for a cutter, a plotter or a drawing program. */
+  readonly drawing: (kind: DrawingKind, setup: Setup, plan: Plan, choice: SheetChoice) => Promise<Uint8Array<ArrayBuffer>>;
   readonly pdf: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<Uint8Array<ArrayBuffer>>;
 }
 

@@ -4,7 +4,7 @@ import { texts } from "../texts/texts";
 import { ChoiceField, choicesOf, Switch, TextField } from "./fields";
 import { IconButton } from "./icon-button";
 import { NumberField } from "./number-field";
-import { type PageChoice, type Paper, printerInUse, type SheetSource, withoutPrinter, withPrinter } from "./sheet-choice";
+import { type DrawingKind, type PageChoice, type Paper, printerInUse, type SheetSource, withoutPrinter, withPrinter } from "./sheet-choice";
 
 const words = texts.sheets;
 const NO_PRINTER = "";
@@ -18,6 +18,7 @@ export interface SheetOptionsProps {
   readonly ready: boolean;
   readonly onSave: () => void;
   readonly onPrint: () => void;
+  readonly onSaveDrawing: (kind: DrawingKind) => void;
 }
 
 /** The printer and what it makes of a true 100 mm. */
@@ -76,6 +77,19 @@ export function SheetOptions(props: SheetOptionsProps) {
     const names = source?.pageNames.map(([one]) => one) ?? [];
     onChoice({ ...choice, pages: names.filter((one) => (one === name ? on : choice.pages.includes(one))) });
   };
+  const bounded = (key: "wallMm" | "edgeMm", least: number, most: number) => (
+    <NumberField
+      label={words[key]}
+      unit="mm"
+      value={choice[key]}
+      step={1}
+      onSet={(value) => {
+        if (value < least || value > most) return [{ where: "", message: words.outside(words[key], least, most) }];
+        onChoice({ ...choice, [key]: value });
+        return [];
+      }}
+    />
+  );
   const same = (names: readonly string[]): boolean =>
     names.length === choice.pages.length && names.every((name) => choice.pages.includes(name));
   return (
@@ -116,6 +130,23 @@ export function SheetOptions(props: SheetOptionsProps) {
         <Switch label={words.mirrored} on={choice.mirrored} onSet={(mirrored) => onChoice({ ...choice, mirrored })} />
         <Switch label={words.fieldFullSize} on={choice.fieldFullSize} onSet={(fieldFullSize) => onChoice({ ...choice, fieldFullSize })} />
         <Switch label={words.saveInk} on={choice.saveInk} onSet={(saveInk) => onChoice({ ...choice, saveInk })} />
+        <div className="grid-3">
+          <ChoiceField<PageChoice["grid"]>
+            label={words.grid}
+            value={choice.grid}
+            choices={choicesOf(words.grids)}
+            onSet={(grid) => onChoice({ ...choice, grid })}
+          />
+          {bounded("wallMm", 0, 100)}
+          {bounded("edgeMm", 4, 20)}
+        </div>
+        <div className="choices">
+          {(["dxf", "svg"] as const).map((kind) => (
+            <button key={kind} type="button" disabled={!props.ready} onClick={() => props.onSaveDrawing(kind)}>
+              {words.saveDrawing(kind)}
+            </button>
+          ))}
+        </div>
       </section>
       <section className="card" aria-label={words.printer}>
         <h2>{words.printerTitle}</h2>

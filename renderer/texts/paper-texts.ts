@@ -25,7 +25,7 @@ export const probeTexts = {
     "Half-width of the band that a good reading keeps to",
     "Change of the reading for 1 mm of misplacement",
   ],
-  saveTable: "Save the table (CSV)…",
+  saveTable: "Save as CSV…",
 } as const;
 
 export const sheetTexts = {
@@ -40,6 +40,13 @@ export const sheetTexts = {
   mirrored: "Template mirrored, to read from below",
   fieldFullSize: "Field key at full size",
   saveInk: "Save ink",
+  grid: "Grid",
+  grids: { fine: "1 mm", coarse: "5 mm" },
+  wallMm: "Wall drawn",
+  edgeMm: "Blank edge",
+  outside: (name: string, least: number, most: number): string => `${name}: ${least} to ${most} mm`,
+  saveDrawing: (kind: string): string => `Save as ${kind.toUpperCase()}…`,
+  drawingName: (title: string, kind: string): string => `${title} template.${kind}`,
   printer: "Printer",
   printerTitle: "Printer",
   notMeasured: "not measured",

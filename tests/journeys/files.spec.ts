@@ -1,13 +1,11 @@
 import { readFileSync } from "node:fs";
-import { expect, ledger, openExample, test } from "./open-window";
+import { expect, ledger, openExample, test, withoutPickers } from "./open-window";
 
 /** In these tests the browser has no file dialogs of its own, so that opening is an upload and saving a download. */
 test.use({ acceptDownloads: true });
 
-const withoutPickers = `delete window.showOpenFilePicker; delete window.showSaveFilePicker;`;
-
 test("a saved setup opens again as it was", async ({ page }) => {
-  await page.evaluate(withoutPickers);
+  await withoutPickers(page);
   await openExample(page, "Three electrodes");
   const [download] = await Promise.all([page.waitForEvent("download"), page.getByRole("button", { name: /^Save/ }).first().click()]);
   const path = await download.path();
@@ -37,7 +35,7 @@ for (const [kind, text, words] of [
   ],
 ] as const) {
   test(`${kind} gives a clear message and leaves the open setup untouched`, async ({ page }) => {
-    await page.evaluate(withoutPickers);
+    await withoutPickers(page);
     const before = await ledger(page, "Resistance").textContent();
     const title = await page.getByRole("heading", { level: 1 }).textContent();
     const [chooser] = await Promise.all([

@@ -1,4 +1,4 @@
-import { expect, goTo, ledger, openExample, test } from "./open-window";
+import { expect, ledger, openExample, test } from "./open-window";
 
 test("a technician places, wires and moves parts, and the numbers follow", async ({ page }) => {
   await page.getByRole("button", { name: /^New tray/ }).click();
@@ -98,15 +98,4 @@ test("another voltage changes current and readings at once, not the resistance",
   await expect(ledger(page, "Span")).toHaveText("0 to 3 V");
   await expect(ledger(page, "Resistance")).toHaveText(resistance ?? "");
   await expect(ledger(page, "Current")).not.toHaveText(current ?? "");
-});
-
-test("the probe plan lists its points by level with what the meter should read", async ({ page }) => {
-  await goTo(page, "Probe plan");
-  await expect(page.getByRole("heading", { name: "3 V", exact: true })).toBeVisible();
-  const rows = page.locator(".points tbody tr");
-  expect(await rows.count()).toBeGreaterThan(40);
-  await page.getByLabel("Levels").fill("3");
-  await page.getByLabel("Levels").press("Enter");
-  await expect(page.getByRole("heading", { name: "4.5 V", exact: true })).toBeVisible();
-  await expect(page.getByRole("heading", { name: "0.75 V", exact: true })).toHaveCount(0);
 });

@@ -29,8 +29,11 @@ function serve(): Promise<Server> {
   return new Promise((resolve) => server.listen(0, "127.0.0.1", () => resolve(server)));
 }
 
-/** A test with a window: `page` is open on the tray of the first example, and every fault that the page reports fails the test. */
-export const test = base.extend<{ page: Page }, { address: string }>({
+/**
+ * A test with a window: `page` is open on the tray of the first example, and every fault that the page reports fails the test, unless the
+ * test takes it out of `faults`.
+ */
+export const test = base.extend<{ page: Page; faults: string[] }, { address: string }>({
   address: [
     // biome-ignore lint/correctness/noEmptyPattern: Playwright reads the fixture's needs from its pattern
     async ({}, use) => {
@@ -42,8 +45,9 @@ export const test = base.extend<{ page: Page }, { address: string }>({
     },
     { scope: "worker" },
   ],
-  page: async ({ page, address }, use) => {
-    const faults: string[] = [];
+  // biome-ignore lint/correctness/noEmptyPattern: Playwright reads the fixture's needs from its pattern
+  faults: async ({}, use) => use([]),
+  page: async ({ page, address, faults }, use) => {
     page.on("pageerror", (error) => faults.push(error.message));
     page.on("console", (line) => line.type() === "error" && faults.push(line.text()));
     await page.goto(address);
@@ -75,4 +79,17 @@ export async function trayBox(page: Page) {
   const box = await page.getByRole("main", { name: "Tray" }).boundingBox();
   if (box === null) throw new Error("the tray is not on the page");
   return box;
+}
+
+/** Opening becomes an upload and saving a download: the browser's own file dialogs are out of a test's reach. */
+export const withoutPickers = (page: Page): Promise<void> =>
+  page.evaluate(() => {
+    Reflect.deleteProperty(window, "showOpenFilePicker");
+    Reflect.deleteProperty(window, "showSaveFilePicker");
+  });
+
+/** @returns the path of the file that an action saves. */
+export async function savedFile(page: Page, act: () => Promise<void>): Promise<string> {
+  const [download] = await Promise.all([page.waitForEvent("download"), act()]);
+  return download.path();
 }
