@@ -37,7 +37,8 @@ function voltsBound(
   { typicalShare, factor }: Pick<PerVolt, "typicalShare" | "factor">,
 ): number {
   const difference = far === undefined || !Number.isFinite(far) ? UNSEEN_SHARE * span : Math.abs(near - far);
-  return factor * difference + (TYPICAL_SHARE * typicalShare + FLOOR_SHARE) * span;
+  const bound = factor * difference + (TYPICAL_SHARE * typicalShare + FLOOR_SHARE) * span;
+  return Number.isFinite(bound) ? bound : UNSEEN_SHARE * span;
 }
 
 function convergenceFactor({ network }: SolvedGrid): number {
@@ -236,7 +237,9 @@ function readingsOf(
     const here = perVolt.near.reader.at(xMm, yMm) ?? acrossGap(solution.fine, perVolt.near, xMm, yMm);
     if (here === null) return nothing(xMm, yMm, null);
     const coarser = perVolt.far.reader.at(xMm, yMm);
-    const fieldVPerM = volts * Math.hypot(here.slopeX, here.slopeY) * MM_PER_M;
+    if (!Number.isFinite(here.volts)) return nothing(xMm, yMm, null);
+    const slope = Math.hypot(here.slopeX, here.slopeY);
+    const fieldVPerM = Number.isFinite(slope) ? volts * slope * MM_PER_M : 0;
     return {
       xMm,
       yMm,
