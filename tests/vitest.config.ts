@@ -5,7 +5,7 @@ export default defineConfig({
   root: fileURLToPath(new URL("..", import.meta.url)),
   test: {
     include: ["tests/**/*.test.ts", "tests/**/*.test.tsx"],
-    testTimeout: 30_000,
+    testTimeout: 180_000,
     hookTimeout: 60_000,
     pool: "forks",
     maxWorkers: 2,
