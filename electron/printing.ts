@@ -4,7 +4,7 @@ import type { PrintOutcome, PrintRequest } from "../shared-types/host";
 import { denyPermissions } from "./guards";
 import { servePdf } from "./protocol";
 
-/** How long the PDF viewer may take to lay out its pages after it has loaded, ms (from trial: a pack of 40 pages needs about 300). */
+/** How long the PDF viewer is given to lay out its pages after it has loaded, ms; an estimate on the safe side, not measured. */
 const SETTLE_MS = 600;
 
 const settled = (): Promise<void> => new Promise((resolve) => setTimeout(resolve, SETTLE_MS));

@@ -7,7 +7,9 @@ import { listenForDrops } from "./browser-drops";
 const SYSTEMS: Readonly<Record<string, Surroundings["system"]>> = { linux: "linux", win32: "windows", darwin: "mac" };
 
 /** Menu commands that mean the text itself while a text field has the focus. */
-const TEXT_COMMANDS: ReadonlySet<Command> = new Set(["undo", "redo", "cut", "copy", "paste", "delete", "select-all"]);
+const TEXT_COMMANDS: ReadonlySet<Command> = new Set(["undo", "redo", "delete", "select-all"]);
+/** Menu commands that the page hears as clipboard events, wherever the focus is. */
+const CLIPBOARD_COMMANDS: ReadonlySet<Command> = new Set(["cut", "copy", "paste"]);
 
 function textHasFocus(page: Window): boolean {
   const element = page.document.activeElement;
@@ -26,7 +28,9 @@ export function desktopHost(page: Window, bridge: Bridge, version: string): Host
   };
 
   function receive(event: HostEvent, take: (event: HostEvent) => void): void {
-    if (event.kind === "command" && TEXT_COMMANDS.has(event.command) && textHasFocus(page)) {
+    const isEdit =
+      event.kind === "command" && (CLIPBOARD_COMMANDS.has(event.command) || (TEXT_COMMANDS.has(event.command) && textHasFocus(page)));
+    if (isEdit) {
       tell("editText", CHANNELS.editText.request.parse(event.command));
     } else take(event);
   }
