@@ -74,18 +74,34 @@ function shownIn([left, bottom, right, top]: Box, items: Drawing["items"]): Draw
   });
 }
 
-/** Figures along the lower and the left edge of what a page shows, every 10 mm, and the note under them. */
+const FIGURE_MM = 2.3;
+
+/** The middle of the last gap between figures, where the axis' own letter stands; null when there is no gap. */
+const lastGap = (places: readonly number[]): number | null =>
+  places.length < 2 ? null : (places[places.length - 1] + places[places.length - 2]) / 2;
+
+/** Figures along the lower and the left edge of what a page shows, every 10 mm, with the axes' letters and their unit in the corner. */
 function axisItems(shown: Box, [dx, dy]: Point, { lengthMm, widthMm, mirrored }: AxisWords, endMm: number, fonts: SheetFonts): TextItem[] {
   const [left, bottom, right, top] = shown;
-  const items: TextItem[] = [];
-  const fits = (x: number): boolean => x + dx + fonts.regular.widthOf(String(Math.round(x)), 2.3) / 2 <= endMm;
-  for (let x = 0; x <= lengthMm + 1e-9; x += 10) {
-    const at = mirrored ? lengthMm - x : x;
-    if (at >= left && at <= right && fits(at)) items.push(text(at + dx, bottom + dy - 3, String(x), 2.3, { anchor: "middle", ink: 0.2 }));
-  }
-  for (let y = 0; y <= widthMm + 1e-9; y += 10)
-    if (y >= bottom && y <= top) items.push(text(left + dx - 0.8, y + dy - 0.84, String(y), 2.3, { anchor: "end", ink: 0.2 }));
-  return items;
+  const figure = { ink: 0.2 } as const;
+  const fits = ({ x, at }: { x: number; at: number }): boolean => {
+    const half = fonts.regular.widthOf(String(x), FIGURE_MM) / 2;
+    return at - half >= left - 0.4 && at + dx + half <= endMm;
+  };
+  const tens = (endMm: number): number[] => Array.from({ length: Math.floor(endMm / 10 + 1e-9) + 1 }, (_, k) => 10 * k);
+  const xs = tens(lengthMm)
+    .map((x) => ({ x, at: mirrored ? lengthMm - x : x }))
+    .filter((place) => place.at >= left && place.at <= right && fits(place));
+  const ys = tens(widthMm).filter((y) => y >= bottom && y <= top);
+  const [xLetter, yLetter] = [lastGap(xs.map(({ at }) => at)), lastGap(ys)];
+  const [under, beside] = [bottom + dy - 3, left + dx - 0.8];
+  return [
+    ...xs.map(({ x, at }) => text(at + dx, under, String(x), FIGURE_MM, { anchor: "middle", ...figure })),
+    ...ys.map((y) => text(beside, y + dy - 0.84, String(y), FIGURE_MM, { anchor: "end", ...figure })),
+    ...(xLetter === null ? [] : [text(xLetter + dx, under, "x", FIGURE_MM, { anchor: "middle", bold: true })]),
+    ...(yLetter === null ? [] : [text(beside, yLetter + dy - 0.6, "y", FIGURE_MM, { anchor: "end", bold: true })]),
+    text(beside, under, "mm", FIGURE_MM, { anchor: "end", ...figure }),
+  ];
 }
 
 /** A small plan of all tiles with this one marked, its lower right corner given. */

@@ -2,7 +2,7 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { lengthOf, outlineOf, pointAlong } from "../../../renderer/engine/geometry/outline";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
 import type { ClippedItem, Pack } from "../../../renderer/sheets/page";
-import { PRINTER_EDGE_MM } from "../../../renderer/sheets/paper";
+import { contentOf, EDGE_RANGE_MM, PAPERS, type PaperName, PRINTER_EDGE_MM } from "../../../renderer/sheets/paper";
 import { pointsOf } from "../../../renderer/sheets/template-drawing";
 import type { Plan } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
@@ -153,5 +153,50 @@ describe("other papers and printers", () => {
     });
     expect(seen[0].length).toBeGreaterThan(2);
     expect(seen[1]).toEqual(seen[0]);
+  });
+});
+
+describe("the page that a printer is corrected by", () => {
+  const { setup } = EXAMPLES[1];
+  const order = { sheets: ["calibration"], printerScale: [0.97, 1.02] } as const;
+
+  it.each(["a4", "letter", "a3"] as const)("has bars of 150 and 200 mm on %s, whatever the correction in use", async (paper) => {
+    const [page] = printed(pdfOf(packOf(setup, await planned(setup), { ...order, paper })));
+    const [x, y] = [PRINTER_EDGE_MM + 13 + 4, PRINTER_EDGE_MM + 25 + 4];
+    for (const [place, across] of [
+      [
+        [x, y - 2],
+        [1, 0],
+      ],
+      [
+        [x + 150, y - 2],
+        [1, 0],
+      ],
+      [
+        [x - 2, y],
+        [0, 1],
+      ],
+      [
+        [x - 2, y + 200],
+        [0, 1],
+      ],
+    ] as const)
+      expect(Math.abs(lineAcross(page, place, across, 1) ?? Number.NaN)).toBeLessThanOrEqual(ALLOWED_MM);
+  });
+
+  it("keeps within its page under a band that forbids the use and with the widest blank edge", async () => {
+    const plan = await planned(setup);
+    const finding = { ...plan.findings[0], severity: "stop" } as const;
+    for (const paper of Object.keys(PAPERS) as PaperName[]) {
+      const stopped = { ...plan, findings: [finding] };
+      const [{ items, widthMm, heightMm }] = packOf(setup, stopped, { ...order, paper, edgeMm: EDGE_RANGE_MM[1] }).pages;
+      const [left, bottom, right, top] = contentOf({ widthMm, heightMm, edgeMm: EDGE_RANGE_MM[1], stopped: true });
+      // The bars' ticks are 0.12 or 0.15 mm thick, the diagonal too: nothing else on the page is.
+      const drawn = items.flatMap((item) => (item.kind === "path" && item.fill === null && item.lineMm <= 0.15 ? item.chains.flat() : []));
+      const inside = drawn.filter(([x, y]) => x >= left && x <= right && y >= bottom && y <= top);
+      const wide = inside.filter(([x]) => x > left + 100);
+      expect(wide.length, paper).toBeGreaterThan(5);
+      for (const [x, y] of drawn) expect(x <= right && y <= top && x >= EDGE_RANGE_MM[1] && y >= EDGE_RANGE_MM[1], paper).toBe(true);
+    }
   });
 });
