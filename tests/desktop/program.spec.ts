@@ -1,5 +1,7 @@
 import { existsSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
+import type { Page } from "@playwright/test";
+import { settingsSchema } from "../../shared-types/host";
 import {
   answerOpen,
   answerQuestion,
@@ -288,8 +290,10 @@ for (const shell of SHELLS) {
 
     test("the settings and the window's place outlive the program", async ({ bench }) => {
       const first = await bench.start();
-      await first.page.getByRole("button", { name: /^Colours/ }).click();
-      await expect(first.page.getByRole("button", { name: "Colours: light" })).toBeVisible();
+      const askBridge = (page: Page, name: string, request?: unknown): Promise<unknown> =>
+        page.evaluate(([door, message]) => Reflect.get(window, "fieldtrayBridge").ask[String(door)](message), [name, request]);
+      const settings = { ...settingsSchema.parse({}), paper: "a3", printers: [{ name: "Prep room", scaleX: 0.998, scaleY: 1.002 }] };
+      await askBridge(first.page, "writeSettings", settings);
       await first.app.evaluate(({ BrowserWindow }) =>
         BrowserWindow.getAllWindows()[0].setBounds({ x: 60, y: 40, width: 1100, height: 720 }),
       );
@@ -298,7 +302,7 @@ for (const shell of SHELLS) {
       await closeWindow(first);
       await ended;
       const second = await bench.start();
-      await expect(second.page.getByRole("button", { name: "Colours: light" })).toBeVisible();
+      expect(await askBridge(second.page, "readSettings")).toEqual(settings);
       const bounds = await second.app.evaluate(({ BrowserWindow }) => BrowserWindow.getAllWindows()[0].getBounds());
       expect(bounds).toMatchObject({ x: 60, y: 40, width: 1100, height: 720 });
     });
