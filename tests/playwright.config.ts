@@ -8,7 +8,9 @@ export default defineConfig({
   testDir: under("."),
   testMatch: ["journeys/**/*.spec.ts", "desktop/**/*.spec.ts"],
   outputDir: under("../test-results/playwright"),
-  timeout: 90_000,
+  // Generous, because a busy machine is slow and not wrong.
+  timeout: 120_000,
+  expect: { timeout: 20_000 },
   workers: 1,
   retries: 0,
   reporter: [["list"], ["json", { outputFile: under("../test-results/playwright.json") }]],

@@ -73,7 +73,9 @@ const test = base.extend<{ desk: Desk }, { display: string }>({
         const note = join(profile, "DevToolsActivePort");
         await expect.poll(() => existsSync(note), { timeout: 30_000 }).toBe(true);
         const [port] = readFileSync(note, "utf8").split("\n");
-        return chromium.connectOverCDP(`http://127.0.0.1:${port}`);
+        const targets = async (): Promise<string> => (await fetch(`http://127.0.0.1:${port}/json/list`).catch(() => null))?.text() ?? "";
+        await expect.poll(targets, { timeout: 30_000 }).toContain('"title": "');
+        return chromium.connectOverCDP(`http://127.0.0.1:${port}`, { timeout: 60_000 });
       },
     });
     for (const child of started) child.kill("SIGTERM");
