@@ -106,11 +106,9 @@ export function Ledger({ document, planning, window }: LedgerProps) {
     <footer className="ledger">
       <Numbers plan={refusal === null ? plan : null} />
       <UnderPointer window={window} />
-      {busy && (
-        <p className="ledger-busy" role="status">
-          {words.solving(percent)}
-        </p>
-      )}
+      <p className="ledger-busy" role="status">
+        {busy ? words.solving(percent) : ""}
+      </p>
       <button
         type="button"
         className="ledger-findings"

@@ -6,6 +6,7 @@ import { texts } from "../texts/texts";
 import { tried } from "./field-surroundings";
 import { ChoiceField, choicesOf, TextField } from "./fields";
 import { NumberField } from "./number-field";
+import { waveformChange } from "./waveform-change";
 
 /** The same tray in the other shape, as wide as it was. */
 function reshaped(tray: Tray, shape: Tray["shape"]): Tray {
@@ -106,9 +107,6 @@ export function WaterCard({ document }: { readonly document: Document }) {
   );
 }
 
-/** What an AC supply is taken to give before it is told. */
-const MAINS_HZ = 50;
-
 /** The supply, as far as laying out needs it. */
 export function SupplyCard({ document }: { readonly document: Document }) {
   const supply = useStore(document, (state) => state.setup.supply);
@@ -134,7 +132,7 @@ export function SupplyCard({ document }: { readonly document: Document }) {
             ["ac", words.ac],
             ["dc", words.dc],
           ]}
-          onSet={(waveform) => set({ waveform, ...(waveform === "ac" && supply.frequencyHz <= 0 ? { frequencyHz: MAINS_HZ } : {}) })}
+          onSet={(waveform) => set(waveformChange(supply, waveform))}
         />
         {supply.waveform === "ac" && (
           <NumberField

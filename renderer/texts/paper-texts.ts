@@ -15,7 +15,7 @@ export const probeTexts = {
   noField: (reason: string): string => `No points without a field: ${reason}`,
   coming: "The points come with the field.",
   level: (volts: string): string => `${volts} V`,
-  checks: "Checks of floating parts",
+  checks: "Checks of loose conductors",
   columns: ["No.", "x mm", "y mm", "reads V", "± V", "mV/mm"],
   columnsLong: [
     "Number on paper, in the order of the hand",
@@ -61,6 +61,8 @@ export const sheetTexts = {
   print: "Print…",
   noneChosen: "Choose a page, and it appears here as it will be printed.",
   making: "The pages are being set.",
+  setting: "Setting the pages",
+  stopSetting: "Stop",
   refused: (reason: string): string => `There is nothing to print yet: ${reason}`,
   notMade: (reason: string): string => `The pages could not be made: ${reason}`,
   pageOf: (page: number, pages: number, name: string): string => `${page} of ${pages} · ${name}`,

@@ -55,6 +55,7 @@ async function seriousFaults(page: Page): Promise<string[]> {
 for (const colours of ["light", "dark", "contrast"] as const) {
   test.describe(`in ${colours} colours`, () => {
     test.use({ colorScheme: colours === "dark" ? "dark" : "light" });
+    test.setTimeout(240_000);
     test("axe finds nothing serious on any desk, card or message", async ({ page }) => {
       if (colours === "contrast") for (let turn = 0; turn < 3; turn++) await page.getByRole("button", { name: /^Colours/ }).click();
       for (const [scene, go] of SCENES) {

@@ -10,7 +10,7 @@ test.beforeEach(async ({ page }) => {
 
 test("the points are grouped by level, numbered on, and the loose ring has its checks", async ({ page }) => {
   await expect(page.getByRole("heading", { name: "0.75 V", exact: true })).toBeVisible();
-  await expect(page.getByRole("heading", { name: "Checks of floating parts" })).toBeVisible();
+  await expect(page.getByRole("heading", { name: "Checks of loose conductors" })).toBeVisible();
   const numbers = await page.locator(`${rows} [data-point]`).allTextContents();
   expect(numbers.map(Number)).toEqual(Array.from({ length: numbers.length }, (_, index) => index + 1));
   const reads = await page.locator("tbody").nth(3).locator("tr:not(.level) td:nth-child(4)").allTextContents();

@@ -4,11 +4,14 @@ import type { Finding } from "../../../shared-types/plan";
 import { applyRemedy } from "../../document/commands/bench";
 import type { Document } from "../../document/document";
 import type { Planning } from "../../document/planning";
+import { texts } from "../../texts/texts";
 import { ChartCard } from "./chart-card";
 import { remedyWords } from "./dot";
 import { FindingsList } from "./findings-list";
 import { MeterCard, SessionCard, SupplyCard, SurfaceCard, WaterCard } from "./setting-cards";
 import { showFinding } from "./show-finding";
+
+const words = texts.bench;
 
 export interface BenchDeskProps {
   readonly document: Document;
@@ -34,14 +37,14 @@ export function BenchDesk({ document, planning }: BenchDeskProps) {
     <div className="bench-desk">
       {bench === null ? (
         <section className="card">
-          <h2>Depth and voltage</h2>
-          <p className="hint">{refusal === null ? "The field is being solved." : `There is no field to judge by: ${refusal.message}`}</p>
+          <h2>{words.chart.title}</h2>
+          <p className="hint">{refusal === null ? words.chart.solving : words.chart.noField(refusal.message)}</p>
         </section>
       ) : (
         <ChartCard document={document} setup={setup} bench={bench} />
       )}
       <section className="card" aria-labelledby="bench-findings-title">
-        <h2 id="bench-findings-title">Findings</h2>
+        <h2 id="bench-findings-title">{words.findings.title}</h2>
         <FindingsList findings={findings} onShow={(finding) => showFinding(document, finding)} onApply={apply} />
       </section>
       <WaterCard {...cards} />

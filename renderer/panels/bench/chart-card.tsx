@@ -2,12 +2,14 @@ import type { BenchNumbers } from "../../../shared-types/bench";
 import type { Setup } from "../../../shared-types/setup";
 import { changeSupply } from "../../document/commands/bench";
 import type { Document } from "../../document/document";
+import { texts } from "../../texts/texts";
 import { moveDot } from "./dot";
-import { RULE_NAMES } from "./edge-labels";
 import { FrequencyChart } from "./frequency-chart";
 import { shownNumber } from "./numbers";
 import { type Gesture, RegionChart } from "./region-chart";
 import { allowsSetting, breaks } from "./region-geometry";
+
+const words = texts.bench;
 
 interface ChartCardProps {
   readonly document: Document;
@@ -31,16 +33,14 @@ function useGestures(document: Document, drag: string) {
 function Verdict({ setup, bench }: Omit<ChartCardProps, "document">) {
   const { region } = bench;
   const [depthMm, volts] = [setup.water.depthMm, setup.supply.volts];
-  const broken = region.boundaries.filter((boundary) => breaks(boundary, depthMm, volts)).map((boundary) => RULE_NAMES[boundary.rule]);
+  const broken = region.boundaries.filter((boundary) => breaks(boundary, depthMm, volts)).map((boundary) => words.rules[boundary.rule]);
   const coarse = region.unreadableVolts.some(([low, high]) => low > 0 && volts > low && volts < high);
-  const reasons = coarse ? [...broken, "digit too coarse"] : broken;
+  const reasons = coarse ? [...broken, words.chart.coarseDigit] : broken;
   const allowed = reasons.length === 0 && allowsSetting(region, depthMm, volts);
   return (
     <p className="bench-verdict" role="status">
-      <strong>
-        {shownNumber(depthMm)} mm, {shownNumber(volts)} V {setup.supply.waveform.toUpperCase()}
-      </strong>{" "}
-      {allowed ? "✓ every rule is kept" : `✕ breaks: ${reasons.join(", ")}`}
+      <strong>{words.chart.setting(shownNumber(depthMm), shownNumber(volts), setup.supply.waveform)}</strong>{" "}
+      {allowed ? words.chart.kept : words.chart.broken(reasons)}
     </p>
   );
 }
@@ -49,12 +49,12 @@ function Verdict({ setup, bench }: Omit<ChartCardProps, "document">) {
 export function ChartCard({ document, setup, bench }: ChartCardProps) {
   const { region } = bench;
   const { suggestion, clash } = region;
-  const onRegion = useGestures(document, "depth and voltage");
-  const onFrequency = useGestures(document, "frequency");
+  const onRegion = useGestures(document, words.chart.dragStep);
+  const onFrequency = useGestures(document, words.frequency.dragStep);
   const taken = suggestion !== null && suggestion[0] === setup.water.depthMm && suggestion[1] === setup.supply.volts;
   return (
     <section className="card" aria-labelledby="bench-chart-title">
-      <h2 id="bench-chart-title">Depth and voltage</h2>
+      <h2 id="bench-chart-title">{words.chart.title}</h2>
       <RegionChart
         region={region}
         depthMm={setup.water.depthMm}
@@ -65,24 +65,27 @@ export function ChartCard({ document, setup, bench }: ChartCardProps) {
       <Verdict setup={setup} bench={bench} />
       {suggestion !== null && (
         <button type="button" className="strong" disabled={taken} onClick={() => document.run(moveDot(...suggestion))}>
-          {taken ? "This is the suggestion" : `Take the suggestion: ${shownNumber(suggestion[0])} mm, ${shownNumber(suggestion[1])} V`}
+          {taken ? words.chart.taken : words.chart.take(shownNumber(suggestion[0]), shownNumber(suggestion[1]))}
         </button>
       )}
       {clash !== null && (
         <p className="bench-clash">
-          <strong>No setting keeps every rule.</strong> {clash.message} Opens with: {clash.opensWith}
+          <strong>{words.chart.clash}</strong> {clash.message} {words.chart.opensWith(clash.opensWith)}
         </p>
       )}
-      {!region.exact && <p className="hint">The water is tilted or holds slabs: edges away from the present depth are estimates.</p>}
+      {!region.exact && <p className="hint">{words.chart.estimate}</p>}
       {bench.interface.waveform === "ac" && (
         <>
-          <h3>Lost at the electrodes, along frequency</h3>
+          <h3>{words.frequency.title}</h3>
           <FrequencyChart
             surface={bench.interface}
             meterLowHz={setup.meter.acLowHz}
             meterHighHz={setup.meter.acHighHz}
             onChoose={(frequencyHz, gesture) =>
-              onFrequency({ ...changeSupply({ frequencyHz }), label: `set ${frequencyHz} Hz`, joins: "chart's frequency" }, gesture)
+              onFrequency(
+                { ...changeSupply({ frequencyHz }), label: words.frequency.dotStep(frequencyHz), joins: "chart's frequency" },
+                gesture,
+              )
             }
           />
         </>

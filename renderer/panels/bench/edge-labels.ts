@@ -1,17 +1,6 @@
 import type { OperatingRegion, RegionBoundary, RegionRule } from "../../../shared-types/bench";
+import { texts } from "../../texts/texts";
 import { boundAt, type ChartFrame, depthOfX, xOfDepth, yOfVolts } from "./region-geometry";
-
-/** The rules by the names that people read. */
-export const RULE_NAMES: Record<RegionRule, string> = {
-  "supply-current": "supply current",
-  power: "power",
-  heating: "warming",
-  "wet-hands": "wet hands",
-  "readable-gradient": "readable gradient",
-  "tilt-tolerance": "tilt of the tray",
-  "electrode-height": "height of the parts",
-  freeboard: "freeboard",
-};
 
 /** A name set beside its edge. */
 export interface EdgeLabel {
@@ -48,7 +37,7 @@ function uprightLabels(frame: ChartFrame, region: OperatingRegion): readonly Edg
       const side = boundary.forbids === "deeper" ? 12 : -5;
       return {
         rule: boundary.rule,
-        text: RULE_NAMES[boundary.rule],
+        text: texts.bench.rules[boundary.rule],
         x: xOfDepth(frame, boundary.path[0][0]) + side,
         y: frame.top + 8,
         upright: true,
@@ -58,7 +47,7 @@ function uprightLabels(frame: ChartFrame, region: OperatingRegion): readonly Edg
 
 /** The name of a level or sloping edge: beside it as far right as there is room, following it to the left where there is none. */
 function levelLabel(frame: ChartFrame, boundary: RegionBoundary, taken: readonly Box[]): EdgeLabel | null {
-  const text = RULE_NAMES[boundary.rule];
+  const text = texts.bench.rules[boundary.rule];
   const beside = boundary.forbids === "above" ? -5 : 13;
   const right = frame.left + frame.width - 6;
   let first: EdgeLabel | null = null;

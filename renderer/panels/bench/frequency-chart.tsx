@@ -1,7 +1,10 @@
 import { type KeyboardEvent, type PointerEvent, useId, useRef } from "react";
 import type { AlternatingInterface, Estimate, SharePoint } from "../../../shared-types/bench";
+import { texts } from "../../texts/texts";
 import type { Gesture } from "./region-chart";
 import { useWidth } from "./use-width";
+
+const words = texts.bench.frequency;
 
 const FIRST_WIDTH = 400;
 const HEIGHT = 190;
@@ -75,9 +78,9 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
 
   const band = `M${[...curve(alongFrequency, "high"), ...curve(alongFrequency, "low").reverse()].join("L")}Z`;
   const x = xOfHz(Math.min(HIGHEST_HZ, Math.max(LOWEST_HZ, frequencyHz)));
-  const text = `${hzText(frequencyHz)}, about ${percentText(shareLost.typical)} lost`;
+  const text = words.dotValue(hzText(frequencyHz), percentText(shareLost.typical));
   return (
-    <figure ref={figure} aria-label="Share lost at the electrodes' surfaces along frequency">
+    <figure ref={figure} aria-label={words.figure}>
       <svg ref={svg} className="bench-chart" viewBox={`0 0 ${chartWidth} ${HEIGHT}`} role="presentation">
         <defs>
           <clipPath id={`${id}-clip`}>
@@ -87,7 +90,7 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
         <rect className="bench-chart-ground" x={MARGIN.left} y={TOP} width={width} height={FIELD_HEIGHT} />
         <rect className="bench-chart-meter" x={low} y={TOP} width={Math.max(0, high - low)} height={FIELD_HEIGHT} />
         <text className="bench-chart-name" x={(low + high) / 2} y={TOP + 13} textAnchor="middle">
-          meter
+          {words.meter}
         </text>
         <g clipPath={`url(#${id}-clip)`}>
           <path className="bench-chart-spread" d={band} />
@@ -101,7 +104,7 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
           />
         </g>
         <text className="bench-chart-name" x={MARGIN.left + width - 6} y={yOfShare(NAMED_SHARE) - 4} textAnchor="end">
-          2 %
+          {percentText(NAMED_SHARE)}
         </text>
         <g className="bench-chart-axes">
           <path d={`M${MARGIN.left} ${TOP}V${bottom}H${MARGIN.left + width}`} />
@@ -122,14 +125,14 @@ export function FrequencyChart({ surface, meterLowHz, meterHighHz, onChoose }: F
             </g>
           ))}
           <text className="bench-chart-axis" x={MARGIN.left + width} y={bottom + 30} textAnchor="end">
-            frequency, Hz
+            {words.axis}
           </text>
         </g>
         <g
           className={shareLost.typical > NAMED_SHARE ? "bench-chart-dot bench-chart-dot-forbidden" : "bench-chart-dot"}
           role="slider"
           tabIndex={0}
-          aria-label="Frequency of the supply"
+          aria-label={words.dot}
           aria-valuemin={LOWEST_HZ}
           aria-valuemax={HIGHEST_HZ}
           aria-valuenow={frequencyHz}

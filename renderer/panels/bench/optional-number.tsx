@@ -1,5 +1,6 @@
 import { type KeyboardEvent, useId, useState } from "react";
 import type { Problem } from "../../../shared-types/result";
+import { texts } from "../../texts/texts";
 import { readNumber, unitsFor } from "../read-number";
 
 export interface OptionalNumberProps {
@@ -27,7 +28,7 @@ export function OptionalNumber({ label, unit, value, absent, setting, onSet }: O
   function take(): void {
     if (typed === null) return;
     const next = typed.trim() === "" ? undefined : readNumber(typed, unitsFor(unit));
-    const problems = next === null ? [{ where: setting, message: `“${typed}” is no number; a number or nothing is` }] : onSet(next);
+    const problems = next === null ? [{ where: setting, message: texts.bench.optional.noNumber(typed) }] : onSet(next);
     if (problems.length === 0) restore();
     else setRefusal(problems[0].message);
   }

@@ -1,6 +1,9 @@
 import type { BenchNumbers, Estimate } from "../../../shared-types/bench";
 import type { Setup } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import { percentText, shownBounded, shownNumber, withPrefix } from "./numbers";
+
+const words = texts.readouts;
 
 /** One line of a card: what it is, its value with unit, and what a reader should know of it. */
 export interface Readout {
@@ -10,7 +13,7 @@ export interface Readout {
 }
 
 const range = ({ low, high }: Estimate, text: (value: number) => string): string =>
-  low === high ? text(low) : `${text(low)} to ${text(high)}`;
+  low === high ? text(low) : words.range(text(low), text(high));
 const litres = (value: number): string => (value < 1 ? `${shownNumber(value * 1000)} mL` : `${shownNumber(value)} L`);
 const grams = (value: number): string => (value < 1 ? `${shownNumber(value * 1000, 2)} mg` : `${shownNumber(value, 2)} g`);
 
@@ -20,36 +23,36 @@ export function waterReadouts(setup: Setup, { water, geometry }: BenchNumbers): 
   const dose = water.saltToTarget;
   const lines: Readout[] = [
     {
-      term: `Conductivity at ${shownNumber(setup.water.temperatureC)} °C`,
+      term: words.water.conductivity(shownNumber(setup.water.temperatureC)),
       value: `${shownNumber(water.conductivitySPerM * 1e4, 4)} µS/cm`,
-      note: `${water.temperatureRule}, ${percentText(water.changePerKelvin)} per kelvin${water.withinTemperatureRange ? "" : "; beyond the published table"}`,
+      note: words.water.perKelvin(water.temperatureRule, percentText(water.changePerKelvin), water.withinTemperatureRange),
     },
     {
-      term: "Volume",
+      term: words.water.volume,
       value: litres(water.volumePerTrayL.value),
-      ...(trays > 1 ? { note: `${litres(water.volumeAllTraysL.value)} for ${trays} trays` } : {}),
+      ...(trays > 1 ? { note: words.water.forTrays(litres(water.volumeAllTraysL.value), trays) } : {}),
     },
   ];
   if (dose !== null) {
     lines.push({
-      term: `Salt for ${shownNumber(dose.toUsPerCm, 5)} µS/cm`,
+      term: words.water.salt(shownNumber(dose.toUsPerCm, 5)),
       value: grams(dose.perTrayG),
-      note: `${trays > 1 ? `${grams(dose.allTraysG)} for ${trays} trays; ` : ""}${dose.withinData ? "NaCl, stir and measure again" : "beyond the published data"}`,
+      note: `${trays > 1 ? `${words.water.forTrays(grams(dose.allTraysG), trays)}; ` : ""}${dose.withinData ? words.water.stir : words.water.beyondData}`,
     });
   }
   const [shallow, deep] = [water.shallowestMm, water.deepestMm];
-  if (shallow !== deep) lines.push({ term: "Depth at the walls", value: `${shownNumber(shallow)} to ${shownNumber(deep)} mm` });
+  if (shallow !== deep) lines.push({ term: words.water.wallDepth, value: `${words.range(shownNumber(shallow), shownNumber(deep))} mm` });
   lines.push(
-    { term: "Freeboard", value: `${shownNumber(geometry.freeboardMm)} mm` },
+    { term: words.water.freeboard, value: `${shownNumber(geometry.freeboardMm)} mm` },
     {
-      term: `A tilt of ${geometry.tiltDeg}°`,
+      term: words.water.tilt(geometry.tiltDeg),
       value: percentText(geometry.tiltReadingShare),
-      note: `of the span, at the most; ${percentText(geometry.tiltDepthShare)} of the depth`,
+      note: words.water.tiltNote(percentText(geometry.tiltDepthShare)),
     },
     {
-      term: "A mark seen aslant",
-      value: `${shownNumber(geometry.parallaxAt10DegMm, 2)} mm at 10°`,
-      note: `${shownNumber(geometry.parallaxAt30DegMm, 2)} mm at 30°: look straight down`,
+      term: words.water.parallax,
+      value: words.water.at10(shownNumber(geometry.parallaxAt10DegMm, 2)),
+      note: words.water.at30(shownNumber(geometry.parallaxAt30DegMm, 2)),
     },
   );
   return lines;
@@ -59,45 +62,45 @@ export function waterReadouts(setup: Setup, { water, geometry }: BenchNumbers): 
 export function circuitReadouts(setup: Setup, { circuit }: BenchNumbers): readonly Readout[] {
   const { resistanceOhm, currentA, powerW, electrodes } = circuit;
   return [
-    ...(resistanceOhm === null ? [] : [{ term: "Resistance", value: `${shownBounded(resistanceOhm)} Ω` }]),
+    ...(resistanceOhm === null ? [] : [{ term: words.circuit.resistance, value: `${shownBounded(resistanceOhm)} Ω` }]),
     {
-      term: "Current",
+      term: words.circuit.current,
       value: withPrefix(currentA.value, "A"),
-      note: `${percentText(circuit.shareOfLimit)} of the supply's ${withPrefix(circuit.currentLimitA, "A")}`,
+      note: words.circuit.ofLimit(percentText(circuit.shareOfLimit), withPrefix(circuit.currentLimitA, "A")),
     },
-    { term: "Power", value: withPrefix(powerW.value, "W") },
+    { term: words.circuit.power, value: withPrefix(powerW.value, "W") },
     ...electrodes.map((electrode) => ({
-      term: setup.parts.find((part) => part.id === electrode.id)?.name || `Electrode ${electrode.id}`,
+      term: setup.parts.find((part) => part.id === electrode.id)?.name || words.circuit.electrode(electrode.id),
       value: withPrefix(electrode.currentA, "A"),
       // 1 mA/cm² is 10 A/m².
-      note: `at the most ${shownNumber(electrode.largestCurrentDensityAPerM2 / 10, 2)} mA/cm²`,
+      note: words.circuit.density(shownNumber(electrode.largestCurrentDensityAPerM2 / 10, 2)),
     })),
   ];
 }
 
 /** @returns what the electrodes' surfaces take. */
 export function surfaceReadouts({ interface: surface }: BenchNumbers): readonly Readout[] {
-  const basis = { given: "your own value", material: "by the metal", default: "metal unknown" }[surface.basis];
+  const basis = words.surfaces.bases[surface.basis];
   if (surface.waveform === "dc") {
     return [
       {
-        term: "Lost at both electrodes",
+        term: words.surfaces.lostDc,
         value: range(surface.electrodeDropVolts, (volts) => `${shownNumber(volts)} V`),
-        note: `${basis}; from memory, measure it`,
+        note: words.surfaces.measureIt(basis),
       },
-      { term: "Left across the water", value: `${shownNumber(surface.waterVolts.typical)} V` },
-      { term: "Readings", value: "drift with time", note: "DC polarises the electrodes; AC is preferred" },
+      { term: words.surfaces.left, value: `${shownNumber(surface.waterVolts.typical)} V` },
+      { term: words.surfaces.readings, value: words.surfaces.drift, note: words.surfaces.polarises },
     ];
   }
   return [
     {
-      term: "Lost at the surfaces",
-      value: `about ${percentText(surface.shareLost.typical)}`,
-      note: `${range(surface.shareLost, (share) => percentText(share))}, an estimate`,
+      term: words.surfaces.lostAc,
+      value: words.surfaces.about(percentText(surface.shareLost.typical)),
+      note: words.surfaces.estimate(range(surface.shareLost, (share) => percentText(share))),
     },
-    { term: "Left across the water", value: `${shownNumber(surface.waterVolts.typical, 4)} V`, note: "the lost volts are out of step" },
-    { term: "Double layer", value: `${range(surface.doubleLayerUfPerCm2, (value) => shownNumber(value))} µF/cm²`, note: basis },
-    { term: "2 % are lost at", value: withPrefix(surface.frequencyForTwoPercentHz, "Hz", 2) },
+    { term: words.surfaces.left, value: `${shownNumber(surface.waterVolts.typical, 4)} V`, note: words.surfaces.outOfStep },
+    { term: words.surfaces.doubleLayer, value: `${range(surface.doubleLayerUfPerCm2, (value) => shownNumber(value))} µF/cm²`, note: basis },
+    { term: words.surfaces.twoPercent, value: withPrefix(surface.frequencyForTwoPercentHz, "Hz", 2) },
   ];
 }
 
@@ -105,19 +108,22 @@ export function surfaceReadouts({ interface: surface }: BenchNumbers): readonly 
 export function meterReadouts({ meter }: BenchNumbers): readonly Readout[] {
   return [
     {
-      term: "Probe loaded by",
+      term: words.meter.loading,
       value: percentText(meter.loadingShare),
-      note: `${withPrefix(meter.tipResistanceOhm + meter.trayResistanceOhm, "Ω")} at the tip, ${withPrefix(meter.inputImpedanceOhm, "Ω")} in the meter`,
+      note: words.meter.impedances(
+        withPrefix(meter.tipResistanceOhm + meter.trayResistanceOhm, "Ω"),
+        withPrefix(meter.inputImpedanceOhm, "Ω"),
+      ),
     },
-    { term: "Range that fits", value: `${shownNumber(meter.rangeVolts)} V`, note: `one digit is ${withPrefix(meter.digitVolts, "V")}` },
-    { term: "Accuracy at the top", value: `± ${withPrefix(meter.accuracyVolts, "V", 2)}` },
+    { term: words.meter.range, value: `${shownNumber(meter.rangeVolts)} V`, note: words.meter.digit(withPrefix(meter.digitVolts, "V")) },
+    { term: words.meter.accuracy, value: `± ${withPrefix(meter.accuracyVolts, "V", 2)}` },
     ...(meter.medianFieldMvPerMm === null || meter.digitsPerMm === null
       ? []
       : [
           {
-            term: "Field along the lines",
+            term: words.meter.field,
             value: `${shownNumber(meter.medianFieldMvPerMm)} mV/mm`,
-            note: `median; ${shownNumber(meter.digitsPerMm, 2)} digits per mm`,
+            note: words.meter.median(shownNumber(meter.digitsPerMm, 2)),
           },
         ]),
   ];
@@ -127,33 +133,34 @@ export function meterReadouts({ meter }: BenchNumbers): readonly Readout[] {
 export function heatAndGasReadouts(setup: Setup, { heat, gas }: BenchNumbers): readonly Readout[] {
   const lines: Readout[] = [
     {
-      term: `Warmer after ${shownNumber(setup.session.minutes)} min`,
+      term: words.session.warmer(shownNumber(setup.session.minutes)),
       value: `${shownNumber(heat.riseOverSessionK, 2)} K`,
-      note: `at the most; the current drifts by ${percentText(heat.currentDrift)}`,
+      note: words.session.drift(percentText(heat.currentDrift)),
     },
     {
-      term: "Evaporation",
+      term: words.session.evaporation,
       value: `${range(heat.evaporationMm, (value) => shownNumber(value, 2))} mm`,
-      note: "and cools the water: measure its temperature",
+      note: words.session.cools,
     },
   ];
-  if (gas === null) return [...lines, { term: "Gas", value: "little", note: "AC: the double layers carry the current" }];
+  if (gas === null) return [...lines, { term: words.session.gas, value: words.session.little, note: words.session.acCarries }];
   lines.push({
-    term: "Hydrogen",
+    term: words.session.hydrogen,
     value: `${shownNumber(gas.hydrogenMl, 2)} mL`,
-    note: `${shownNumber(gas.hydrogenVolPercent, 2)} vol % in ${shownNumber(gas.hoodLitres)} L of still air; flammable from ${gas.hydrogenLimitVolPercent} vol %`,
+    note: words.session.hydrogenShare(shownNumber(gas.hydrogenVolPercent, 2), shownNumber(gas.hoodLitres), gas.hydrogenLimitVolPercent),
   });
   if (gas.chlorineMl > 0) {
     lines.push({
-      term: "Chlorine",
+      term: words.session.chlorine,
       value: `${shownNumber(gas.chlorineMl, 2)} mL`,
-      note: `${shownNumber(gas.chlorineRoomPpm, 2)} ppm in the room, all trays`,
+      note: words.session.chlorineShare(shownNumber(gas.chlorineRoomPpm, 2)),
     });
   } else {
-    lines.push({ term: "Oxygen", value: `${shownNumber(gas.oxygenMl, 2)} mL` });
+    lines.push({ term: words.session.oxygen, value: `${shownNumber(gas.oxygenMl, 2)} mL` });
   }
   for (const anode of gas.anodes) {
-    if (anode.lostG !== null) lines.push({ term: `${anode.id} loses`, value: grams(anode.lostG), note: `${anode.material}, at the most` });
+    if (anode.lostG !== null)
+      lines.push({ term: words.session.loses(anode.id), value: grams(anode.lostG), note: words.session.atMost(anode.material) });
   }
   return lines;
 }

@@ -1,5 +1,6 @@
 import { type KeyboardEvent, type PointerEvent, useId, useRef } from "react";
 import type { OperatingRegion } from "../../../shared-types/bench";
+import { texts } from "../../texts/texts";
 import { edgeLabels, edgePoints } from "./edge-labels";
 import {
   allowsSetting,
@@ -13,6 +14,8 @@ import {
   yOfVolts,
 } from "./region-geometry";
 import { useWidth } from "./use-width";
+
+const words = texts.bench.chart;
 
 const FIRST_WIDTH = 400;
 const heightFor = (width: number): number => Math.round(Math.min(380, Math.max(260, 0.72 * width)));
@@ -109,7 +112,7 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
 
   const { left, top, width, height } = frame;
   return (
-    <figure ref={figure} aria-label="Depth of water against supply voltage">
+    <figure ref={figure} aria-label={words.figure}>
       <svg ref={svg} className="bench-chart" viewBox={`0 0 ${chartWidth} ${chartHeight}`} role="presentation">
         <defs>
           <pattern id={`${id}-hatch`} width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
@@ -155,18 +158,18 @@ export function RegionChart({ region, depthMm, volts, waveform, onChoose }: Regi
             d="M0-8L8 0L0 8L-8 0Z"
             transform={`translate(${xOfDepth(frame, region.suggestion[0])} ${yOfVolts(frame, region.suggestion[1])})`}
           >
-            <title>{`Suggestion: ${region.suggestion[0]} mm, ${region.suggestion[1]} V`}</title>
+            <title>{words.suggestion(String(region.suggestion[0]), String(region.suggestion[1]))}</title>
           </path>
         )}
         <g
           className={allowed ? "bench-chart-dot" : "bench-chart-dot bench-chart-dot-forbidden"}
           role="slider"
           tabIndex={0}
-          aria-label="Depth and voltage: left and right change the depth, up and down the voltage"
+          aria-label={words.dot}
           aria-valuemin={0}
           aria-valuemax={frame.voltsEnd}
           aria-valuenow={volts}
-          aria-valuetext={`${depthMm} mm of water, ${volts} V, ${allowed ? "allowed" : "not allowed"}`}
+          aria-valuetext={words.dotValue(String(depthMm), String(volts), allowed)}
           transform={`translate(${x} ${y})`}
           onPointerDown={onPointerDown}
           onPointerMove={onPointerMove}
@@ -200,7 +203,7 @@ function CoarseDigits({ frame, region }: { readonly frame: ChartFrame; readonly 
         {high < frame.voltsEnd && <line className="bench-chart-edge bench-chart-edge-below" x1={frame.left} x2={right} y1={top} y2={top} />}
         {bottom - top >= 14 && (
           <text className="bench-chart-name" x={right - 6} y={bottom - 4} textAnchor="end">
-            digit too coarse
+            {words.coarseDigit}
           </text>
         )}
       </g>
@@ -231,10 +234,10 @@ function Axes({ frame, waveform }: { readonly frame: ChartFrame; readonly wavefo
         </g>
       ))}
       <text className="bench-chart-axis" x={left + width} y={bottom + 31} textAnchor="end">
-        depth of water, mm
+        {words.depthAxis}
       </text>
       <text className="bench-chart-axis" x={12} y={top + 2} textAnchor="end" transform={`rotate(-90 12 ${top + 2})`}>
-        {`supply, V ${waveform.toUpperCase()}`}
+        {words.voltsAxis(waveform)}
       </text>
     </g>
   );

@@ -1,15 +1,22 @@
 import type { ReactNode } from "react";
 import type { BenchNumbers } from "../../../shared-types/bench";
-import type { Problem } from "../../../shared-types/result";
+
 import type { Setup } from "../../../shared-types/setup";
 import { changeInterface, changeMeter, changeProbing, changeSession, changeSupply, changeWater } from "../../document/commands/bench";
 import type { Document } from "../../document/document";
-import type { Edit } from "../../document/edit";
-import { ChoiceField, Switch } from "../fields";
+
+import { texts } from "../../texts/texts";
+import { tried } from "../field-surroundings";
+import { ChoiceField, choicesOf, Switch } from "../fields";
 import { NumberField } from "../number-field";
+import { waveformChange } from "../waveform-change";
 import { OptionalNumber } from "./optional-number";
 import { ReadoutList } from "./readout-list";
 import { circuitReadouts, heatAndGasReadouts, meterReadouts, type Readout, surfaceReadouts, waterReadouts } from "./readouts";
+
+const words = texts.bench;
+const SALTS: readonly (readonly [string, string])[] = choicesOf(words.water.salts);
+const SOURCES: readonly (readonly [string, string])[] = choicesOf(words.supply.sources);
 
 export interface SettingCardProps {
   readonly document: Document;
@@ -17,12 +24,6 @@ export interface SettingCardProps {
   /** Null while the setup has no plan. */
   readonly bench: BenchNumbers | null;
 }
-
-/** Runs an edit. @returns why it was refused. */
-const trying = (document: Document, edit: Edit): readonly Problem[] => {
-  const result = document.run(edit);
-  return result.ok ? [] : result.problems;
-};
 
 function Card({ title, lines, children }: { readonly title: string; readonly lines: readonly Readout[]; readonly children: ReactNode }) {
   const id = `bench-${title.toLowerCase().replace(/\s/g, "-")}`;
@@ -35,198 +36,202 @@ function Card({ title, lines, children }: { readonly title: string; readonly lin
   );
 }
 
-const SALTS = [
-  ["none", "none (natural water)"],
-  ["sodium-chloride", "sodium chloride"],
-  ["potassium-chloride", "potassium chloride"],
-  ["magnesium-sulfate", "magnesium sulfate"],
-  ["sodium-carbonate", "sodium carbonate"],
-] as const;
-
 export function WaterCard({ document, setup, bench }: SettingCardProps) {
   const { water } = setup;
-  const set = (change: Parameters<typeof changeWater>[0]) => trying(document, changeWater(change));
+  const set = (change: Parameters<typeof changeWater>[0], stepping = false) => tried(document, changeWater(change), stepping);
   return (
-    <Card title="Water" lines={bench === null ? [] : waterReadouts(setup, bench)}>
+    <Card title={words.water.title} lines={bench === null ? [] : waterReadouts(setup, bench)}>
       <NumberField
-        label="Depth at the centre"
+        label={words.water.depth}
         unit="mm"
         value={water.depthMm}
         step={0.5}
         setting="water.depthMm"
-        onSet={(depthMm) => set({ depthMm })}
+        onSet={(depthMm, stepping) => set({ depthMm }, stepping)}
       />
       <NumberField
-        label="Conductivity at 25 °C"
+        label={words.water.conductivity}
         unit="µS/cm"
         value={water.conductivityUsPerCm}
         step={10}
         setting="water.conductivityUsPerCm"
-        onSet={(conductivityUsPerCm) => set({ conductivityUsPerCm })}
+        onSet={(conductivityUsPerCm, stepping) => set({ conductivityUsPerCm }, stepping)}
       />
       <NumberField
-        label="Temperature"
+        label={words.water.temperature}
         unit="°C"
         value={water.temperatureC}
         step={0.5}
         setting="water.temperatureC"
-        onSet={(temperatureC) => set({ temperatureC })}
+        onSet={(temperatureC, stepping) => set({ temperatureC }, stepping)}
       />
-      <ChoiceField label="Salt" value={water.salt} setting="water.salt" choices={SALTS} onSet={(salt) => set({ salt })} />
+      <ChoiceField label={words.water.salt} value={water.salt} setting="water.salt" choices={SALTS} onSet={(salt) => set({ salt })} />
       <OptionalNumber
-        label="Bring it to"
+        label={words.water.target}
         unit="µS/cm"
         value={water.targetConductivityUsPerCm}
         setting="water.targetConductivityUsPerCm"
-        absent="as it is"
+        absent={words.water.asItIs}
         onSet={(targetConductivityUsPerCm) => set({ targetConductivityUsPerCm })}
       />
     </Card>
   );
 }
 
-const SOURCES = [
-  ["safety-isolated", "safety isolating transformer"],
-  ["battery", "battery"],
-  ["not isolated", "anything else"],
-] as const;
-const WAVEFORMS = [
-  ["ac", "AC"],
-  ["dc", "DC"],
-] as const;
-
 export function SupplyCard({ document, setup, bench }: SettingCardProps) {
   const { supply } = setup;
-  const set = (change: Parameters<typeof changeSupply>[0]) => trying(document, changeSupply(change));
+  const set = (change: Parameters<typeof changeSupply>[0], stepping = false) => tried(document, changeSupply(change), stepping);
   return (
-    <Card title="Supply and circuit" lines={bench === null ? [] : circuitReadouts(setup, bench)}>
+    <Card title={words.supply.title} lines={bench === null ? [] : circuitReadouts(setup, bench)}>
       <ChoiceField
-        label="Current"
+        label={words.supply.waveform}
         value={supply.waveform}
         setting="supply.waveform"
-        choices={WAVEFORMS}
-        onSet={(waveform) => set({ waveform })}
+        choices={choicesOf<"ac" | "dc">(words.supply.waveforms)}
+        onSet={(waveform) => set(waveformChange(supply, waveform))}
       />
-      <NumberField label="Voltage" unit="V" value={supply.volts} step={0.1} setting="supply.volts" onSet={(volts) => set({ volts })} />
+      <NumberField
+        label={words.supply.volts}
+        unit="V"
+        value={supply.volts}
+        step={0.1}
+        setting="supply.volts"
+        onSet={(volts, stepping) => set({ volts }, stepping)}
+      />
       {supply.waveform === "ac" && (
         <NumberField
-          label="Frequency"
+          label={words.supply.frequency}
           unit="Hz"
           value={supply.frequencyHz}
           step={1}
           setting="supply.frequencyHz"
-          onSet={(frequencyHz) => set({ frequencyHz })}
+          onSet={(frequencyHz, stepping) => set({ frequencyHz }, stepping)}
         />
       )}
       <OptionalNumber
-        label="With nothing connected"
+        label={words.supply.openCircuit}
         unit="V"
         value={supply.openCircuitVolts}
         setting="supply.openCircuitVolts"
-        absent="not measured"
+        absent={words.supply.notMeasured}
         onSet={(openCircuitVolts) => set({ openCircuitVolts })}
       />
       <NumberField
-        label="Current limit"
+        label={words.supply.limit}
         unit="A"
         value={supply.currentLimitA}
         step={0.1}
         setting="supply.currentLimitA"
-        onSet={(currentLimitA) => set({ currentLimitA })}
+        onSet={(currentLimitA, stepping) => set({ currentLimitA }, stepping)}
       />
-      <ChoiceField label="Source" value={supply.source} setting="supply.source" choices={SOURCES} onSet={(source) => set({ source })} />
+      <ChoiceField
+        label={words.supply.source}
+        value={supply.source}
+        setting="supply.source"
+        choices={SOURCES}
+        onSet={(source) => set({ source })}
+      />
     </Card>
   );
 }
 
 export function SurfaceCard({ document, setup, bench }: SettingCardProps) {
   const { doubleLayerUfPerCm2, electrodeDropVolts, inReadings } = setup.interface;
-  const set = (change: Parameters<typeof changeInterface>[0]) => trying(document, changeInterface(change));
+  const set = (change: Parameters<typeof changeInterface>[0]) => tried(document, changeInterface(change));
   return (
-    <Card title="Electrode surfaces" lines={bench === null ? [] : surfaceReadouts(bench)}>
+    <Card title={words.surfaces.title} lines={bench === null ? [] : surfaceReadouts(bench)}>
       {setup.supply.waveform === "ac" ? (
         <OptionalNumber
-          label="Double layer"
+          label={words.surfaces.doubleLayer}
           unit="µF/cm²"
           value={doubleLayerUfPerCm2}
           setting="interface.doubleLayerUfPerCm2"
-          absent="by the metal"
+          absent={words.surfaces.byTheMetal}
           onSet={(value) => set({ doubleLayerUfPerCm2: value })}
         />
       ) : (
         <OptionalNumber
-          label="Measured drop, both"
+          label={words.surfaces.drop}
           unit="V"
           value={electrodeDropVolts}
           setting="interface.electrodeDropVolts"
-          absent="by the metal"
+          absent={words.surfaces.byTheMetal}
           onSet={(value) => set({ electrodeDropVolts: value })}
         />
       )}
-      <Switch
-        label="Expected readings allow for this loss"
-        on={inReadings}
-        setting="interface.inReadings"
-        onSet={(on) => set({ inReadings: on })}
-      />
+      <Switch label={words.surfaces.inReadings} on={inReadings} setting="interface.inReadings" onSet={(on) => set({ inReadings: on })} />
     </Card>
   );
 }
 
 export function MeterCard({ document, setup, bench }: SettingCardProps) {
   const { meter, probing } = setup;
-  const set = (change: Parameters<typeof changeMeter>[0]) => trying(document, changeMeter(change));
+  const set = (change: Parameters<typeof changeMeter>[0], stepping = false) => tried(document, changeMeter(change), stepping);
   return (
-    <Card title="Meter and probe" lines={bench === null ? [] : meterReadouts(bench)}>
+    <Card title={words.meter.title} lines={bench === null ? [] : meterReadouts(bench)}>
       <NumberField
-        label="Input"
+        label={words.meter.input}
         unit="MΩ"
         value={meter.inputMegohm}
         step={1}
         setting="meter.inputMegohm"
-        onSet={(inputMegohm) => set({ inputMegohm })}
+        onSet={(inputMegohm, stepping) => set({ inputMegohm }, stepping)}
       />
       <NumberField
-        label="Input"
+        label={words.meter.input}
         unit="pF"
         value={meter.inputPicofarad}
         step={10}
         setting="meter.inputPicofarad"
-        onSet={(inputPicofarad) => set({ inputPicofarad })}
+        onSet={(inputPicofarad, stepping) => set({ inputPicofarad }, stepping)}
       />
-      <NumberField label="Counts" unit="" value={meter.counts} step={1000} setting="meter.counts" onSet={(counts) => set({ counts })} />
       <NumberField
-        label="Accuracy"
+        label={words.meter.counts}
+        unit=""
+        value={meter.counts}
+        step={1000}
+        setting="meter.counts"
+        onSet={(counts, stepping) => set({ counts }, stepping)}
+      />
+      <NumberField
+        label={words.meter.accuracy}
         unit="%"
         value={meter.accuracyPercent}
         step={0.1}
         setting="meter.accuracyPercent"
-        onSet={(accuracyPercent) => set({ accuracyPercent })}
+        onSet={(accuracyPercent, stepping) => set({ accuracyPercent }, stepping)}
       />
       <NumberField
-        label="and"
+        label={words.meter.digits}
         unit="digits"
         value={meter.accuracyDigits}
         step={1}
         setting="meter.accuracyDigits"
-        onSet={(accuracyDigits) => set({ accuracyDigits })}
+        onSet={(accuracyDigits, stepping) => set({ accuracyDigits }, stepping)}
       />
-      <NumberField label="AC from" unit="Hz" value={meter.acLowHz} step={5} setting="meter.acLowHz" onSet={(acLowHz) => set({ acLowHz })} />
       <NumberField
-        label="AC to"
+        label={words.meter.acFrom}
+        unit="Hz"
+        value={meter.acLowHz}
+        step={5}
+        setting="meter.acLowHz"
+        onSet={(acLowHz, stepping) => set({ acLowHz }, stepping)}
+      />
+      <NumberField
+        label={words.meter.acTo}
         unit="Hz"
         value={meter.acHighHz}
         step={50}
         setting="meter.acHighHz"
-        onSet={(acHighHz) => set({ acHighHz })}
+        onSet={(acHighHz, stepping) => set({ acHighHz }, stepping)}
       />
       <NumberField
-        label="Probe's tip"
+        label={words.meter.tip}
         unit="mm"
         value={probing.probeTipMm}
         step={0.1}
         setting="probing.probeTipMm"
-        onSet={(probeTipMm) => trying(document, changeProbing({ probeTipMm }))}
+        onSet={(probeTipMm, stepping) => tried(document, changeProbing({ probeTipMm }), stepping)}
       />
     </Card>
   );
@@ -234,35 +239,42 @@ export function MeterCard({ document, setup, bench }: SettingCardProps) {
 
 export function SessionCard({ document, setup, bench }: SettingCardProps) {
   const { session, supply } = setup;
-  const set = (change: Parameters<typeof changeSession>[0]) => trying(document, changeSession(change));
+  const set = (change: Parameters<typeof changeSession>[0], stepping = false) => tried(document, changeSession(change), stepping);
   return (
-    <Card title="Heat and gas" lines={bench === null ? [] : heatAndGasReadouts(setup, bench)}>
+    <Card title={words.session.title} lines={bench === null ? [] : heatAndGasReadouts(setup, bench)}>
       <NumberField
-        label="Session"
+        label={words.session.minutes}
         unit="min"
         value={session.minutes}
         step={5}
         setting="session.minutes"
-        onSet={(minutes) => set({ minutes })}
+        onSet={(minutes, stepping) => set({ minutes }, stepping)}
       />
-      <NumberField label="Trays" unit="" value={session.trays} step={1} setting="session.trays" onSet={(trays) => set({ trays })} />
+      <NumberField
+        label={words.session.trays}
+        unit=""
+        value={session.trays}
+        step={1}
+        setting="session.trays"
+        onSet={(trays, stepping) => set({ trays }, stepping)}
+      />
       {supply.waveform === "dc" && (
         <>
           <NumberField
-            label="Air over one tray"
+            label={words.session.hood}
             unit="L"
             value={session.hoodLitres}
             step={10}
             setting="session.hoodLitres"
-            onSet={(hoodLitres) => set({ hoodLitres })}
+            onSet={(hoodLitres, stepping) => set({ hoodLitres }, stepping)}
           />
           <NumberField
-            label="Room"
+            label={words.session.room}
             unit="m³"
             value={session.roomCubicMetres}
             step={10}
             setting="session.roomCubicMetres"
-            onSet={(roomCubicMetres) => set({ roomCubicMetres })}
+            onSet={(roomCubicMetres, stepping) => set({ roomCubicMetres }, stepping)}
           />
         </>
       )}
