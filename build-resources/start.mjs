@@ -13,6 +13,15 @@ const LARGEST_FILE_BYTES = 5 * 1024 * 1024;
 
 const hasDisplay = () => process.platform !== "linux" || Boolean(process.env.DISPLAY || process.env.WAYLAND_DISPLAY);
 
+/** npm runs this behind a shell that passes no signal on: when the shell is gone, this start was meant to end. */
+function endWithNpm() {
+  if (process.env.npm_lifecycle_event === undefined) return;
+  const parent = process.ppid;
+  setInterval(() => {
+    if (process.ppid !== parent) process.kill(process.pid, "SIGTERM");
+  }, 500).unref();
+}
+
 /** Paths on the command line are meant from the folder in which npm was called. */
 const given = process.argv.slice(2);
 const inBrowser = given.includes("--browser");
@@ -28,6 +37,7 @@ function contentsOf(path) {
   }
 }
 
+endWithNpm();
 try {
   if (!hasDisplay()) {
     say("this machine has no display to open a window on; use the headless command instead: npm run --silent headless -- solve FILE");

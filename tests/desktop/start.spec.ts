@@ -23,12 +23,15 @@ interface Desk {
   readonly profile: string;
   readonly folder: string;
   readonly start: (...given: readonly string[]) => Start;
+  readonly startByNpm: () => Start;
   readonly browser: () => Promise<Browser>;
 }
 
-function startIn(env: NodeJS.ProcessEnv, given: readonly string[]): Start {
-  const child = spawn(process.execPath, [join(root, "build-resources", "start.mjs"), "--browser", ...given], {
+function startIn(env: NodeJS.ProcessEnv, given: readonly string[], through: "node" | "npm" = "node"): Start {
+  const [command, before] = through === "npm" ? ["npm", ["start", "--"]] : [process.execPath, [join(root, "build-resources", "start.mjs")]];
+  const child = spawn(command, [...before, "--browser", ...given], {
     env,
+    cwd: root,
     stdio: ["ignore", "ignore", "pipe"],
   });
   let said = "";
@@ -66,6 +69,11 @@ const test = base.extend<{ desk: Desk }, { display: string }>({
       folder,
       start: (...given) => {
         const one = startIn(env, given);
+        started.push(one.child);
+        return one;
+      },
+      startByNpm: () => {
+        const one = startIn(env, [], "npm");
         started.push(one.child);
         return one;
       },
@@ -109,6 +117,16 @@ test("the window shows an example, served from this machine alone; closing it en
   if (process.getuid?.() === 0) expect(said).toContain("--no-sandbox");
   await expect(fetch(address)).rejects.toThrow();
   expect(existsSync(join(desk.profile, "fieldtray-window.json"))).toBe(false);
+});
+
+test("ending npm ends the window and the server too", async ({ desk }) => {
+  const { child } = desk.startByNpm();
+  const page = await firstPage(await desk.browser());
+  const address = page.url();
+  expect((await fetch(address)).status).toBe(200);
+  child.kill("SIGTERM");
+  const answers = async (): Promise<boolean> => (await fetch(address).catch(() => null)) !== null;
+  await expect.poll(answers, { timeout: 20_000 }).toBe(false);
 });
 
 test("printing shows the sheets in the browser's own viewer, under a name that tells what they are", async ({ desk }) => {
