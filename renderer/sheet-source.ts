@@ -6,7 +6,7 @@ import type { Setup } from "../shared-types/setup";
 import type { SheetChoice, SheetSource } from "./panels/sheet-choice";
 import { readFontMetrics } from "./sheets/font-metrics";
 import { composePack, scaleFault } from "./sheets/pack";
-import { packPdf } from "./sheets/pdf";
+import { packPdfSteps } from "./sheets/pdf";
 import { PRESETS, SHEET_NAMES, SHEETS } from "./sheets/sheets";
 import { pageSvg } from "./sheets/svg";
 import { templateDxf } from "./sheets/template-dxf";
@@ -15,6 +15,10 @@ import { templateSvg } from "./sheets/template-svg";
 /** Joins the sheets to the window: brings the fonts and today's date, which the pure code does not know. */
 
 const bytesOf = async (url: string): Promise<Uint8Array> => new Uint8Array(await (await fetch(url)).arrayBuffer());
+
+/** After this long, ms, the window has its turn before the next page is set. */
+const TURN_MS = 30;
+const windowsTurn = (): Promise<void> => new Promise((resolve) => setTimeout(resolve));
 
 /** @returns today as it is printed, and as it is written into the file. */
 function today(): { readonly printed: string; readonly iso: string } {
@@ -62,6 +66,19 @@ export async function createSheetSource(): Promise<SheetSource> {
         kind === "dxf" ? templateDxf(setup, plan, points) : templateSvg(setup, plan, metrics, { points, grid, saveInk, mirrored, wallMm });
       return new TextEncoder().encode(text);
     },
-    pdf: async (setup, plan, choice) => packPdf(pack(setup, plan, choice), { regular, bold }, today().iso),
+    pdf: async (setup, plan, choice, { onPage, signal }) => {
+      const made = pack(setup, plan, choice);
+      const steps = packPdfSteps(made, { regular, bold }, today().iso);
+      let turnBegan = performance.now();
+      for (;;) {
+        const step = steps.next();
+        if (step.done === true) return step.value;
+        onPage(step.value, made.pages.length);
+        if (performance.now() - turnBegan < TURN_MS) continue;
+        await windowsTurn();
+        if (signal.aborted) return null;
+        turnBegan = performance.now();
+      }
+    },
   };
 }

@@ -2,10 +2,13 @@ import type { Host } from "../../shared-types/host";
 import type { Plan } from "../../shared-types/plan";
 import { texts } from "../texts/texts";
 import type { Printable } from "./print-plan";
-import type { DrawingKind, SheetChoice, SheetSource } from "./sheet-choice";
+import type { DrawingKind, PackWatch, SheetChoice, SheetSource } from "./sheet-choice";
 import type { WindowStore } from "./window-state";
 
 const words = texts.sheets;
+
+/** Work that takes longer than this, ms, is shown while it goes on. */
+const SHOWN_AFTER_MS = 400;
 
 export interface HandOver {
   readonly savePdf: () => Promise<void>;
@@ -13,6 +16,19 @@ export interface HandOver {
   readonly saveDrawing: (kind: DrawingKind) => Promise<void>;
   /** The probe table for a spreadsheet. */
   readonly saveTable: () => Promise<void>;
+}
+
+/** A watch over one pack that shows its progress when it takes long. */
+function watchOf(window: WindowStore): { readonly watch: PackWatch; readonly end: () => void } {
+  const stop = new AbortController();
+  const begun = performance.now();
+  let shown: ReturnType<WindowStore["tellProgress"]> | null = null;
+  const onPage = (done: number, count: number): void => {
+    if (performance.now() - begun < SHOWN_AFTER_MS) return;
+    shown ??= window.tellProgress(words.setting, words.stopSetting, () => stop.abort());
+    shown.show(done / count);
+  };
+  return { watch: { onPage, signal: stop.signal }, end: () => shown?.end() };
 }
 
 /** Makes finished documents and hands them to a file or the printer; tells how that went. */
@@ -42,7 +58,16 @@ export function handOverOf(
     }
   }
 
-  const pdfOf = async ({ setup, plan }: Printable) => (await loadSheets()).pdf(setup, plan, choice());
+  /** Sets the pages with the window answering meanwhile. @returns null when the user stopped it. */
+  async function pdfOf({ setup, plan }: Printable): Promise<Uint8Array<ArrayBuffer> | null> {
+    const source = await loadSheets();
+    const { watch, end } = watchOf(window);
+    try {
+      return await source.pdf(setup, plan, choice(), watch);
+    } finally {
+      end();
+    }
+  }
 
   async function exported(
     suggestedName: string,
@@ -57,10 +82,16 @@ export function handOverOf(
   }
 
   return {
-    savePdf: () => hand(async (from, title) => exported(`${title}.pdf`, "pdf", await pdfOf(from)), words.notHandedOver),
+    savePdf: () =>
+      hand(async (from, title) => {
+        const bytes = await pdfOf(from);
+        return bytes === null ? null : exported(`${title}.pdf`, "pdf", bytes);
+      }, words.notHandedOver),
     print: () =>
       hand(async (from, title) => {
-        const outcome = await host.printPdf({ title: title.slice(0, 300), bytes: await pdfOf(from) });
+        const bytes = await pdfOf(from);
+        if (bytes === null) return null;
+        const outcome = await host.printPdf({ title: title.slice(0, 300), bytes });
         return outcome.kind === "failed" ? outcome.message : null;
       }, words.notHandedOver),
     saveDrawing: (kind) =>

@@ -8,8 +8,13 @@ export function Messages({ window }: { readonly window: WindowStore }) {
   const messages = useStore(window, (state) => state.messages);
   return (
     <div className="messages" aria-live="assertive">
-      {messages.map(({ id, tone, title, lines, choices }) => (
-        <section key={id} className={`message message-${tone}`} role={tone === "done" ? "status" : "alertdialog"} aria-label={title}>
+      {messages.map(({ id, tone, title, lines, choices, progress }) => (
+        <section
+          key={id}
+          className={`message message-${tone}`}
+          role={tone === "done" || tone === "working" ? "status" : "alertdialog"}
+          aria-label={title}
+        >
           <header>
             <h2>{title}</h2>
             <button type="button" className="quiet" aria-label={texts.window.messages.close} onClick={() => window.dismiss(id)}>
@@ -19,6 +24,7 @@ export function Messages({ window }: { readonly window: WindowStore }) {
           {lines.map((line) => (
             <p key={line}>{line}</p>
           ))}
+          {progress !== undefined && <progress value={progress} aria-label={title} />}
           {choices.length > 0 && (
             <div className="choices">
               {choices.map(({ label, choose }) => (

@@ -47,6 +47,12 @@ export const FIRST_CHOICE: PageChoice = {
   edgeMm: 7,
 };
 
+/** Whoever waits for a pack: hears of every page done, and may give up between two pages. */
+export interface PackWatch {
+  readonly onPage: (done: number, count: number) => void;
+  readonly signal: AbortSignal;
+}
+
 /** Whoever makes the sheets; loaded when first used. */
 export interface SheetSource {
   /** Names of pages with their titles, in the order of the pack. */
@@ -57,7 +63,8 @@ export interface SheetSource {
   readonly pictures: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<readonly PagePicture[]>;
   /** The template in one piece at true size, for a cutter, a plotter or a drawing program. */
   readonly drawing: (kind: DrawingKind, setup: Setup, plan: Plan, choice: SheetChoice) => Promise<Uint8Array<ArrayBuffer>>;
-  readonly pdf: (setup: Setup, plan: Plan, choice: SheetChoice) => Promise<Uint8Array<ArrayBuffer>>;
+  /** The pack as PDF, made in short turns so that the window answers meanwhile; null when given up. */
+  readonly pdf: (setup: Setup, plan: Plan, choice: SheetChoice, watch: PackWatch) => Promise<Uint8Array<ArrayBuffer> | null>;
 }
 
 /** @returns the printer in use, or null where lengths are printed without correction. */

@@ -25,10 +25,12 @@ export const DESKS: readonly Desk[] = ["lay-out", "bench", "probe-plan", "sheets
 /** Something to tell the user that stays until it is dismissed or answered. */
 export interface Message {
   readonly id: number;
-  readonly tone: "problem" | "question" | "done";
+  readonly tone: "problem" | "question" | "done" | "working";
   readonly title: string;
   readonly lines: readonly string[];
   readonly choices: readonly { readonly label: string; readonly choose: () => void }[];
+  /** Share of the work that is done, 0 to 1. */
+  readonly progress?: number;
 }
 
 export interface WindowState {
@@ -50,6 +52,8 @@ export interface WindowStore extends Pick<StoreApi<WindowState>, "getState" | "s
   /** Shows a message. @returns how to take it away again. */
   readonly tell: (message: Omit<Message, "id">) => () => void;
   readonly dismiss: (id: number) => void;
+  /** Shows work under way, with a way to stop it. @returns how to say what share (0 to 1) is done, and how to take it away. */
+  readonly tellProgress: (title: string, stop: string, onStop: () => void) => { show: (share: number) => void; end: () => void };
 }
 
 /** @returns the state of a window that opens on the tray. */
@@ -68,6 +72,11 @@ export function createWindowStore(): WindowStore {
   const { getState, setState } = store;
   let next = 1;
   const dismiss = (id: number): void => setState({ messages: getState().messages.filter((message) => message.id !== id) });
+  const show = (message: Omit<Message, "id">): number => {
+    const id = next++;
+    setState({ messages: [...getState().messages.slice(-3), { ...message, id }] });
+    return id;
+  };
   return {
     getState,
     subscribe: store.subscribe,
@@ -81,10 +90,16 @@ export function createWindowStore(): WindowStore {
         shown: { ...shown, points: desk === "probe-plan" || (shown.points && from !== "probe-plan") },
       })),
     tell: (message) => {
-      const id = next++;
-      setState({ messages: [...getState().messages.slice(-3), { ...message, id }] });
+      const id = show(message);
       return () => dismiss(id);
     },
     dismiss,
+    tellProgress: (title, stop, onStop) => {
+      const id = show({ tone: "working", title, lines: [], choices: [{ label: stop, choose: onStop }], progress: 0 });
+      return {
+        show: (progress) => setState({ messages: getState().messages.map((one) => (one.id === id ? { ...one, progress } : one)) }),
+        end: () => dismiss(id),
+      };
+    },
   };
 }
