@@ -18,6 +18,7 @@ import { conductivityAtTemperatureSPerM } from "./bench/water-conductivity";
 import { drive, type Pace } from "./field/drive";
 import { fieldLayout, geometryKey } from "./field/layout";
 import { solveField } from "./field/solve-field";
+import { createSolverMemory } from "./field/solver-memory";
 import { type SuperposedField, type Superposer, superposerOf } from "./field/superposition";
 import { findingsOf, geometryFindings } from "./findings/all-findings";
 import { noCurrentPath } from "./findings/current-paths";
@@ -134,6 +135,7 @@ const electrodeCount = (setup: Setup): number => setup.parts.filter(({ role }) =
 /** @returns a planner with an empty memory. */
 export function createPlanner(): Planner {
   const kept = new Map<string, Solved>();
+  const memory = createSolverMemory();
 
   function keep(key: string, solved: Solved): void {
     kept.delete(key);
@@ -152,7 +154,7 @@ export function createPlanner(): Planner {
     const key = `${serving} ${geometry}`;
     const started = options.now?.() ?? 0;
     const solved = kept.get(key) ?? {
-      superposed: superposerOf(await drive(solveField(fieldLayout(setup), serving, options.onProgress), options)),
+      superposed: superposerOf(await drive(solveField(fieldLayout(setup), serving, options.onProgress, memory), options)),
       lines: null,
     };
     keep(key, solved);

@@ -16,14 +16,19 @@ const BREATH_MS = 8;
  */
 export async function drive<Value>(steps: Generator<void, Value>, pace: Pace): Promise<Value> {
   let last = pace.now?.() ?? 0;
-  for (;;) {
-    pace.signal?.throwIfAborted();
-    const step = steps.next();
-    if (step.done === true) return step.value;
-    if (pace.breathe === undefined) continue;
-    const now = pace.now?.() ?? Number.POSITIVE_INFINITY;
-    if (now - last < BREATH_MS) continue;
-    await pace.breathe();
-    last = pace.now?.() ?? 0;
+  try {
+    for (;;) {
+      pace.signal?.throwIfAborted();
+      const step = steps.next();
+      if (step.done === true) return step.value;
+      if (pace.breathe === undefined) continue;
+      const now = pace.now?.() ?? Number.POSITIVE_INFINITY;
+      if (now - last < BREATH_MS) continue;
+      await pace.breathe();
+      last = pace.now?.() ?? 0;
+    }
+  } finally {
+    // A computation that was stopped gives back what it had borrowed.
+    steps.return(undefined as Value);
   }
 }

@@ -4,7 +4,8 @@ import { type FittedNetwork, fitContacts } from "./fit";
 import { type Grid, gridOfPitch, halved, pitchFor } from "./grid";
 import type { FieldLayout } from "./layout";
 import { type ReadingMap, readingMap } from "./reading";
-import { FINE_TOLERANCE, LIVE_TOLERANCE, solveUnitPotentials, type UnitPotentials } from "./unit-potentials";
+import { createSolverMemory, type SolverMemory } from "./solver-memory";
+import { FINE_TOLERANCE, LIVE_TOLERANCE, type SolveOptions, solveUnitPotentials, type UnitPotentials } from "./unit-potentials";
 
 /** One grid with everything that was solved on it. */
 export interface SolvedGrid {
@@ -22,12 +23,12 @@ export interface FieldSolution {
   readonly coarse: SolvedGrid;
 }
 
-function* solveGrid(layout: FieldLayout, grid: Grid, tolerance: number, onSolved: (share: number) => void): Generator<void, SolvedGrid> {
+function* solveGrid(layout: FieldLayout, grid: Grid, options: SolveOptions): Generator<void, SolvedGrid> {
   const plain = yield* discretise(layout, grid);
   yield;
   const network = yield* fitContacts(plain);
   yield;
-  const units = yield* solveUnitPotentials(network, tolerance, onSolved);
+  const units = yield* solveUnitPotentials(network, options);
   return { network, units, map: readingMap(network) };
 }
 
@@ -36,16 +37,19 @@ function* solveGrid(layout: FieldLayout, grid: Grid, tolerance: number, onSolved
  * The layout needs at least one electrode, and no two conductors may overlap (the caller checks).
  * Yields every few milliseconds so that a caller can stop or pause it.
  * @param onProgress told the share of the work done, 0 to 1.
+ * @param memory kept by a caller who solves again and again, as while a part is dragged.
  */
 export function* solveField(
   layout: FieldLayout,
   quality: Quality,
   onProgress: (share: number) => void = () => {},
+  memory: SolverMemory = createSolverMemory(),
 ): Generator<void, FieldSolution> {
   const { tray } = layout.setup;
   const grid = gridOfPitch(tray, pitchFor(tray, quality));
-  const tolerance = quality === "live" ? LIVE_TOLERANCE : FINE_TOLERANCE;
-  const coarse = yield* solveGrid(layout, halved(grid), tolerance, (share) => onProgress(0.2 * share));
-  const fine = yield* solveGrid(layout, grid, tolerance, (share) => onProgress(0.2 + 0.8 * share));
+  const live = quality === "live";
+  const options = { tolerance: live ? LIVE_TOLERANCE : FINE_TOLERANCE, memory, followsOn: live };
+  const coarse = yield* solveGrid(layout, halved(grid), { ...options, onSolved: (share) => onProgress(0.2 * share) });
+  const fine = yield* solveGrid(layout, grid, { ...options, onSolved: (share) => onProgress(0.2 + 0.8 * share) });
   return { layout, quality, fine, coarse };
 }

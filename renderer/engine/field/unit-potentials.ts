@@ -1,7 +1,8 @@
-import { conjugateGradient, type SolveRecord, type SystemVector } from "./conjugate-gradient";
+import { conjugateGradient, type SolveRecord } from "./conjugate-gradient";
 import type { Network } from "./discretise";
-import { type Border, type Level, makeLevel, padded } from "./level";
-import { buildHierarchy } from "./multigrid";
+import type { Kernels } from "./kernels/kernels";
+import { loadNetwork, PAUSE_NODES } from "./load-network";
+import { createSolverMemory, type FirstGuess, type SolverMemory } from "./solver-memory";
 
 /**
  * The field of every electrode at 1 V with the others at 0 V and the floating conductors at zero net current.
@@ -23,74 +24,6 @@ export const FINE_TOLERANCE = 1e-9;
 /** The same while a part moves: still a hundredth of what the grid itself gets wrong. */
 export const LIVE_TOLERANCE = 1e-6;
 
-function finestLevel(network: Network): Level {
-  const { grid, active, east, north, contacts, bridges, layout } = network;
-  const { columns, rows } = grid;
-  const stride = columns + 2;
-  const size = stride * (rows + 2);
-  const links = {
-    centre: new Float64Array(size),
-    east: new Float64Array(size),
-    north: new Float64Array(size),
-    northEast: null,
-    northWest: null,
-  };
-  for (let row = 0; row < rows; row++) {
-    for (let column = 0; column < columns; column++) {
-      const node = row * columns + column;
-      const n = padded(stride, column, row);
-      links.east[n] = east[node];
-      links.north[n] = north[node];
-      links.centre[n] += east[node] + north[node];
-      if (east[node] > 0) links.centre[n + 1] += east[node];
-      if (north[node] > 0) links.centre[n + stride] += north[node];
-    }
-  }
-  const at = (node: number): number => padded(stride, node % columns, Math.floor(node / columns));
-  for (const contact of contacts)
-    contact.nodes.forEach((node, k) => {
-      links.centre[at(node)] += contact.conductances[k];
-    });
-  for (let node = 0; node < active.length; node++) if (active[node] === 0) links.centre[at(node)] = 1;
-  const first = layout.electrodeCount;
-  const count = layout.conductors.length - first;
-  const borders = contacts
-    .slice(first)
-    .map((contact): Border => ({ nodes: Int32Array.from(contact.nodes, at), conductances: Float64Array.from(contact.conductances) }));
-  const floating = new Float64Array(count * count);
-  borders.forEach((border, f) => {
-    for (const conductance of border.conductances) floating[f * count + f] += conductance;
-  });
-  for (const { bodyA, bodyB, conductanceMm } of bridges) {
-    const a = bodyA - first;
-    const b = bodyB - first;
-    if (a >= 0) floating[a * count + a] += conductanceMm;
-    if (b >= 0) floating[b * count + b] += conductanceMm;
-    if (a >= 0 && b >= 0) {
-      floating[a * count + b] -= conductanceMm;
-      floating[b * count + a] -= conductanceMm;
-    }
-  }
-  // A floating conductor that nothing ties down must not divide by zero; its potential is reported as undetermined.
-  for (let f = 0; f < count; f++) if (!(floating[f * count + f] > 0)) floating[f * count + f] = 1;
-  return makeLevel(columns, rows, links, borders, floating);
-}
-
-/** What drives the unknowns when electrode `electrode` stands at 1 V. */
-function driveOf(network: Network, level: Level, electrode: number): SystemVector {
-  const { grid, contacts, bridges, layout } = network;
-  const drive: SystemVector = { grid: new Float64Array(level.centre.length), floating: new Float64Array(level.borders.length) };
-  const contact = contacts[electrode];
-  contact.nodes.forEach((node, k) => {
-    drive.grid[padded(level.stride, node % grid.columns, Math.floor(node / grid.columns))] = contact.conductances[k];
-  });
-  for (const { bodyA, bodyB, conductanceMm } of bridges) {
-    const other = bodyA === electrode ? bodyB : bodyB === electrode ? bodyA : -1;
-    if (other >= layout.electrodeCount) drive.floating[other - layout.electrodeCount] += conductanceMm;
-  }
-  return drive;
-}
-
 /** Conductance between two electrodes without any unknown between them (row-major): own ties on the diagonal, bridges off it. */
 function directConductance(network: Network): Float64Array {
   const count = network.layout.electrodeCount;
@@ -107,81 +40,164 @@ function directConductance(network: Network): Float64Array {
   return direct;
 }
 
-function unpadded(network: Network, level: Level, solution: SystemVector, electrode: number): Float64Array {
+/** Bridges from an electrode to floating conductors: the conductor (counted among the floating) and the conductance. */
+function bridgesToFloating({ bridges, layout }: Network, electrode: number): readonly (readonly [number, number])[] {
+  return bridges.flatMap(({ bodyA, bodyB, conductanceMm }): [number, number][] => {
+    const other = bodyA === electrode ? bodyB : bodyB === electrode ? bodyA : -1;
+    return other >= layout.electrodeCount ? [[other - layout.electrodeCount, conductanceMm]] : [];
+  });
+}
+
+/** The kernels' potentials at every node, those on metal as the metal's. */
+function potentialsOf(kernels: Kernels, network: Network, electrode: number, floating: Float64Array): Float64Array {
   const { columns, rows } = network.grid;
-  const values = new Float64Array(columns * rows);
-  for (let row = 0; row < rows; row++) {
-    const from = padded(level.stride, 0, row);
-    values.set(solution.grid.subarray(from, from + columns), row * columns);
-  }
   const { body } = network.ownership;
+  const first = network.layout.electrodeCount;
+  const values = new Float64Array(kernels.memory.buffer, kernels.potentials(), columns * rows).slice();
   for (let node = 0; node < values.length; node++) {
-    if (body[node] < 0) continue;
-    const floating = body[node] - network.layout.electrodeCount;
-    values[node] = floating >= 0 ? solution.floating[floating] : body[node] === electrode ? 1 : 0;
+    const owner = body[node];
+    if (owner >= 0) values[node] = owner >= first ? floating[owner - first] : owner === electrode ? 1 : 0;
   }
   return values;
 }
 
+interface Solved {
+  readonly potentials: Float64Array;
+  readonly floating: Float64Array;
+  /** What the unfinished iteration leaves of the currents: red nodes (padded), floating conductors. */
+  readonly residual: { readonly red: Float64Array; readonly floating: Float64Array };
+  readonly record: SolveRecord;
+}
+
+const dot = (a: Float64Array, b: Float64Array): number => {
+  let sum = 0;
+  for (let n = 0; n < a.length; n++) sum += a[n] * b[n];
+  return sum;
+};
+
+function* solveElectrode(
+  kernels: Kernels,
+  network: Network,
+  electrode: number,
+  tolerance: number,
+  guess: FirstGuess | undefined,
+): Generator<void, Solved> {
+  const { columns, rows } = network.grid;
+  const floaters = network.layout.conductors.length - network.layout.electrodeCount;
+  const view = (address: number, length: number): Float64Array => new Float64Array(kernels.memory.buffer, address, length);
+  if (guess !== undefined) {
+    view(kernels.potentials(), columns * rows).set(guess.potentials);
+    view(kernels.floatingPotentials(), floaters).set(guess.floating);
+  }
+  kernels.beginSolve(electrode, guess !== undefined);
+  for (const [floater, conductanceMm] of bridgesToFloating(network, electrode)) kernels.driveFloating(floater, conductanceMm);
+  const record = yield* conjugateGradient(kernels, tolerance, guess !== undefined, columns * rows > PAUSE_NODES);
+  kernels.finish(electrode);
+  const floating = view(kernels.floatingPotentials(), floaters).slice();
+  return {
+    potentials: potentialsOf(kernels, network, electrode, floating),
+    floating,
+    residual: {
+      red: view(kernels.redResidual(), kernels.redLength()).slice(),
+      floating: view(kernels.floatingResidual(), floaters).slice(),
+    },
+    record,
+  };
+}
+
+/** The current per volt that leaves electrode `electrode`'s own ties and bridges into a field. */
+function driveTimes(network: Network, electrode: number, { potentials, floating }: Solved): number {
+  const { nodes, conductances } = network.contacts[electrode];
+  let sum = 0;
+  for (let k = 0; k < nodes.length; k++) sum += conductances[k] * potentials[nodes[k]];
+  for (const [floater, conductanceMm] of bridgesToFloating(network, electrode)) sum += conductanceMm * floating[floater];
+  return sum;
+}
+
+export interface SolveOptions {
+  /** See FINE_TOLERANCE. */
+  readonly tolerance: number;
+  readonly memory?: SolverMemory;
+  /** Starts from the newest such solve on a grid of this size and is a start for the next; else solves start from zero. */
+  readonly followsOn?: boolean;
+  /** Told the share of the work done, 0 to 1. */
+  readonly onSolved?: (share: number) => void;
+}
+
 /**
  * Solves the unit potentials of all electrodes; the last one follows from the others, because together they make 1 V everywhere.
- * Yields now and then so that a caller can stop or pause it.
- * @param tolerance see FINE_TOLERANCE.
- * @param onSolved told the share of the work done, 0 to 1.
+ * Yields every few milliseconds so that a caller can stop or pause it.
  */
-export function* solveUnitPotentials(
-  network: Network,
-  tolerance: number,
-  onSolved: (share: number) => void = () => {},
-): Generator<void, UnitPotentials> {
-  const level = finestLevel(network);
-  const hierarchy = yield* buildHierarchy(level);
-  const count = network.layout.electrodeCount;
-  const drives = network.contacts.slice(0, count).map((_, electrode) => driveOf(network, level, electrode));
-  const solutions: SystemVector[] = [];
-  const residuals: SystemVector[] = [];
-  let record: SolveRecord = { iterations: 0, relativeResidual: 0 };
-  for (let electrode = 0; electrode + 1 < count; electrode++) {
-    const solved = yield* conjugateGradient(hierarchy, drives[electrode], tolerance, null);
-    solutions.push(solved.solution);
-    residuals.push(solved.residual);
-    record = {
-      iterations: Math.max(record.iterations, solved.record.iterations),
-      relativeResidual: Math.max(record.relativeResidual, solved.record.relativeResidual),
-    };
-    onSolved((electrode + 1) / (count - 1));
-  }
-  const conductanceMm = new Float64Array(count * count);
-  const direct = directConductance(network);
-  const product = (a: SystemVector, b: SystemVector): number => {
-    let sum = 0;
-    for (let n = 0; n < a.grid.length; n++) sum += a.grid[n] * b.grid[n];
-    for (let f = 0; f < a.floating.length; f++) sum += a.floating[f] * b.floating[f];
-    return sum;
-  };
-  for (let e = 0; e + 1 < count; e++) {
-    for (let f = 0; f <= e; f++) {
-      // The power of the two fields in each other: its error is of second order in the solver's.
-      const mutual = direct[e * count + f] - product(drives[e], solutions[f]) - product(solutions[e], residuals[f]);
-      conductanceMm[e * count + f] = mutual;
-      conductanceMm[f * count + e] = mutual;
+export function* solveUnitPotentials(network: Network, options: SolveOptions): Generator<void, UnitPotentials> {
+  const { columns, rows } = network.grid;
+  const { electrodeCount: count, conductors } = network.layout;
+  const memory = options.memory ?? createSolverMemory();
+  const guesses = options.followsOn === true ? memory.recall(columns, rows, count - 1, conductors.length - count) : undefined;
+  const kernels = memory.borrow(columns, rows);
+  try {
+    yield* loadNetwork(kernels, network);
+    const conductanceMm = directConductance(network);
+    const solved: Solved[] = [];
+    for (let e = 0; e + 1 < count; e++) {
+      const one = yield* solveElectrode(kernels, network, e, options.tolerance, guesses?.[e]);
+      solved.push(one);
+      const red = new Float64Array(kernels.memory.buffer, kernels.redSolution(), kernels.redLength());
+      for (let f = 0; f <= e; f++) {
+        // The power of the two fields in each other: its error is of second order in the solver's.
+        const rest = dot(red, solved[f].residual.red) + dot(one.floating, solved[f].residual.floating);
+        const mutual = conductanceMm[e * count + f] - driveTimes(network, e, solved[f]) - rest;
+        conductanceMm[e * count + f] = mutual;
+        conductanceMm[f * count + e] = mutual;
+      }
+      options.onSolved?.((e + 1) / (count - 1));
+      yield;
     }
+    if (options.followsOn === true) {
+      memory.remember(
+        columns,
+        rows,
+        solved.map(({ potentials, floating }) => ({ potentials, floating })),
+      );
+    }
+    return withLast(network, solved, conductanceMm);
+  } finally {
+    memory.giveBack(columns, rows, kernels);
   }
-  const last = count - 1;
+}
+
+/** Adds the last electrode, whose field is what the others leave of 1 V everywhere. */
+function withLast(network: Network, solved: readonly Solved[], conductanceMm: Float64Array): UnitPotentials {
+  const { active, layout, ownership } = network;
+  const last = layout.electrodeCount - 1;
+  const count = layout.electrodeCount;
   for (let e = 0; e < last; e++) {
     let sum = 0;
     for (let f = 0; f < last; f++) sum += conductanceMm[e * count + f];
     conductanceMm[e * count + last] = -sum;
     conductanceMm[last * count + e] = -sum;
-    conductanceMm[last * count + last] += sum;
   }
-  const potentials = solutions.map((solution, electrode) => unpadded(network, level, solution, electrode));
-  const floating = solutions.map((solution) => solution.floating);
-  const rest = Float64Array.from(network.active, (isActive, node) => (isActive === 1 || network.ownership.body[node] >= 0 ? 1 : 0));
-  for (const potential of potentials) for (let node = 0; node < rest.length; node++) rest[node] -= potential[node];
-  const restFloating = new Float64Array(level.borders.length).fill(1);
-  for (const shares of floating) for (let f = 0; f < restFloating.length; f++) restFloating[f] -= shares[f];
-  let unknowns = level.borders.length;
-  for (const isActive of network.active) unknowns += isActive;
-  return { potentials: [...potentials, rest], floating: [...floating, restFloating], conductanceMm, unknowns, record };
+  let own = 0;
+  for (let e = 0; e < last; e++) own -= conductanceMm[e * count + last];
+  conductanceMm[last * count + last] = own;
+  const rest = new Float64Array(active.length);
+  let unknowns = layout.conductors.length - count;
+  for (let node = 0; node < rest.length; node++) {
+    unknowns += active[node];
+    if (active[node] === 0 && ownership.body[node] < 0) continue;
+    let value = 1;
+    for (let e = 0; e < last; e++) value -= solved[e].potentials[node];
+    rest[node] = value;
+  }
+  const restFloating = new Float64Array(layout.conductors.length - count).fill(1);
+  for (const { floating } of solved) for (let f = 0; f < restFloating.length; f++) restFloating[f] -= floating[f];
+  return {
+    potentials: [...solved.map(({ potentials }) => potentials), rest],
+    floating: [...solved.map(({ floating }) => floating), restFloating],
+    conductanceMm,
+    unknowns,
+    record: {
+      iterations: Math.max(0, ...solved.map(({ record }) => record.iterations)),
+      relativeResidual: Math.max(0, ...solved.map(({ record }) => record.relativeResidual)),
+    },
+  };
 }
