@@ -19,6 +19,8 @@ const NEEDED = [
 const counts = { passed: 0, failed: 0, skipped: 0 };
 /** How many tests were skipped for each reason. */
 const reasons = new Map();
+/** Journeys that passed only when tried again: a browser on a busy machine may fail to start, but nobody should have to guess that it did. */
+const triedTwice = [];
 
 const bin = (name) => inRoot("node_modules", ".bin", process.platform === "win32" ? `${name}.cmd` : name);
 
@@ -53,7 +55,7 @@ async function runVitest() {
 }
 
 function* testsOf(suite) {
-  for (const spec of suite.specs ?? []) yield* spec.tests;
+  for (const spec of suite.specs ?? []) for (const test of spec.tests) yield { ...test, title: spec.title };
   for (const inner of suite.suites ?? []) yield* testsOf(inner);
 }
 
@@ -65,11 +67,12 @@ async function runJourneys() {
     env: { ...process.env, CHROMIUM_PATH: findBrowser() ?? "" },
   });
   const tests = (readJson(report)?.suites ?? []).flatMap((suite) => [...testsOf(suite)]);
-  for (const { status, annotations } of tests) {
+  for (const { status, annotations, title } of tests) {
+    if (status === "flaky") triedTwice.push(title);
     if (status === "skipped") skip(annotations.find(({ type }) => type === "skip")?.description ?? "no reason given");
-    else counts[status === "expected" ? "passed" : "failed"]++;
+    else counts[status === "expected" || status === "flaky" ? "passed" : "failed"]++;
   }
-  const anyFailed = tests.some(({ status }) => status === "unexpected" || status === "flaky");
+  const anyFailed = tests.some(({ status }) => status === "unexpected");
   if (tests.length === 0 || (code !== 0 && !anyFailed)) counts.failed++;
 }
 
@@ -94,6 +97,7 @@ try {
   say(error.message);
   counts.failed++;
 }
+for (const title of triedTwice) console.log(`passed at the second try only: ${title}`);
 for (const [reason, number] of reasons) console.log(`skipped, ${number} tests: ${reason}`);
 console.log(`${counts.passed} passed, ${counts.failed} failed${counts.skipped > 0 ? `, ${counts.skipped} skipped` : ""}`);
 process.exit(counts.failed === 0 ? 0 : 1);

@@ -8,7 +8,9 @@ import { basename, dirname, join } from "node:path";
  * target's name in one step. Whoever looks finds the whole old file or the whole new one. The version before stays as a file of its own.
  */
 
-const PART = /^\.(.+)\.(\d+)-[0-9a-f]{8}\.part$/;
+const PART = /^\.(.+)\.[0-9a-f]{8}\.part$/;
+/** No save in progress leaves its file alone for so long; process numbers would not tell, as the system gives them out again. */
+const LEFT_BEHIND_AFTER_MS = 60_000;
 
 /** @returns the name under which the version before is kept: `bars.fieldtray.json` becomes `bars.previous.fieldtray.json`. */
 export function previousName(name: string): string {
@@ -36,22 +38,16 @@ async function flushFolder(folder: PathLike): Promise<void> {
   await handle.close();
 }
 
-const isAlive = (pid: number): boolean => {
-  try {
-    process.kill(pid, 0);
-    return true;
-  } catch {
-    return false;
-  }
-};
-
-/** Takes away what earlier saves of this file left behind when they were cut off. */
-async function clearLeftovers(folder: string, name: string): Promise<void> {
+/** Takes away what saves of the file `name` left behind in its folder when they were cut off a minute or more before `now` (ms). */
+export async function clearLeftovers(folder: string, name: string, now = Date.now()): Promise<void> {
   for (const entry of await readdir(folder).catch(() => [])) {
-    const match = PART.exec(entry);
-    if (match === null || match[1] !== name) continue;
-    const pid = Number(match[2]);
-    if (pid !== process.pid && !isAlive(pid)) await rm(join(folder, entry), { force: true }).catch(() => {});
+    if (PART.exec(entry)?.[1] !== name) continue;
+    const leftover = join(folder, entry);
+    const writtenAt = await stat(leftover).then(
+      ({ ctimeMs }) => ctimeMs,
+      () => Number.NaN,
+    );
+    if (now - writtenAt > LEFT_BEHIND_AFTER_MS) await rm(leftover, { force: true }).catch(() => {});
   }
 }
 
@@ -77,7 +73,7 @@ export async function saveWhole(path: string, content: string | Uint8Array, keep
   const target = await targetOf(path);
   const [folder, name] = [dirname(target), basename(target)];
   await clearLeftovers(folder, name);
-  const part = (): string => join(folder, `.${name}.${process.pid}-${randomBytes(4).toString("hex")}.part`);
+  const part = (): string => join(folder, `.${name}.${randomBytes(4).toString("hex")}.part`);
   const temporary = part();
   const spare = part();
   const old = await stat(target).catch(() => null);

@@ -83,7 +83,9 @@ const test = base.extend<{ desk: Desk }, { display: string }>({
         const [port] = readFileSync(note, "utf8").split("\n");
         const targets = async (): Promise<string> => (await fetch(`http://127.0.0.1:${port}/json/list`).catch(() => null))?.text() ?? "";
         await expect.poll(targets, { timeout: 30_000 }).toContain('"title": "');
-        return chromium.connectOverCDP(`http://127.0.0.1:${port}`, { timeout: 60_000 });
+        // A browser that is still loading its first window may leave the first caller without an answer.
+        const connect = (): Promise<Browser> => chromium.connectOverCDP(`http://127.0.0.1:${port}`, { timeout: 15_000 });
+        return connect().catch(connect).catch(connect);
       },
     });
     for (const child of started) child.kill("SIGTERM");

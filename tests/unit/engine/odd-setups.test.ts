@@ -105,7 +105,8 @@ describe("metal", () => {
   it("as rings in rings keeps the water between and inside them at the outermost ring's potential", async () => {
     const answer = await planned("a ring in a ring round a disc");
     const { volts } = conductor(answer, "R1");
-    expect(volts).not.toBeCloseTo(3, 6);
+    // Off the middle of the tray, so that half of the supply is not the answer by symmetry alone.
+    expect(volts).toBeLessThan(2.9);
     for (const id of ["R2", "D"]) expect(conductor(answer, id).volts).toBeCloseTo(volts, 5);
     for (const { volts: inside } of answer.read([150, 140], [145, 125], [160, 82])) expect(inside).toBeCloseTo(volts, 5);
   });

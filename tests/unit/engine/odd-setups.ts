@@ -66,7 +66,7 @@ const ODD = {
   "a wedge whose waterline runs through an electrode": inWater({ depthMm: 6, tiltXDeg: 4 }),
   "a tray tilted by 45° both ways": inWater({ depthMm: 12, tiltXDeg: 45, tiltYDeg: 45 }),
   "a ring in a ring round a disc": withBars(
-    loose(place("R1", 150, 110, ring(90, 80))),
+    loose(place("R1", 140, 110, ring(90, 80))),
     loose(place("R2", 145, 110, ring(50, 44))),
     loose(place("D", 143, 112, disc(10))),
   ),
