@@ -79,6 +79,13 @@ describe("iterations to 1e-9 of the power", () => {
   });
 });
 
+it("coarse nodes of which metal leaves next to nothing do not upset single precision", () => {
+  // At this pitch the loose disc's edge leaves shares that shrink from level to level.
+  const setup = randomSetup(7004, { insulators: true, slabs: true, tilt: false });
+  const network = networkOf(setup, pitchFor(setup.tray, "reference"));
+  expect(finished(solveUnitPotentials(network, { tolerance: FINE_TOLERANCE })).record.iterations).toBeLessThanOrEqual(10);
+});
+
 /** The preconditioner applied to a residual: the red nodes' numbers and the floating conductors'. */
 function preconditioned(kernels: Kernels, red: Float64Array): Float64Array {
   const length = kernels.redLength();

@@ -2,7 +2,7 @@
  * The Galerkin product: what the finer network conducts between two coarse basis functions. With the shares of weights.ts no
  * current enters a node in the middle of four, so that only five of a basis function's nine nodes count.
  */
-import { at, Level, plus, scatterRow } from "./memory";
+import { at, LEAST_MM, Level, plus, scatterRow } from "./memory";
 import { fiveOtherShares, fiveRowShares, nineOtherShares, nineRowShares } from "./weights";
 
 /** What the misses of row J make flow into its nodes (odd, even) and (even, odd): the coarse ties come from it. */
@@ -243,6 +243,9 @@ function coarsenRows(level: Level, coarse: Level, nine: bool): void {
   }
 }
 
+/** A centre that negative links or ties all but cancel is held to this share of the links, as rounding would have its say in it. */
+const LEAST_CENTRE: f32 = 0.02;
+
 /** The inverses of the centres of a coarse level: its links and ties added up. */
 function invertCentres(level: Level): void {
   const r = level.row;
@@ -259,12 +262,16 @@ function invertCentres(level: Level): void {
     for (let J = 0; J < level.height; J++) {
       const o = <usize>J * r;
       for (let i = o; i < o + span; i += 16) {
+        let links = f32x4.add(f32x4.abs(at(level.east + k * p + i)), f32x4.abs(at(level.east + west + i)));
         let sum = f32x4.add(at(level.east + k * p + i), at(level.east + west + i));
-        let other = f32x4.add(at(level.north + k * p + i), at(level.north + down + i));
+        links = f32x4.add(links, f32x4.add(f32x4.abs(at(level.north + k * p + i)), f32x4.abs(at(level.north + down + i))));
+        sum = f32x4.add(sum, f32x4.add(at(level.north + k * p + i), at(level.north + down + i)));
+        links = f32x4.add(links, f32x4.add(f32x4.abs(at(level.northEast + k * p + i)), f32x4.abs(at(level.northEast + downWest + i))));
         sum = f32x4.add(sum, f32x4.add(at(level.northEast + k * p + i), at(level.northEast + downWest + i)));
-        other = f32x4.add(other, f32x4.add(at(level.northWest + k * p + i), at(level.northWest + downEast + i)));
-        sum = f32x4.add(f32x4.add(sum, other), at(level.excess + k * p + i));
-        const linked = f32x4.gt(sum, f32x4.splat(0));
+        links = f32x4.add(links, f32x4.add(f32x4.abs(at(level.northWest + k * p + i)), f32x4.abs(at(level.northWest + downEast + i))));
+        sum = f32x4.add(sum, f32x4.add(at(level.northWest + k * p + i), at(level.northWest + downEast + i)));
+        sum = f32x4.max(f32x4.add(sum, at(level.excess + k * p + i)), f32x4.mul(links, f32x4.splat(LEAST_CENTRE)));
+        const linked = f32x4.gt(sum, f32x4.splat(LEAST_MM));
         const one = f32x4.splat(1);
         v128.store(level.inverse + k * p + i, v128.and(f32x4.div(one, v128.bitselect(sum, one, linked)), linked));
       }

@@ -3,7 +3,8 @@
  * themselves. To the finer level each gives shares Q at the nodes beside it, so that water at its potential stays at it:
  * C' = Pᵀ(C − A·Q), D' = D − Qᵀ(C − A·Q) − CᵀQ, with A the links of the level and P its interpolation.
  */
-import { Level, place, take, takeNext } from "./memory";
+import { LEAST_MM, Level, place, take, takeNext } from "./memory";
+import { LEAST_REST } from "./weights";
 
 /** The nodes that a floating conductor is tied to, and those to which it gives a share: lists of records. */
 @unmanaged
@@ -114,16 +115,27 @@ function link(level: Level, group: usize, x: i32, y: i32): f64 {
   return group === 0 ? 0 : <f64>load<f32>(group + place(level, x, y));
 }
 
+/** All that a node conducts, from its links and ties: not from its inverse, which is zero where little is left of a node. */
+function centreOf(level: Level, x: i32, y: i32): f64 {
+  let sum = link(level, level.excess, x, y);
+  sum += link(level, level.east, x, y) + link(level, level.east, x - 1, y);
+  sum += link(level, level.north, x, y) + link(level, level.north, x, y - 1);
+  sum += link(level, level.northEast, x, y) + link(level, level.northEast, x - 1, y - 1);
+  return sum + link(level, level.northWest, x, y) + link(level, level.northWest, x + 1, y - 1);
+}
+
 /** Share of a conductor at a node on a coarse row (odd, even) or column (even, odd): as in weights.ts. */
 function lineShare(level: Level, x: i32, y: i32, tie: f64): f64 {
   const onRow = (x & 1) !== 0;
-  let both = onRow
-    ? link(level, level.east, x, y) + link(level, level.east, x - 1, y)
-    : link(level, level.north, x, y) + link(level, level.north, x, y - 1);
-  both += link(level, level.northEast, x, y) + link(level, level.northWest, x, y);
-  both += link(level, level.northEast, x - 1, y - 1) + link(level, level.northWest, x + 1, y - 1);
-  if (!(both > 0)) return 0;
-  const rest = max(both + link(level, level.excess, x, y), 0.3 * both);
+  const southWest = link(level, level.northEast, x - 1, y - 1);
+  const northEast = link(level, level.northEast, x, y);
+  const northWest = link(level, level.northWest, x, y);
+  const southEast = link(level, level.northWest, x + 1, y - 1);
+  const a = onRow ? link(level, level.east, x - 1, y) + southWest + northWest : link(level, level.north, x, y - 1) + southWest + southEast;
+  const b = onRow ? link(level, level.east, x, y) + northEast + southEast : link(level, level.north, x, y) + northEast + northWest;
+  const links = abs(a) + abs(b);
+  if (!(links > LEAST_MM)) return 0;
+  const rest = max(a + b + link(level, level.excess, x, y), LEAST_REST * links);
   return tie / rest;
 }
 
@@ -197,7 +209,7 @@ function subtractFlows(level: Level, border: Border): void {
     const x = xOf(share);
     const y = yOf(share);
     const value = valueOf(share);
-    addAt(leftField, x, y, -value / link(level, level.inverse, x, y));
+    addAt(leftField, x, y, -value * centreOf(level, x, y));
     addAt(leftField, x + 1, y, link(level, level.east, x, y) * value);
     addAt(leftField, x - 1, y, link(level, level.east, x - 1, y) * value);
     addAt(leftField, x, y + 1, link(level, level.north, x, y) * value);

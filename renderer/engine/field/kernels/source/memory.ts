@@ -47,6 +47,12 @@ export function giveBack(to: usize): void {
   top = to;
 }
 
+/**
+ * Conductances (mm of depth) below this count as none on the coarser levels: what is left of a node beside metal, whose smallness
+ * would be squared from level to level until single precision cannot hold it.
+ */
+export const LEAST_MM: f32 = 1e-6;
+
 /** One grid: its planes, links and work arrays. All links are positive conductances and are kept once, with their first node. */
 @unmanaged
 export class Level {

@@ -6,17 +6,18 @@
  * Beside the shares stand their misses: by how much they fail to add up to 1. Away from conductors a miss is exactly 0, and the
  * coarse ties are made of misses alone, so that rounding never ties open water to earth.
  */
-import { at, Level, plus } from "./memory";
+import { at, LEAST_MM, Level, plus } from "./memory";
 
-/** A node whose ties all but cancel its links would get shares without bound: they are held to 1 / this. */
-const LEAST_REST: f32 = 0.3;
+/** A node whose ties or negative links all but cancel the rest would get shares without bound: they are held to 1 / this. */
+export const LEAST_REST: f32 = 0.3;
 
 /** Shares of two neighbours with summed conductances a and b, and their miss; `excess` is what ties the node elsewhere. */
 @inline
 function shareOut(a: v128, b: v128, excess: v128, toA: usize, toB: usize, toMiss: usize): void {
   const both = f32x4.add(a, b);
-  const rest = f32x4.max(f32x4.add(both, excess), f32x4.mul(both, f32x4.splat(LEAST_REST)));
-  const linked = f32x4.gt(both, f32x4.splat(0));
+  const links = f32x4.add(f32x4.abs(a), f32x4.abs(b));
+  const rest = f32x4.max(f32x4.add(both, excess), f32x4.mul(links, f32x4.splat(LEAST_REST)));
+  const linked = f32x4.gt(links, f32x4.splat(LEAST_MM));
   const one = f32x4.splat(1);
   const inverse = v128.and(f32x4.div(one, v128.bitselect(rest, one, linked)), linked);
   v128.store(toA, f32x4.mul(a, inverse));
