@@ -5,7 +5,7 @@ import { covers, distanceToOutline } from "../geometry/signed-distance";
 import { depthFromWallMm, traySizeMm } from "../geometry/tray-outline";
 import { crossingsBetween, type ScanAxis } from "./crossings";
 import type { Grid } from "./grid";
-import { insulatorCorners, isNearPlain, type Place } from "./insulator-corners";
+import { insulatorCorners, type Place } from "./insulator-corners";
 import { type FieldLayout, type Solid, wallThicknessMm } from "./layout";
 import { markDisc, markNear } from "./ownership";
 
@@ -162,7 +162,7 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
   const insideWall = (x: number, y: number): boolean => wall === null || Math.hypot(x - radius, y - radius) < radius;
   const pitch = Math.max(pitchXMm, pitchYMm);
   const thin = layout.insulators.filter((one) => wallThicknessMm(one.placed.shape) < 2 * pitch);
-  const corners = insulatorCorners(layout.insulators, 2 * pitch, MOST_REACH_CELLS * pitch, (solid, [x, y]) => {
+  const corners = insulatorCorners(layout.insulators, 1 * pitch, MOST_REACH_CELLS * pitch, (solid, [x, y]) => {
     const others = [...layout.conductors, ...layout.insulators].filter((other) => other !== solid);
     return Math.min(Math.max(0, depthFromWallMm(setup.tray, x, y)), ...others.map((other) => distanceToOutline(other.loops, x, y)));
   });
@@ -295,8 +295,7 @@ export function conductionOf(layout: FieldLayout, grid: Grid, wall: Loop | null,
   function cornerFactor({ axis, start, pitch, line, from, to }: Face, plainShape: number): number {
     const place = (along: number, across: number): Place => (axis === "row" ? [along, across] : [across, along]);
     const middle = start + pitch / 2;
-    const shape = corners.shapeOf(place(start, line), place(start + pitch, line), place(middle, from), place(middle, to));
-    return shape !== null && isNearPlain(shape, plainShape) ? shape / plainShape : 1;
+    return corners.shapeOf(place(start, line), place(start + pitch, line), place(middle, from), place(middle, to), plainShape) / plainShape;
   }
 
   return {

@@ -14,6 +14,8 @@ const PAUSE_EVERY = 500;
 /** Fitted conductances beyond these multiples of the plain one mean that the local potential does not apply. */
 const LEAST_OF_PLAIN = 0.05;
 const MOST_OF_PLAIN = 20;
+/** A node this near to the metal (share of the pitch) has next to its potential, whatever the plain scheme saw of it. */
+const AT_METAL = 0.25;
 /** What a corner may take from or add to a node that its conductor does not touch, as a share of the node's links. */
 const LEAST_OF_LINKS = -0.6;
 const MOST_OF_LINKS = 3;
@@ -79,6 +81,9 @@ function* fitBody(
   const contact = network.contacts[body];
   const ties = new Map<number, number>();
   const values = new Map<LocalPotential, NodeValues>();
+  const { loops } = layout.conductors[body];
+  const atMetal = (node: number): boolean =>
+    distanceToOutline(loops, (node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm) < AT_METAL * Math.min(pitchXMm, pitchYMm);
   const fittedAt = (node: number, potential: LocalPotential | null): number | null => {
     if (potential === null) return null;
     let at = values.get(potential);
@@ -95,8 +100,9 @@ function* fitBody(
     const potential = field.at((node % columns) * pitchXMm, Math.floor(node / columns) * pitchYMm);
     const fitted = fittedAt(node, potential);
     // A part tied to a single node is too small for the plain value to mean much.
-    const likely = contact.nodes.length === 1 || (fitted !== null && fitted > LEAST_OF_PLAIN * plain && fitted < MOST_OF_PLAIN * plain);
-    if (fitted !== null && fitted > 0 && likely) ties.set(node, fitted);
+    const likely = (value: number): boolean =>
+      contact.nodes.length === 1 || (value > LEAST_OF_PLAIN * plain && (value < MOST_OF_PLAIN * plain || atMetal(node)));
+    if (fitted !== null && fitted > 0 && likely(fitted)) ties.set(node, fitted);
   });
   const [left, bottom, right, top] = layout.conductors[body].bounds;
   let looked = 0;
@@ -118,7 +124,7 @@ function* fitBody(
       const fitted = fittedAt(node, potential);
       if (fitted === null) continue;
       const share = fitted / linkSum(network, node);
-      if (share > LEAST_OF_LINKS && (share < MOST_OF_LINKS || contact.nodes.length <= 1)) ties.set(node, fitted);
+      if (share > LEAST_OF_LINKS && (share < MOST_OF_LINKS || contact.nodes.length <= 1 || atMetal(node))) ties.set(node, fitted);
     }
   }
   const nodes = [...ties.keys()].sort((a, b) => a - b);

@@ -11,16 +11,19 @@ export interface InsulatorCorners {
   readonly corners: readonly Corner[];
   /**
    * @param a, b the link's nodes; p, q the ends of its dual face (mm).
-   * @returns width over length of the link, or null where no corner rules or its flow runs along the face.
+   * @param plain width over length of the link as the plain scheme has it.
+   * @returns width over length of the link that carries the corner's flow; `plain` where no corner rules.
    */
-  readonly shapeOf: (a: Place, b: Place, p: Place, q: Place) => number | null;
+  readonly shapeOf: (a: Place, b: Place, p: Place, q: Place, plain: number) => number;
 }
 
 export type Place = readonly [number, number];
 
-/** Fitted links beyond these multiples of the plain open one are left plain. */
+/** Where the flow runs along the face, its stream and difference are both small: beyond these multiples of the plain link it is left plain. */
 const LEAST_OF_PLAIN = 0.2;
 const MOST_OF_PLAIN = 5;
+/** A difference of this share of the corner's own field over the link's length says enough for a link to be all but shut. */
+const TELLING = 0.3;
 
 function streamAt({ x: x0, y: y0, along, waterAngle }: Corner, [x, y]: Place): number {
   const exponent = Math.PI / waterAngle;
@@ -56,18 +59,19 @@ export function insulatorCorners(
   );
   return {
     corners,
-    shapeOf: (a, b, p, q) => {
+    shapeOf: (a, b, p, q, plain) => {
       const x = (a[0] + b[0]) / 2;
       const y = (a[1] + b[1]) / 2;
       const corner = corners.find((one) => Math.hypot(x - one.x, y - one.y) < one.reachMm);
-      if (corner === undefined) return null;
+      if (corner === undefined) return plain;
       const stream = Math.abs(streamAt(corner, q) - streamAt(corner, p));
       const difference = Math.abs(potentialAt(corner, b) - potentialAt(corner, a));
       const shape = stream / difference;
-      return Number.isFinite(shape) && shape > 0 ? shape : null;
+      if (!(shape < MOST_OF_PLAIN * plain)) return plain;
+      const exponent = Math.PI / corner.waterAngle;
+      const field = exponent * Math.hypot(x - corner.x, y - corner.y) ** (exponent - 1);
+      const tells = difference > TELLING * field * Math.hypot(b[0] - a[0], b[1] - a[1]);
+      return tells || shape > LEAST_OF_PLAIN * plain ? shape : plain;
     },
   };
 }
-
-/** @returns whether a fitted link may take the place of a plain one. */
-export const isNearPlain = (fitted: number, plain: number): boolean => fitted > LEAST_OF_PLAIN * plain && fitted < MOST_OF_PLAIN * plain;
