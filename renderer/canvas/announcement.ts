@@ -1,9 +1,10 @@
 import type { DocumentState } from "../document/document";
 import { thingById, thingName, thingsOf } from "../document/edit";
 import { sizeText } from "../document/number-text";
+import { texts } from "../texts/texts";
 import { placeWords } from "./describe-thing";
 
-const capital = (text: string): string => `${text.charAt(0).toUpperCase()}${text.slice(1)}`;
+const words = texts.canvas.said;
 
 /** The one thing whose place or size a step changed, in its new state; "" where it was another kind of step. */
 function newState(now: DocumentState, before: DocumentState): string {
@@ -12,7 +13,7 @@ function newState(now: DocumentState, before: DocumentState): string {
   if (only === undefined || changed.length > 1) return "";
   const old = thingById(before.setup, only.id);
   const resized = old !== undefined && old.shape !== only.shape;
-  return `: ${resized ? `${sizeText(only.shape)}, ` : ""}${placeWords(only)}`;
+  return `${resized ? `${sizeText(only.shape)}, ` : ""}${placeWords(only)}`;
 }
 
 /**
@@ -22,7 +23,7 @@ function newState(now: DocumentState, before: DocumentState): string {
  */
 export function announcement(now: DocumentState, before: DocumentState): string | null {
   const [refusal] = now.refused;
-  if (refusal !== undefined && now.refused !== before.refused) return `Refused. ${refusal.message}`;
+  if (refusal !== undefined && now.refused !== before.refused) return words.refused(refusal.message);
   if (now.drag !== null) return null;
   const start = before.drag === null ? before : { ...before, setup: before.drag.before };
   if (now.setup !== start.setup) {
@@ -30,11 +31,14 @@ export function announcement(now: DocumentState, before: DocumentState): string 
     const label = undone ? now.future.at(-1)?.label : now.past.at(-1)?.label;
     if (label === undefined) return null;
     const redone = !undone && now.future.length < start.future.length && start.future.at(-1)?.label === label;
-    return `${undone ? "Undone: " : redone ? "Redone: " : ""}${undone || redone ? label : capital(label)}${undone ? "" : newState(now, start)}`;
+    if (undone) return words.undone(label);
+    const done = redone ? words.redone(label) : words.done(label);
+    const state = newState(now, start);
+    return state === "" ? done : words.withState(done, state);
   }
   if (now.selection === before.selection) return null;
   const [id] = now.selection;
   const thing = id === undefined ? undefined : thingById(now.setup, id);
-  if (thing === undefined) return "Nothing selected";
-  return now.selection.length === 1 ? `${thingName(thing)} selected, ${placeWords(thing)}` : `${now.selection.length} selected`;
+  if (thing === undefined) return words.nothingSelected;
+  return now.selection.length === 1 ? words.selected(thingName(thing), placeWords(thing)) : words.manySelected(now.selection.length);
 }

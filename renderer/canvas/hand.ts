@@ -4,11 +4,15 @@ import type { Document } from "../document/document";
 import { type BoxMm, isPart, namesOf, type Thing, thingById, thingsById, thingsOf, tidyMm } from "../document/edit";
 import { sizeText, trimmed } from "../document/number-text";
 import { traySizeMm } from "../engine/geometry/tray-outline";
+import { texts } from "../texts/texts";
 import { type Gap, gapsAround } from "./gaps";
 import { type Guide, snappedMove } from "./guides";
 import { draggedHandle, type Handle, handlesOf, type Placed } from "./handles";
 import { boxOfThing, handleAt, thingAt, thingsWithin } from "./hit";
 import { type Place, toTray, type View } from "./view";
+
+const { steps } = texts.document;
+const words = texts.canvas.hand;
 
 /** What the pointer does on the tray: select, frame, move, turn, resize, pan. No DOM: places in px of the stage come in, edits go out. */
 
@@ -130,7 +134,7 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
     if (handle !== null && handled !== undefined) {
       const [x, y] = onTray(at);
       doing = { kind: "handling", handle, thing: handled, off: [handle.xMm - x, handle.yMm - y], before: setup };
-      actions.startDrag(`${handle.kind === "turn" ? "turn" : "resize"} ${namesOf(setup, [handled.id])}`);
+      actions.startDrag((handle.kind === "turn" ? steps.turn : steps.resize)(namesOf(setup, [handled.id])));
       show({ ...IDLE, cursor: handle.kind === "turn" ? "grabbing" : cursorOf(handle), activeHandle: handle.kind });
       return;
     }
@@ -177,9 +181,7 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
     const alone = ids.length === 1 && moved.ok ? thingById(moved.value, lead.id) : undefined;
     const gaps = alone === undefined || !isPart(alone) ? [] : gapsAround(alone, before);
     const live =
-      ids.length === 1
-        ? `x ${trimmed(lead.xMm + byX, 2)}, y ${trimmed(lead.yMm + byY, 2)} mm`
-        : `by ${trimmed(byX, 2)}, ${trimmed(byY, 2)} mm`;
+      ids.length === 1 ? words.place(trimmed(lead.xMm + byX, 2), trimmed(lead.yMm + byY, 2)) : words.by(trimmed(byX, 2), trimmed(byY, 2));
     show({ ...IDLE, cursor: "move", live, guides: reach < 0 ? [] : snapped.guides, gaps });
   }
 
@@ -195,10 +197,10 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
     const turning = handle.kind === "turn";
     actions.dragTo(
       turning
-        ? { ...placeThing(before, thing.id, { turnDeg: now.turnDeg }), label: `turn ${namesOf(before, [thing.id])}` }
+        ? { ...placeThing(before, thing.id, { turnDeg: now.turnDeg }), label: steps.turn(namesOf(before, [thing.id])) }
         : resizeThing(before, thing.id, now.shape, { xMm: now.xMm, yMm: now.yMm }),
     );
-    const live = turning ? `${trimmed(now.turnDeg, 2)}°` : sizeText(now.shape);
+    const live = turning ? words.angle(trimmed(now.turnDeg, 2)) : sizeText(now.shape);
     show({ ...IDLE, cursor: turning ? "grabbing" : cursorOf(handle), activeHandle: handle.kind, live });
   }
 
@@ -222,7 +224,7 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
         if (!editable || Math.hypot(at[0] - from[0], at[1] - from[1]) < CLICK_PX) return;
         const ids = selection.includes(thing.id) ? selection : [thing.id];
         doing = { kind: "moving", from, lead: thing, ids, before: setup };
-        actions.startDrag(`move ${namesOf(setup, ids)}`);
+        actions.startDrag(steps.move(namesOf(setup, ids)));
         moveOn(at, doing, modifiers);
         break;
       }

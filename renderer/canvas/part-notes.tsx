@@ -1,6 +1,7 @@
 import type { Finding, Severity } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { thingById } from "../document/edit";
+import { texts } from "../texts/texts";
 import { outlinedThing } from "./hit";
 import { toScreen, type View } from "./view";
 
@@ -72,7 +73,7 @@ export function PartNotes(props: {
         >
           <SeverityMark severity={finding.severity} />
           <span>
-            <strong>{finding.severity === "stop" ? "Stop" : finding.severity === "caution" ? "Caution" : "Note"}</strong> {finding.message}
+            <strong>{texts.canvas.severities[finding.severity]}</strong> {finding.message}
           </span>
         </p>
       ))}

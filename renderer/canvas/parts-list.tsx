@@ -1,7 +1,10 @@
 import { type KeyboardEvent, memo, useId, useState } from "react";
 import type { Setup } from "../../shared-types/setup";
 import { type Thing, thingsOf } from "../document/edit";
+import { texts } from "../texts/texts";
 import { describeThing } from "./describe-thing";
+
+const words = texts.canvas.list;
 
 /** One thing; drawn again only when it changes itself, since a drag changes one of many in every frame. */
 const Row = memo(function Row(props: {
@@ -74,12 +77,12 @@ export function PartsList(props: {
 
   return (
     <div className="parts-list">
-      <p id={`${prefix}-help`}>Parts in the tray. Arrow keys choose, Space adds or drops, Enter goes to the tray to move them.</p>
+      <p id={`${prefix}-help`}>{words.help}</p>
       {/* One stop for the Tab key; the active option is named by aria-activedescendant. */}
       <div
         role="listbox"
         tabIndex={0}
-        aria-label="Parts in the tray"
+        aria-label={words.label}
         aria-describedby={`${prefix}-help`}
         aria-multiselectable="true"
         aria-activedescendant={activeThing === undefined ? undefined : `${prefix}-${activeThing.id}`}
@@ -99,7 +102,7 @@ export function PartsList(props: {
         ))}
         {things.length === 0 && (
           <div role="option" tabIndex={-1} aria-selected="false" aria-disabled="true">
-            No parts yet
+            {words.none}
           </div>
         )}
       </div>

@@ -3,9 +3,12 @@ import type { Part, Setup } from "../../shared-types/setup";
 import { radians } from "../../shared-types/units";
 import { trimmed } from "../document/number-text";
 import { covers } from "../engine/geometry/signed-distance";
+import { texts } from "../texts/texts";
 import { outlinedThing } from "./hit";
 import { type Crowd, createCrowd, type PixelBox } from "./point-numbers";
 import { toScreen, toTray, type View } from "./view";
+
+const words = texts.canvas.tags;
 
 /** The small sign beside a conductor: which lead it is on and its volts, or that it floats. */
 export interface Tag {
@@ -31,11 +34,11 @@ function signOf(part: Part): Tag["sign"] {
 
 /** What a tag may say, the best first, shorter ones for where it finds no room. The dashed edge alone says that a part floats. */
 function textsOf(part: Part, setup: Setup, plan: Plan | null): readonly string[] {
-  if (part.role === "electrode") return [`${trimmed(part.tap * setup.supply.volts, 3)} V`];
+  if (part.role === "electrode") return [words.volts(trimmed(part.tap * setup.supply.volts, 3))];
   const reading = plan?.conductors.find(({ id }) => id === part.id);
-  if (reading === undefined) return ["floats"];
-  const volts = `${trimmed(reading.volts, 2)} V`;
-  return [`floats ${volts}`, volts];
+  if (reading === undefined) return [words.floats];
+  const volts = trimmed(reading.volts, 2);
+  return [words.floatsAt(volts), words.volts(volts)];
 }
 
 /** Room that a tag inside a part leaves to the part's edge, px. */

@@ -1,9 +1,12 @@
 import type { Setup } from "../../shared-types/setup";
 import { trimmed } from "../document/number-text";
 import { pointAlong } from "../engine/geometry/outline";
+import { texts } from "../texts/texts";
 import { closestOnOutline } from "./gaps";
 import { outlinedThing, topDown } from "./hit";
 import { type Place, toScreen, toTray, type View } from "./view";
+
+const words = texts.canvas.tape;
 
 /** The measuring tape: pulled from one place to another, it holds to corners, edges and middles of what lies there. */
 
@@ -53,9 +56,9 @@ export function tapeEnd({ setup, view }: TapeWorld, at: Place): Place {
 /** @returns the tape's reading: its length, and how far it goes along x and y. */
 export function tapeText({ from, to }: Tape): string {
   const [dx, dy] = [to[0] - from[0], to[1] - from[1]];
-  const length = `${trimmed(Math.hypot(dx, dy), 1)} mm`;
+  const length = words.length(trimmed(Math.hypot(dx, dy), 1));
   const slanted = Math.abs(dx) > 0.05 && Math.abs(dy) > 0.05;
-  return slanted ? `${length} (${trimmed(Math.abs(dx), 1)} across, ${trimmed(Math.abs(dy), 1)} up)` : length;
+  return slanted ? words.slanted(length, trimmed(Math.abs(dx), 1), trimmed(Math.abs(dy), 1)) : length;
 }
 
 /**

@@ -3,6 +3,7 @@ import { Stage } from "react-konva";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import { texts } from "../texts/texts";
 import { type CanvasActions, shownHandles } from "./hand";
 import { actOnKey, useClipboard, useDrop } from "./input";
 import { paintGaps, paintGuides, paintLength } from "./paint/guides";
@@ -94,7 +95,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
         ref={surface}
         className={`tray-surface${drop.over ? " dropping" : ""}`}
         role="application"
-        aria-label={`Tray with ${count} ${count === 1 ? "part" : "parts"}. Arrow keys move what is selected.`}
+        aria-label={texts.canvas.tray(count)}
         // biome-ignore lint/a11y/noNoninteractiveTabindex: the keys act here.
         tabIndex={0}
         style={{ cursor }}
@@ -113,7 +114,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
         </Stage>
       </div>
       {field !== null && shown.picture && !field.outOfDate && <VoltScale plan={field.plan} dark={theme.dark} />}
-      {count === 0 && <p className="tray-empty">Drag a bar or a disc from the shelf onto the tray, or press Enter on one there.</p>}
+      {count === 0 && <p className="tray-empty">{texts.canvas.empty}</p>}
       <PartNotes findings={findings} setup={setup} view={view} attended={attended} />
       {look.live !== null && place !== null && (
         <output className="live-number" style={{ left: place[0] + 16, top: place[1] + 22 }} aria-hidden="true">

@@ -3,6 +3,7 @@ import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { decimalsForStep, fixed, trimmed } from "../document/number-text";
 import { signedDistance } from "../engine/geometry/signed-distance";
+import { texts } from "../texts/texts";
 import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
 import { fieldPixels, imageOf } from "./field-image";
 import type { Gap } from "./gaps";
@@ -135,7 +136,7 @@ export function useFieldPaint(
     return placeLabels(
       plan.equipotentials,
       view,
-      (volts) => [`${fixed(volts, decimals)} V`, fixed(volts, decimals), trimmed(volts, decimals)],
+      (volts) => [texts.canvas.tags.volts(fixed(volts, decimals)), fixed(volts, decimals), trimmed(volts, decimals)],
       widths.label,
       taken,
     );

@@ -2,8 +2,11 @@ import { z } from "zod";
 import type { Problem, Result } from "../../shared-types/result";
 import { failure, success } from "../../shared-types/result";
 import type { Part, Setup, Slab } from "../../shared-types/setup";
+import { texts } from "../texts/texts";
 import { freshId } from "./commands/parts";
 import { type Edit, isPart, thingsById, tidyMm } from "./edit";
+
+const words = texts.document.clipping;
 
 /** Parts and slabs as text: what is copied can be read by a person, pasted into another window, or kept in a mail. */
 
@@ -39,9 +42,9 @@ function readClipping(text: string): Result<Clipping> {
   if (parsed.success) return success(parsed.data);
   const problems: readonly Problem[] = parsed.error.issues.map(({ path, message }) => ({
     where: path.join("."),
-    message: `the copied parts are damaged at ${path.join(".")}: ${message}`,
+    message: words.damagedAt(path.join("."), message),
   }));
-  return problems.length > 0 ? { ok: false, problems } : failure("", "the copied parts are damaged");
+  return problems.length > 0 ? { ok: false, problems } : failure("", words.damaged);
 }
 
 /** A pasted thing beside what already lies in its place, mm. */
@@ -72,7 +75,7 @@ export function pasteThings(text: string): Result<Edit> | null {
   const count = parts.length + slabs.length;
   return success({
     name: "paste",
-    label: `paste ${count} ${slabs.length === 0 ? "part" : parts.length === 0 ? "slab" : "thing"}${count === 1 ? "" : "s"}`,
+    label: texts.document.steps.paste(count, slabs.length === 0 ? "part" : parts.length === 0 ? "slab" : "thing"),
     apply: (before) => {
       const taken: string[] = [];
       const steps = stepsAside(before, [...parts, ...slabs]);

@@ -1,4 +1,7 @@
 import type { Part, Setup, Slab } from "../../shared-types/setup";
+import { texts } from "../texts/texts";
+
+const words = texts.document.things;
 
 /** One edit of a setup: pure, so that undo, redo and a drag's preview need nothing but the setups before and after. */
 export interface Edit {
@@ -34,8 +37,8 @@ export const thingsById = (setup: Setup, ids: readonly string[]): readonly Thing
 
 /** @returns what a person calls a thing: its name, else its kind and id. */
 export function thingName(thing: Thing): string {
-  if (isPart(thing)) return thing.name.trim() || `${thing.shape.kind} ${thing.id}`;
-  return `slab ${thing.id}`;
+  if (isPart(thing)) return thing.name.trim() || words.nameless(thing.shape.kind, thing.id);
+  return words.slab(thing.id);
 }
 
 /** @returns "Left bar", "Left bar and Right bar", "4 parts": the things with these ids, for a label. */
@@ -43,9 +46,9 @@ export function namesOf(setup: Setup, ids: readonly string[]): string {
   const things = thingsById(setup, ids);
   const [first, second] = things;
   if (first !== undefined && things.length === 1) return thingName(first);
-  if (first !== undefined && second !== undefined && things.length === 2) return `${thingName(first)} and ${thingName(second)}`;
+  if (first !== undefined && second !== undefined && things.length === 2) return words.both(thingName(first), thingName(second));
   const slabs = things.filter((thing) => !isPart(thing)).length;
-  return `${things.length} ${slabs === things.length ? "slabs" : slabs === 0 ? "parts" : "parts and slabs"}`;
+  return words.many(things.length, slabs === things.length ? "slabs" : slabs === 0 ? "parts" : "both");
 }
 
 /** What of a thing an edit of its place or shape may change. */

@@ -1,4 +1,7 @@
 import type { Shape } from "../../shared-types/setup";
+import { texts } from "../texts/texts";
+
+const words = texts.document.sizes;
 
 /**
  * Numbers as the screen writes them: the decimal sign of the user's language, never more digits than asked for. Hundreds of them
@@ -30,16 +33,16 @@ export function sizeText(shape: Shape): string {
   const mm = (value: number): string => trimmed(value, 2);
   switch (shape.kind) {
     case "bar":
-      return `${mm(shape.lengthMm)} × ${mm(shape.widthMm)} mm`;
+      return words.bar(mm(shape.lengthMm), mm(shape.widthMm));
     case "disc":
-      return `⌀ ${mm(shape.diameterMm)} mm`;
+      return words.disc(mm(shape.diameterMm));
     case "ring":
-      return `⌀ ${mm(shape.outerMm)} outside, ${mm(shape.innerMm)} inside mm`;
+      return words.ring(mm(shape.outerMm), mm(shape.innerMm));
     case "arc":
-      return `⌀ ${mm(shape.outerMm)} / ${mm(shape.innerMm)} mm, ${mm(shape.sweepDeg)}°`;
+      return words.arc(mm(shape.outerMm), mm(shape.innerMm), mm(shape.sweepDeg));
     case "frame":
-      return `${mm(shape.lengthMm)} × ${mm(shape.widthMm)} mm, wall ${mm(shape.wallMm)} mm`;
+      return words.frame(mm(shape.lengthMm), mm(shape.widthMm), mm(shape.wallMm));
     case "polygon":
-      return `${shape.pointsMm.length} corners`;
+      return words.polygon(shape.pointsMm.length);
   }
 }

@@ -1,26 +1,9 @@
 import type { Problem } from "../../shared-types/result";
 import type { Setup } from "../../shared-types/setup";
+import { texts } from "../texts/texts";
 import { thingName } from "./edit";
 
-/** What a person calls a key of the file; a key not listed is shown with its words apart. */
-const WORDS: Readonly<Record<string, string>> = {
-  xMm: "x",
-  yMm: "y",
-  turnDeg: "turn",
-  outerMm: "outer diameter",
-  innerMm: "inner diameter",
-  wallMm: "wall",
-  sweepDeg: "sweep",
-  pointsMm: "corners",
-  conductivityUsPerCm: "conductivity",
-  targetConductivityUsPerCm: "conductivity aimed at",
-  temperatureC: "temperature",
-  tiltXDeg: "tilt along x",
-  tiltYDeg: "tilt along y",
-  volts: "voltage",
-  currentLimitA: "current limit",
-  frequencyHz: "frequency",
-};
+const { keys: WORDS, part: PART } = texts.document;
 const UNITS: readonly (readonly [ending: RegExp, unit: string])[] = [
   [/UsPerCm$/, "µS/cm"],
   [/UfPerCm2$/, "µF/cm²"],
@@ -56,7 +39,7 @@ function ownerOf(where: string, setup: Setup): readonly [owner: string, rest: st
   }
   const things = where.startsWith("parts") ? setup.parts : setup.water.slabs;
   const thing = things[Number(match[1])];
-  return [thing === undefined ? "part" : thingName(thing), match[2] ?? ""];
+  return [thing === undefined ? PART : thingName(thing), match[2] ?? ""];
 }
 
 /**

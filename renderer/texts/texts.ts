@@ -1,4 +1,6 @@
 import { benchTexts } from "./bench-texts";
+import { canvasTexts } from "./canvas-texts";
+import { documentTexts } from "./document-texts";
 import { fileTexts } from "./file-texts";
 import { layOutTexts } from "./lay-out-texts";
 import { probeTexts, sheetTexts } from "./paper-texts";
@@ -9,6 +11,8 @@ import { windowTexts } from "./window-texts";
 export const texts = {
   window: windowTexts,
   layOut: layOutTexts,
+  canvas: canvasTexts,
+  document: documentTexts,
   files: fileTexts,
   bench: benchTexts,
   readouts: readoutTexts,

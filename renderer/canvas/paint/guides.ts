@@ -1,4 +1,5 @@
 import { trimmed } from "../../document/number-text";
+import { texts } from "../../texts/texts";
 import type { Gap } from "../gaps";
 import type { Guide } from "../guides";
 import type { CanvasTheme } from "../theme";
@@ -74,5 +75,5 @@ export function paintLength(
 /** Clear gaps to neighbours and wall while a part moves. */
 export function paintGaps(pen: Pen, gaps: readonly Gap[], view: View, theme: CanvasTheme): void {
   for (const { from, to, gapMm } of gaps)
-    paintLength(pen, toScreen(view, ...from), toScreen(view, ...to), `${trimmed(gapMm, 1)} mm`, theme);
+    paintLength(pen, toScreen(view, ...from), toScreen(view, ...to), texts.canvas.hand.gap(trimmed(gapMm, 1)), theme);
 }

@@ -1,5 +1,6 @@
 import type { Tray } from "../../../shared-types/setup";
 import { traySizeMm } from "../../engine/geometry/tray-outline";
+import { texts } from "../../texts/texts";
 import type { CanvasTheme } from "../theme";
 import { toScreen, type View } from "../view";
 import { WALL_MM } from "./bench";
@@ -104,11 +105,11 @@ export function paintRules(pen: Pen, tray: Tray, view: View, theme: CanvasTheme)
   pen.lineWidth = 1;
   pen.stroke();
   pen.textAlign = "right";
-  pen.fillText("x mm", right - 2, ruleTop + 18);
+  pen.fillText(texts.canvas.rules.x, right - 2, ruleTop + 18);
   pen.save();
   pen.translate(ruleRight - 18, top + 2);
   pen.rotate(-Math.PI / 2);
-  pen.fillText("y mm", 0, 0);
+  pen.fillText(texts.canvas.rules.y, 0, 0);
   pen.restore();
   paintCorner(pen, ruleTop, ruleRight, left, bottom, theme);
 }

@@ -1,24 +1,27 @@
 import type { RemedyEdit } from "../../../shared-types/plan";
 import type { Interface, Meter, Probing, Session, Setup, Shape, Slab, Supply, Tray, Water } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import { type Edit, tidyMm } from "../edit";
 import { freshId } from "./parts";
+
+const words = texts.document.steps;
 
 /** Edits of everything that is no part: tray, water, slabs, supply, meter, probing, session and texts. */
 
 /** @returns the tray changed; a round tray becomes rectangular (or back) by handing in a whole tray. */
-export const changeTray = (tray: Tray): Edit => ({ name: "tray", label: "change tray", apply: (setup) => ({ ...setup, tray }) });
+export const changeTray = (tray: Tray): Edit => ({ name: "tray", label: words.tray, apply: (setup) => ({ ...setup, tray }) });
 
 /** @returns the water changed in these keys (slabs have their own edits). */
 export const changeWater = (change: Partial<Omit<Water, "slabs">>): Edit => ({
   name: "water",
-  label: "change water",
+  label: words.water,
   apply: (setup) => ({ ...setup, water: { ...setup.water, ...change } }),
 });
 
 /** @returns the supply changed in these keys. AC without a frequency takes 50 Hz, since AC at 0 Hz is none. */
 export const changeSupply = (change: Partial<Supply>): Edit => ({
   name: "supply",
-  label: "change supply",
+  label: words.supply,
   apply: (setup) => {
     const supply = { ...setup.supply, ...change };
     const needsFrequency = change.waveform === "ac" && supply.frequencyHz <= 0;
@@ -29,35 +32,35 @@ export const changeSupply = (change: Partial<Supply>): Edit => ({
 /** @returns the estimate of the electrodes' surfaces changed in these keys. */
 export const changeInterface = (change: Partial<Interface>): Edit => ({
   name: "interface",
-  label: "change electrode surfaces",
+  label: words.surfaces,
   apply: (setup) => ({ ...setup, interface: { ...setup.interface, ...change } }),
 });
 
 /** @returns the meter changed in these keys. */
 export const changeMeter = (change: Partial<Meter>): Edit => ({
   name: "meter",
-  label: "change meter",
+  label: words.meter,
   apply: (setup) => ({ ...setup, meter: { ...setup.meter, ...change } }),
 });
 
 /** @returns the probe plan's settings changed in these keys. */
 export const changeProbing = (change: Partial<Probing>): Edit => ({
   name: "probing",
-  label: "change probe plan",
+  label: words.probing,
   apply: (setup) => ({ ...setup, probing: { ...setup.probing, ...change } }),
 });
 
 /** @returns the session changed in these keys. */
 export const changeSession = (change: Partial<Session>): Edit => ({
   name: "session",
-  label: "change session",
+  label: words.session,
   apply: (setup) => ({ ...setup, session: { ...setup.session, ...change } }),
 });
 
 /** @returns another title. Typing on joins into one step until the document settles. */
 export const setTitle = (title: string): Edit => ({
   name: "title",
-  label: "change title",
+  label: words.title,
   apply: (setup) => ({ ...setup, title }),
   joins: "title",
 });
@@ -65,7 +68,7 @@ export const setTitle = (title: string): Edit => ({
 /** @returns other notes. Typing on joins into one step until the document settles. */
 export const setNotes = (notes: string): Edit => ({
   name: "notes",
-  label: "change notes",
+  label: words.notes,
   apply: (setup) => ({ ...setup, notes }),
   joins: "notes",
 });
@@ -74,7 +77,7 @@ export const setNotes = (notes: string): Edit => ({
 export function addSlab(shape: Shape, thicknessMm: number, xMm: number, yMm: number): Edit {
   return {
     name: "add",
-    label: "add slab",
+    label: words.add("slab"),
     apply: (setup) => {
       const slab: Slab = { id: freshId(setup), xMm: tidyMm(xMm), yMm: tidyMm(yMm), turnDeg: 0, thicknessMm, shape };
       return { ...setup, water: { ...setup.water, slabs: [...setup.water.slabs, slab] } };
@@ -85,7 +88,7 @@ export function addSlab(shape: Shape, thicknessMm: number, xMm: number, yMm: num
 /** @returns one slab of another thickness, mm. */
 export const setThickness = (id: string, thicknessMm: number): Edit => ({
   name: "thickness",
-  label: `change thickness of slab ${id}`,
+  label: words.thickness(texts.document.things.slab(id)),
   apply: (setup) => ({
     ...setup,
     water: { ...setup.water, slabs: setup.water.slabs.map((slab) => (slab.id === id ? { ...slab, thicknessMm } : slab)) },
@@ -104,5 +107,5 @@ function withValueAt(data: unknown, path: readonly string[], value: unknown): un
 export function applyRemedy({ path, value }: RemedyEdit): Edit {
   const keys = path.replace(/\[(\d+)\]/g, ".$1").split(".");
   // The document checks the result against the schema, as it does for every edit.
-  return { name: "remedy", label: "apply remedy", apply: (setup) => withValueAt(setup, keys, value) as Setup };
+  return { name: "remedy", label: words.remedy, apply: (setup) => withValueAt(setup, keys, value) as Setup };
 }

@@ -1,4 +1,5 @@
 import type { Setup } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import { type BoxOf, type Edit, isPart, namesOf, type Thing, thingsById, tidyDeg, tidyMm } from "../edit";
 import { freshId } from "./parts";
 import { boxOfAll } from "./placing";
@@ -11,12 +12,12 @@ function copies(
   setup: Setup,
   ids: readonly string[],
   count: number,
-  label: string,
+  label: (names: string) => string,
   placeOf: (thing: Thing, copy: number, all: readonly Thing[]) => Placed,
 ): Edit {
   return {
     name: "copies",
-    label: `${label} ${namesOf(setup, ids)}`,
+    label: label(namesOf(setup, ids)),
     apply: (before) => {
       const things = thingsById(before, ids);
       if (things.length === 0 || count < 2) return before;
@@ -44,11 +45,15 @@ function copies(
 
 /** @returns `count` things in a row, each set off from the one before by a distance. */
 export const copyAlongRow = (setup: Setup, ids: readonly string[], count: number, byXMm: number, byYMm: number): Edit =>
-  copies(setup, ids, count, "row of", ({ xMm, yMm, turnDeg }, copy) => ({ xMm: xMm + copy * byXMm, yMm: yMm + copy * byYMm, turnDeg }));
+  copies(setup, ids, count, texts.document.steps.row, ({ xMm, yMm, turnDeg }, copy) => ({
+    xMm: xMm + copy * byXMm,
+    yMm: yMm + copy * byYMm,
+    turnDeg,
+  }));
 
 /** @returns `count` things evenly around a centre, each turned to face it as the first does. */
 export function copyAroundCentre(setup: Setup, ids: readonly string[], count: number, centreMm: readonly [number, number]): Edit {
-  return copies(setup, ids, count, "ring of", ({ xMm, yMm, turnDeg }, copy) => {
+  return copies(setup, ids, count, texts.document.steps.ring, ({ xMm, yMm, turnDeg }, copy) => {
     const angle = (2 * Math.PI * copy) / count;
     const [c, s] = [Math.cos(angle), Math.sin(angle)];
     const [dx, dy] = [xMm - centreMm[0], yMm - centreMm[1]];

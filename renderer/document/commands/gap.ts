@@ -1,4 +1,5 @@
 import type { Setup } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import { type Edit, namesOf, placeThings, type Thing, thingById, tidyMm } from "../edit";
 
 /** The exact clear gap between two things, mm; 0 where they touch or overlap. The geometry lives in the engine. */
@@ -28,7 +29,7 @@ const shifted = (thing: Thing, [ux, uy]: readonly [number, number], byMm: number
 export function moveToGap(setup: Setup, movingId: string, fixedId: string, wantedMm: number, gapOf: GapOf): Edit {
   return {
     name: "gap",
-    label: `set the gap of ${namesOf(setup, [movingId])}`,
+    label: texts.document.steps.gap(namesOf(setup, [movingId])),
     apply: (before) => {
       const [moving, fixed] = [thingById(before, movingId), thingById(before, fixedId)];
       if (moving === undefined || fixed === undefined || !(wantedMm >= 0)) return before;

@@ -1,4 +1,5 @@
-import type { Part, PartRole, Setup, Shape, ShapeKind } from "../../../shared-types/setup";
+import type { Part, PartRole, Setup, Shape } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import {
   type BoxMm,
   type BoxOf,
@@ -14,6 +15,8 @@ import {
 } from "../edit";
 import type { ShelfPart } from "../shelf-part";
 
+const { kinds, steps } = texts.document;
+
 /** Edits that add or take away parts, and those of what a part is. */
 
 /** @returns the first of A, B … Z, AA, AB … that no part or slab has, nor any of `taken`. */
@@ -25,15 +28,6 @@ export function freshId(setup: Setup, taken: readonly string[] = []): string {
     if (!used.has(id)) return id;
   }
 }
-
-const KIND_NAMES: Readonly<Record<ShapeKind, string>> = {
-  bar: "Bar",
-  disc: "Disc",
-  ring: "Ring",
-  arc: "Arc",
-  frame: "Frame",
-  polygon: "Polygon",
-};
 
 /** An electrode is what a tray lacks first: one at each lead; what comes after floats. */
 function firstRole(setup: Setup): PartRole {
@@ -51,10 +45,10 @@ const withRole = (part: Omit<Part, "role" | "tap">, role: PartRole, tap: number)
 
 /** @returns a new part from the shelf with its centre at a place (mm). It is selected afterwards. */
 export function addPart(setup: Setup, from: ShelfPart, xMm: number, yMm: number): Edit {
-  const name = KIND_NAMES[from.shape.kind];
+  const name = kinds[from.shape.kind];
   return {
     name: "add",
-    label: `add ${name.toLowerCase()}`,
+    label: steps.add(from.shape.kind),
     apply: (before) => {
       const id = freshId(before);
       const part = {
@@ -113,7 +107,7 @@ export function freePlaceMm(setup: Setup, shape: Shape, boxOf: BoxOf, within: Bo
 export function duplicateThings(setup: Setup, ids: readonly string[], byXMm = 10, byYMm = -10): Edit {
   return {
     name: "duplicate",
-    label: `duplicate ${namesOf(setup, ids)}`,
+    label: steps.duplicate(namesOf(setup, ids)),
     apply: (before) => {
       const taken: string[] = [];
       const copied = <Kind extends Thing>(thing: Kind): Kind => {
@@ -137,7 +131,7 @@ export function duplicateThings(setup: Setup, ids: readonly string[], byXMm = 10
 
 /** "Bar A" becomes "Bar C"; "Left bar" becomes "Left bar C": no two parts on paper share a name. */
 function copyName(setup: Setup, part: Part, id: string): string {
-  const stem = part.name.replace(new RegExp(`\\s+(?:${part.id.replace(/[^\w]/g, "\\$&")}|[A-Z]{1,2})$`), "") || KIND_NAMES[part.shape.kind];
+  const stem = part.name.replace(new RegExp(`\\s+(?:${part.id.replace(/[^\w]/g, "\\$&")}|[A-Z]{1,2})$`), "") || kinds[part.shape.kind];
   const name = `${stem} ${id}`.slice(0, 80);
   return setup.parts.some((other) => other.name === name) ? "" : name;
 }
@@ -146,7 +140,7 @@ function copyName(setup: Setup, part: Part, id: string): string {
 export function removeThings(setup: Setup, ids: readonly string[]): Edit {
   return {
     name: "delete",
-    label: `delete ${namesOf(setup, ids)}`,
+    label: steps.delete(namesOf(setup, ids)),
     apply: (before) => {
       if (!ids.some((id) => thingById(before, id) !== undefined)) return before;
       const slabs = before.water.slabs.filter(({ id }) => !ids.includes(id));
@@ -159,33 +153,46 @@ export function removeThings(setup: Setup, ids: readonly string[]): Edit {
   };
 }
 
-const edit = (setup: Setup, ids: readonly string[], name: string, verb: string, change: (part: Part) => Part): Edit => ({
+const edit = (
+  setup: Setup,
+  ids: readonly string[],
+  name: string,
+  label: (names: string) => string,
+  change: (part: Part) => Part,
+): Edit => ({
   name,
-  label: `${verb} ${namesOf(setup, ids)}`,
+  label: label(namesOf(setup, ids)),
   apply: (before) => changeParts(before, ids, change),
 });
 
 /** @returns parts made electrodes, floating conductors or insulators. A new electrode takes the lead that is not in use yet. */
 export function setRole(setup: Setup, ids: readonly string[], role: PartRole): Edit {
-  return edit(setup, ids, "role", `make ${role === "floating" ? "floating" : `an ${role}`}:`, (part) => {
-    if (part.role === role) return part;
-    const { id, name, xMm, yMm, turnDeg, heightMm, material, shape } = part;
-    return withRole({ id, name, xMm, yMm, turnDeg, heightMm, material, shape }, role, firstTap(setup));
-  });
+  return edit(
+    setup,
+    ids,
+    "role",
+    (names) => steps.role(names, role),
+    (part) => {
+      if (part.role === role) return part;
+      const { id, name, xMm, yMm, turnDeg, heightMm, material, shape } = part;
+      return withRole({ id, name, xMm, yMm, turnDeg, heightMm, material, shape }, role, firstTap(setup));
+    },
+  );
 }
 
 /** @returns electrodes wired to a tap (0 = common or negative lead, 1 = live or positive lead); other parts stay as they are. */
 export function setTap(setup: Setup, ids: readonly string[], tap: number): Edit {
-  return edit(setup, ids, "tap", "wire", (part) => (part.role === "electrode" ? { ...part, tap } : part));
+  return edit(setup, ids, "tap", steps.wire, (part) => (part.role === "electrode" ? { ...part, tap } : part));
 }
 
 /** @returns parts made of another material. */
 export const setMaterial = (setup: Setup, ids: readonly string[], material: string): Edit =>
-  edit(setup, ids, "material", "change material of", (part) => ({ ...part, material }));
+  edit(setup, ids, "material", steps.material, (part) => ({ ...part, material }));
 
 /** @returns parts of another height, mm. */
 export const setHeight = (setup: Setup, ids: readonly string[], heightMm: number): Edit =>
-  edit(setup, ids, "height", "change height of", (part) => ({ ...part, heightMm }));
+  edit(setup, ids, "height", steps.height, (part) => ({ ...part, heightMm }));
 
 /** @returns one part with another name. */
-export const setName = (setup: Setup, id: string, name: string): Edit => edit(setup, [id], "name", "rename", (part) => ({ ...part, name }));
+export const setName = (setup: Setup, id: string, name: string): Edit =>
+  edit(setup, [id], "name", steps.rename, (part) => ({ ...part, name }));

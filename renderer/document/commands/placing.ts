@@ -1,5 +1,8 @@
 import type { Setup, Shape } from "../../../shared-types/setup";
+import { texts } from "../../texts/texts";
 import { type BoxMm, type BoxOf, type Edit, namesOf, type Placing, placeThings, type Thing, thingsById, tidyDeg, tidyMm } from "../edit";
+
+const words = texts.document.steps;
 
 /** Edits of where things lie and how they are turned. Every `ids` may name parts and slabs alike; lengths in mm, angles in degrees. */
 
@@ -7,7 +10,7 @@ import { type BoxMm, type BoxOf, type Edit, namesOf, type Placing, placeThings, 
 export function moveThings(setup: Setup, ids: readonly string[], byXMm: number, byYMm: number, joins?: string): Edit {
   return {
     name: "move",
-    label: `move ${namesOf(setup, ids)}`,
+    label: words.move(namesOf(setup, ids)),
     apply: (before) =>
       byXMm === 0 && byYMm === 0
         ? before
@@ -21,7 +24,7 @@ export function placeThing(setup: Setup, id: string, place: Omit<Placing, "shape
   const turn = place.turnDeg === undefined ? {} : { turnDeg: tidyDeg(place.turnDeg) };
   return {
     name: "place",
-    label: `place ${namesOf(setup, [id])}`,
+    label: words.place(namesOf(setup, [id])),
     apply: (before) => placeThings(before, [id], () => ({ ...place, ...turn })),
   };
 }
@@ -30,7 +33,7 @@ export function placeThing(setup: Setup, id: string, place: Omit<Placing, "shape
 export function resizeThing(setup: Setup, id: string, shape: Shape, centre: { readonly xMm?: number; readonly yMm?: number } = {}): Edit {
   return {
     name: "resize",
-    label: `resize ${namesOf(setup, [id])}`,
+    label: words.resize(namesOf(setup, [id])),
     apply: (before) => placeThings(before, [id], () => ({ ...centre, shape })),
   };
 }
@@ -59,7 +62,7 @@ function pivotOf(things: readonly Thing[], boxOf: BoxOf): readonly [number, numb
 export function turnThings(setup: Setup, ids: readonly string[], byDeg: number, boxOf: BoxOf, joins?: string): Edit {
   return {
     name: "turn",
-    label: `turn ${namesOf(setup, ids)}`,
+    label: words.turn(namesOf(setup, ids)),
     apply: (before) => {
       const [px, py] = pivotOf(thingsById(before, ids), boxOf);
       const turn = (byDeg * Math.PI) / 180;
@@ -82,7 +85,7 @@ const reflected = (shape: Shape): Shape =>
 export function mirrorThings(setup: Setup, ids: readonly string[], swap: "left-right" | "top-bottom", boxOf: BoxOf): Edit {
   return {
     name: "mirror",
-    label: `mirror ${namesOf(setup, ids)}`,
+    label: words.mirror(namesOf(setup, ids)),
     apply: (before) => {
       const box = boxOfAll(thingsById(before, ids), boxOf);
       if (box === null) return before;
@@ -119,7 +122,7 @@ function alignedBy(box: BoxMm, all: BoxMm, to: AlignTo): readonly [number, numbe
 export function alignThings(setup: Setup, ids: readonly string[], to: AlignTo, boxOf: BoxOf, within: BoxMm): Edit {
   return {
     name: "align",
-    label: `align ${namesOf(setup, ids)}`,
+    label: words.align(namesOf(setup, ids)),
     apply: (before) => {
       const things = thingsById(before, ids);
       const all = things.length === 1 ? within : boxOfAll(things, boxOf);
@@ -137,7 +140,7 @@ export function distributeThings(setup: Setup, ids: readonly string[], along: "x
   const [low, high] = along === "x" ? ([0, 2] as const) : ([1, 3] as const);
   return {
     name: "distribute",
-    label: `space ${namesOf(setup, ids)} evenly`,
+    label: words.distribute(namesOf(setup, ids)),
     apply: (before) => {
       const boxed = thingsById(before, ids).map((thing) => ({ id: thing.id, box: boxOf(thing) }));
       boxed.sort((a, b) => a.box[low] + a.box[high] - b.box[low] - b.box[high]);
