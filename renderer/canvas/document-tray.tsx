@@ -16,7 +16,10 @@ const PALE_CODES: ReadonlySet<string> = new Set(["overlap", "short-circuit"]);
 const NO_FINDINGS: readonly Finding[] = [];
 const NO_POINTS: ReadonlySet<number> = new Set();
 
+/** An edit shares what it leaves alone; a setup that was opened shares nothing with the one before, and its old field says nothing of it. */
 const sameBench = (a: Setup, b: Setup): boolean => a.tray === b.tray || a.water === b.water;
+const opened = (planned: Setup, now: Setup): boolean =>
+  planned.tray !== now.tray && planned.water !== now.water && planned.supply !== now.supply && planned.meter !== now.meter;
 
 /** The canvas of the open document: follows the document and its plan, announces changes, reads the field under the pointer. */
 export function DocumentTray(props: {
@@ -40,6 +43,7 @@ export function DocumentTray(props: {
 
   const field = useMemo((): PlannedField | null => {
     if (plan === null || plannedSetup === null) return null;
+    if (opened(plannedSetup, setup)) return null;
     if (refusal !== null && !PALE_CODES.has(refusal.code)) return null;
     return { plan, setup: plannedSetup, outOfDate: refusal !== null || !sameBench(plannedSetup, setup) };
   }, [plan, plannedSetup, refusal, setup]);

@@ -49,7 +49,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const viewState = useStore(trayView);
   const view = useMemo(() => viewOf(viewState), [viewState]);
   const surface = useRef<HTMLDivElement>(null);
-  const { look, tape, place, cursor, cancel, holdPan, listeners } = usePointer(props, surface);
+  const { zoom, look, tape, place, cursor, cancel, holdPan, listeners } = usePointer(props, surface);
   const clipboard = useClipboard(props);
   const drop = useDrop(props, surface);
   useEffect(() => trayView.showTray(setup.tray), [trayView, setup.tray]);
@@ -89,7 +89,12 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const count = setup.parts.length;
 
   return (
-    <div className="tray-canvas" style={themeProperties(theme)} {...clipboard}>
+    <div
+      className="tray-canvas"
+      data-field={field === null ? "none" : field.outOfDate ? "pale" : "shown"}
+      style={themeProperties(theme)}
+      {...clipboard}
+    >
       <PartsList setup={setup} selection={selection} onSelect={actions.select} onEnter={() => surface.current?.focus()} onKey={takeKey} />
       <div
         ref={surface}
@@ -106,11 +111,11 @@ export function TrayCanvas(props: TrayCanvasProps) {
         {...drop.listeners}
       >
         <Stage width={view.widthPx} height={view.heightPx} listening={false} aria-hidden="true">
-          <PaintedLayer name="bench" paint={bench} />
-          <PaintedLayer name="field" paint={paints.field} />
-          <PaintedLayer name="parts" paint={parts} />
-          <PaintedLayer name="points" paint={paints.points} />
-          <PaintedLayer name="hand" paint={handPaint} />
+          <PaintedLayer name="bench" zoom={zoom} paint={bench} />
+          <PaintedLayer name="field" zoom={zoom} paint={paints.field} />
+          <PaintedLayer name="parts" zoom={zoom} paint={parts} />
+          <PaintedLayer name="points" zoom={zoom} paint={paints.points} />
+          <PaintedLayer name="hand" zoom={zoom} paint={handPaint} />
         </Stage>
       </div>
       {field !== null && shown.picture && !field.outOfDate && <VoltScale plan={field.plan} dark={theme.dark} />}

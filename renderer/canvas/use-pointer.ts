@@ -11,18 +11,29 @@ const ZOOM_PER_PX = 0.0015;
 /** A trackpad's pinch comes as a wheel with small steps. */
 const PINCH = 6;
 
-/** @returns a place of the screen on the element, px from its upper left corner. */
+/** How many pixels of the window one pixel of the element takes: the zoom of the interface. */
+export function zoomOf(element: HTMLElement): number {
+  const { width } = element.getBoundingClientRect();
+  return width > 0 && element.clientWidth > 0 ? width / element.clientWidth : 1;
+}
+
+/** @returns a place of the screen on the element, the element's own px from its upper left corner. */
 export function placeOn(element: HTMLElement | null, event: { readonly clientX: number; readonly clientY: number }): Place {
-  const box = element?.getBoundingClientRect();
-  return [event.clientX - (box?.left ?? 0), event.clientY - (box?.top ?? 0)];
+  if (element === null) return [event.clientX, event.clientY];
+  const box = element.getBoundingClientRect();
+  const zoom = zoomOf(element);
+  return [(event.clientX - box.left) / zoom, (event.clientY - box.top) / zoom];
 }
 
 /** Keeps the view as large as the element, and lets the wheel zoom it. */
-function useSurface(surface: RefObject<HTMLDivElement | null>, trayView: TrayView): void {
+function useSurface(surface: RefObject<HTMLDivElement | null>, trayView: TrayView, onZoom: (zoom: number) => void): void {
   useEffect(() => {
     const element = surface.current;
     if (element === null) return;
-    const measure = (): void => trayView.setSize(element.clientWidth, element.clientHeight);
+    const measure = (): void => {
+      trayView.setSize(element.clientWidth, element.clientHeight);
+      onZoom(Number(zoomOf(element).toFixed(2)));
+    };
     const onWheel = (event: WheelEvent): void => {
       event.preventDefault();
       const unit = WHEEL_UNIT_PX[event.deltaMode] ?? 1;
@@ -42,7 +53,7 @@ function useSurface(surface: RefObject<HTMLDivElement | null>, trayView: TrayVie
       observer.disconnect();
       element.removeEventListener("wheel", onWheel);
     };
-  }, [surface, trayView]);
+  }, [surface, trayView, onZoom]);
 }
 
 /** The pointer on the tray: hand or tape, panning with the space bar or the middle button. @returns what shows, and what to listen with. */
@@ -55,7 +66,8 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
   const panKey = useRef(false);
   const latest = useRef(props);
   latest.current = props;
-  useSurface(surface, trayView);
+  const [zoom, setZoom] = useState(1);
+  useSurface(surface, trayView, setZoom);
 
   const hand = useMemo(
     () =>
@@ -86,6 +98,8 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
   }
 
   return {
+    /** Pixels of the window for a pixel of the stage. */
+    zoom,
     look,
     tape,
     /** Where the pointer is, px; null when it has left. */

@@ -2,16 +2,16 @@ import type { Page } from "@playwright/test";
 import { createTrayView, toScreen, viewOf } from "../../renderer/canvas/view";
 import { expect, test } from "./open-window";
 
-/** @returns where a place of the example's tray (mm) lies on the page, while the whole tray is in sight. */
-async function trayOnPage(page: Page) {
+/** @returns where a place of the example's tray (mm) lies on the page, while the whole tray is in sight; `zoom` is the size of the interface. */
+async function trayOnPage(page: Page, zoom = 1) {
   const box = await page.locator(".tray-surface").boundingBox();
   if (box === null) throw new Error("the tray is not on the page");
   const tray = createTrayView({ shape: "rectangle", lengthMm: 300, widthMm: 200, wallHeightMm: 40, baseMm: 3, baseMaterial: "acrylic" });
-  tray.setSize(box.width, box.height);
+  tray.setSize(box.width / zoom, box.height / zoom);
   const view = viewOf(tray.getState());
   return (xMm: number, yMm: number): readonly [number, number] => {
     const [x, y] = toScreen(view, xMm, yMm);
-    return [box.x + x, box.y + y];
+    return [box.x + zoom * x, box.y + zoom * y];
   };
 }
 
@@ -94,4 +94,38 @@ test("the pointer reads volts and field where it rests, and nothing outside the 
   await expect(page.locator("body")).toContainText("3.000 V");
   await page.mouse.move(...on(150, 215));
   await expect(page.locator("body")).not.toContainText("3.000 V");
+});
+
+test("a larger interface has larger words on the tray too, and the hand still meets the part", async ({ page }) => {
+  await page.getByRole("button", { name: "Units and size" }).click();
+  await page.getByLabel("Size of the interface").selectOption("1.5");
+  await page.keyboard.press("Escape");
+  const on = await trayOnPage(page, 1.5);
+  await drag(page, on(65, 120), on(80.4, 121.3));
+  await expect(page.locator(".live-number")).toHaveText("x 80, y 101 mm");
+  await page.mouse.up();
+  const sharpness = await page
+    .locator(".tray-surface canvas")
+    .first()
+    .evaluate((canvas: HTMLCanvasElement) => canvas.width / canvas.getBoundingClientRect().width);
+  expect(sharpness).toBeCloseTo(1, 2);
+});
+
+test("an opened setup never shows the lines of the one before it", async ({ page }) => {
+  // The line of the drawing at the middle of the tray, in frames until the new field has come.
+  await page.getByRole("button", { name: /^Start page/ }).click();
+  await page.evaluate(() => {
+    const seen: string[] = [];
+    Reflect.set(window, "seenFields", seen);
+    const look = (): void => {
+      const shown = document.querySelector(".tray-canvas");
+      if (shown !== null) seen.push(shown.getAttribute("data-field") ?? "");
+      requestAnimationFrame(look);
+    };
+    look();
+  });
+  await page.getByRole("region", { name: "Examples" }).getByRole("button", { name: "Two discs" }).click();
+  await expect(page.locator(".tray-canvas")).toHaveAttribute("data-field", "shown");
+  const seen = await page.evaluate(() => [...new Set(Reflect.get(window, "seenFields") as string[])]);
+  expect(seen).not.toContain("pale");
 });
