@@ -1,8 +1,9 @@
 import type { Quality } from "../../../shared-types/plan";
 import { discretise } from "./discretise";
 import { type FittedNetwork, fitContacts } from "./fit";
-import { type Grid, gridOfPitch, halved, pitchFor } from "./grid";
+import { type Grid, gridOfPitch, halved } from "./grid";
 import type { FieldLayout } from "./layout";
+import { pitchOf } from "./pitch";
 import { type ReadingMap, readingMap } from "./reading";
 import { createSolverMemory, type SolverMemory } from "./solver-memory";
 import { FINE_TOLERANCE, LIVE_TOLERANCE, type SolveOptions, solveUnitPotentials, type UnitPotentials } from "./unit-potentials";
@@ -46,7 +47,7 @@ export function* solveField(
   memory: SolverMemory = createSolverMemory(),
 ): Generator<void, FieldSolution> {
   const { tray } = layout.setup;
-  const grid = gridOfPitch(tray, pitchFor(tray, quality));
+  const grid = gridOfPitch(tray, pitchOf(layout, quality));
   const live = quality === "live";
   const options = { tolerance: live ? LIVE_TOLERANCE : FINE_TOLERANCE, memory, followsOn: live };
   const coarse = yield* solveGrid(layout, halved(grid), { ...options, onSolved: (share) => onProgress(0.2 * share) });
