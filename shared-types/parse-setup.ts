@@ -97,6 +97,14 @@ export function parseSetup(data: unknown): Result<Setup> {
   return { ok: false, problems: parsed.error.issues.flatMap((issue) => problemsOf(issue, data)) };
 }
 
+/** A problem of a file; where it lies inside a part or slab, with the id by which its user knows it. */
+function withOwner(problem: Problem, data: unknown): Problem {
+  const inList = /^(parts|water\.slabs)\[(\d+)\](?!\.id$)/.exec(problem.where);
+  if (inList === null) return problem;
+  const id = valueAt(data, [...inList[1].split("."), Number(inList[2]), "id"]);
+  return typeof id === "string" && id !== "" ? { ...problem, message: `${problem.message}, in ${shown(id)}` } : problem;
+}
+
 /**
  * Reads the text of a setup file.
  * @returns the setup, or what is wrong with it; never throws.
@@ -111,7 +119,8 @@ export function parseSetupText(text: string): Result<Setup> {
   } catch (error) {
     return failure("", `the file is not valid JSON (${error instanceof Error ? error.message : String(error)})`);
   }
-  return parseSetup(data);
+  const parsed = parseSetup(data);
+  return parsed.ok ? parsed : { ok: false, problems: parsed.problems.map((problem) => withOwner(problem, data)) };
 }
 
 /** @returns the text that is saved for a setup: indented JSON with a final line feed. */

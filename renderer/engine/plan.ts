@@ -12,8 +12,9 @@ import type {
 import type { Setup } from "../../shared-types/setup";
 import { setupId } from "../../shared-types/setup-id";
 import { MM_PER_M } from "../../shared-types/units";
-import { benchOf } from "./bench/bench";
-import { probingWithInterface } from "./bench/probing-with-interface";
+import { benchOf, lossesOf } from "./bench/bench";
+import type { FieldFacts } from "./bench/field-facts";
+import { probingWithInterface, readingsWithInterface } from "./bench/probing-with-interface";
 import { conductivityAtTemperatureSPerM } from "./bench/water-conductivity";
 import { drive, type Pace } from "./field/drive";
 import { fieldLayout, geometryKey } from "./field/layout";
@@ -100,15 +101,20 @@ function linesOf(solved: Solved, setup: Setup, field: SuperposedField, quality: 
   };
 }
 
+/** A field with what follows from it between two potentials. */
+function factsOf(setup: Setup, field: SuperposedField, conductivitySPerM: number): FieldFacts & SuperposedField {
+  const twoPole = twoPoleOf(setup, field, conductivitySPerM);
+  return { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
+}
+
 function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: number): Plan {
   const conductivitySPerM = conductivityAtTemperatureSPerM(setup);
   const field = solved.superposed(setup, conductivitySPerM);
-  const twoPole = twoPoleOf(setup, field, conductivitySPerM);
   const amperesPerFlux = conductivitySPerM / MM_PER_M;
   const currentA = { value: field.totalFlux.value * amperesPerFlux, error: field.totalFlux.error * amperesPerFlux };
   const { equipotentials, fieldLines } = linesOf(solved, setup, field, quality);
   const fieldProbing = planProbes(setup, field, equipotentials);
-  const facts = { ...field, resistanceOhm: twoPole?.resistanceOhm ?? null, shapeFactor: twoPole?.shapeFactor ?? null };
+  const facts = factsOf(setup, field, conductivitySPerM);
   const bench = benchOf(setup, facts);
   const probing = probingWithInterface(setup, fieldProbing, bench);
   return {
@@ -172,8 +178,11 @@ export function createPlanner(): Planner {
       .map((quality) => kept.get(`${quality} ${geometry}`))
       .find((one) => one !== undefined);
     if (solved === undefined) return null;
-    const field = solved.superposed(setup, conductivityAtTemperatureSPerM(setup));
-    return placesMm.map(([xMm, yMm]) => field.read(xMm, yMm));
+    const conductivitySPerM = conductivityAtTemperatureSPerM(setup);
+    const field = solved.superposed(setup, conductivitySPerM);
+    const readings = placesMm.map(([xMm, yMm]) => field.read(xMm, yMm));
+    if (!setup.interface.inReadings) return readings;
+    return readingsWithInterface(setup, readings, field.spanV, lossesOf(setup, factsOf(setup, field, conductivitySPerM)));
   }
 
   return { plan, sample };

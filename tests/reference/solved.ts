@@ -35,17 +35,19 @@ export interface PartialSetup {
   readonly tray?: object;
   readonly water?: object;
   readonly supply?: object;
+  readonly interface?: object;
   readonly parts: readonly object[];
 }
 
 /** @returns a setup of the tests: a 300 mm × 200 mm tray with 10 mm of water at 500 µS/cm and 6 V, overridden where said. */
-export function trayWith({ tray, water, supply, parts }: PartialSetup): Setup {
+export function trayWith({ tray, water, supply, parts, interface: surfaces }: PartialSetup): Setup {
   return soundSetup({
     format: "fieldtray.setup",
     version: 1,
     tray: tray ?? { shape: "rectangle", lengthMm: 300, widthMm: 200 },
     water: { depthMm: 10, conductivityUsPerCm: 500, ...water },
     supply: { waveform: "ac", volts: 6, ...supply },
+    ...(surfaces === undefined ? {} : { interface: surfaces }),
     parts,
   });
 }

@@ -10,17 +10,23 @@ import { operatingRegion } from "./operating-region";
 import { waterNumbers } from "./water";
 import { waterGeometry } from "./water-geometry";
 
+/** @returns the circuit and what its electrodes' surfaces take: all that a reading needs of the bench. */
+export function lossesOf(setup: Setup, facts: FieldFacts): Pick<BenchNumbers, "circuit" | "interface"> {
+  const circuit = circuitNumbers(setup, facts);
+  return { circuit, interface: interfaceNumbers(setup, circuit) };
+}
+
 /**
  * Everything of the bench that follows from a setup and its solved field: water, circuit, surfaces, meter, heat, gas, geometry of
  * the water and the depth–voltage region. Starts no solve.
  */
 export function benchOf(setup: Setup, facts: FieldFacts): BenchNumbers {
   const water = waterNumbers(setup);
-  const circuit = circuitNumbers(setup, facts);
+  const losses = lossesOf(setup, facts);
+  const { circuit } = losses;
   const solved = {
+    ...losses,
     water,
-    circuit,
-    interface: interfaceNumbers(setup, circuit),
     meter: meterNumbers(setup, facts, circuit),
     heat: heatNumbers(setup, circuit, water),
     gas: gasNumbers(setup, circuit),

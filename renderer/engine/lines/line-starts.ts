@@ -104,5 +104,6 @@ export function lineStarts(
   });
   const sent = surfaces.reduce((sum, { role, flux }) => sum + (role === "electrode" ? flux : 0), 0);
   if (!(sent > 0)) return [];
-  return surfaces.flatMap(({ outflows, flux }) => startsOf(outflows, Math.round((lines * flux) / sent)));
+  // No surface sends more than all electrodes together; where the grid hardly resolves one, its sum may say so all the same.
+  return surfaces.flatMap(({ outflows, flux }) => startsOf(outflows, Math.min(lines, Math.round((lines * flux) / sent))));
 }

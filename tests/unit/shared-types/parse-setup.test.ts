@@ -68,6 +68,11 @@ describe("a setup file", () => {
     expect(firstMessage(withValue("parts.1.shape", bow))).toMatch(/parts\[1\]\.shape\.pointsMm has edges 0 and 2 that meet/);
   });
 
+  it("of a file names the part by its id beside its place in the list", () => {
+    const parsed = parseSetupText(JSON.stringify(withValue("parts.1.turnDeg", "up")));
+    expect(parsed.ok ? "" : parsed.problems[0].message).toMatch(/^parts\[1\]\.turnDeg is "up", allowed: .*, in "B"$/);
+  });
+
   it.each([
     ["nothing", ""],
     ["cut off", '{"format": "fieldtray.setup", "version": 1'],

@@ -1,7 +1,10 @@
 import { describe, expect, it } from "vitest";
 import { benchOf } from "../../../../renderer/engine/bench/bench";
 import { probingWithInterface } from "../../../../renderer/engine/bench/probing-with-interface";
+import { createPlanner } from "../../../../renderer/engine/plan";
 import type { ProbePlan, ProbePoint } from "../../../../shared-types/plan";
+import { trayWith } from "../../../reference/solved";
+import { BARS } from "../odd-setups";
 import { channel, channelFacts } from "./trays";
 
 const point = (volts: number): ProbePoint => ({
@@ -51,5 +54,35 @@ describe("readings that allow for the volts lost at the surfaces", () => {
     expect(plan.levels.map((level) => level.points.map(({ xMm, yMm, n }) => [xMm, yMm, n]))).toEqual(
       PROBING.levels.map((level) => level.points.map(({ xMm, yMm, n }) => [xMm, yMm, n])),
     );
+  });
+
+  it("are what pointer and command tell at the same places; the electrode's metal stands before the loss", async () => {
+    const loss = { interface: { electrodeDropVolts: 2, inReadings: true } };
+    const setup = trayWith({ supply: { waveform: "dc" }, parts: BARS, ...loss });
+    const planner = createPlanner();
+    const outcome = await planner.plan(setup, "live");
+    if (!outcome.ok) throw new Error(outcome.refusal.message);
+    const points = outcome.plan.probing.levels.flatMap((level) => level.points);
+    expect(points.length).toBeGreaterThan(10);
+    const readings =
+      planner.sample(
+        setup,
+        points.map(({ xMm, yMm }) => [xMm, yMm] as const),
+      ) ?? [];
+    readings.forEach(({ volts, voltsError }, index) => {
+      expect(volts).toBeCloseTo(points[index].volts, 9);
+      expect(voltsError).toBeCloseTo(points[index].voltsError, 9);
+    });
+    const [metal, water] =
+      planner.sample(setup, [
+        [235, 100],
+        [150, 100],
+      ]) ?? [];
+    expect(metal?.volts).toBe(6);
+    expect(water?.volts).toBeCloseTo(3, 4);
+    const before = await planner.plan({ ...setup, interface: { ...setup.interface, inReadings: false } }, "live");
+    if (!before.ok) throw new Error(before.refusal.message);
+    const first = before.plan.probing.levels[0].points[0];
+    expect(points[0].volts - 1).toBeCloseTo((first.volts * 4) / 6, 6);
   });
 });
