@@ -2,17 +2,23 @@ import "./styles/tokens.css";
 import "./styles/window.css";
 import "./styles/fields.css";
 import "./styles/desks.css";
+import "./styles/closer-look.css";
 import "./canvas/canvas.css";
 import { useEffect, useMemo, useRef, useState } from "react";
 import { useStore } from "zustand";
 import type { Host } from "../shared-types/host";
+import type { PlanOutcome } from "../shared-types/plan";
+import type { Setup } from "../shared-types/setup";
 import { DocumentTray } from "./canvas/document-tray";
 import { canvasTheme } from "./canvas/theme";
 import { createTrayView } from "./canvas/view";
+import { createCloserLook } from "./document/closer-look";
 import { createDocument } from "./document/document";
 import { createPlanning } from "./document/planning";
 import { probeTableCsv } from "./engine/probing/probe-table-csv";
 import { EXAMPLES } from "./examples/all-examples";
+import { CloserCard } from "./panels/closer-look/closer-card";
+import { compareWithFile } from "./panels/closer-look/compare";
 import { commandsOf } from "./panels/commands";
 import { FieldContext } from "./panels/field-surroundings";
 import { emptyTray, filesOf } from "./panels/files";
@@ -33,6 +39,16 @@ import { createFieldClient } from "./worker/field-client";
 
 const startWorker = (): Worker => new Worker(new URL("./worker/field-worker.ts", import.meta.url), { type: "module" });
 
+/** Plans another setup in a worker of its own, which then goes: the open setup's planning is not disturbed. */
+async function planAside(setup: Setup): Promise<PlanOutcome | null> {
+  const aside = createFieldClient(startWorker);
+  try {
+    return await aside.plan(setup, "print");
+  } finally {
+    aside.close();
+  }
+}
+
 /** The sheets and jsPDF are loaded when they are first asked for. */
 const loadSheets = async (): Promise<SheetSource> => (await import("./sheet-source")).createSheetSource();
 
@@ -40,18 +56,20 @@ function made(host: Host) {
   const client = createFieldClient(startWorker);
   const document = createDocument(EXAMPLES[1]?.setup ?? emptyTray());
   const window = createWindowStore();
+  const planning = createPlanning(document, client);
   return {
     client,
     document,
     window,
-    planning: createPlanning(document, client),
+    planning,
+    closerLook: createCloserLook(planning, client),
     files: filesOf(host, document, window),
     trayView: createTrayView(document.getState().setup.tray),
   };
 }
 
 export function App({ host }: { readonly host: Host }) {
-  const { client, document, window, planning, files, trayView } = useMemo(() => made(host), [host]);
+  const { client, document, window, planning, closerLook, files, trayView } = useMemo(() => made(host), [host]);
   const [settings, changeSettings] = useSettings(host);
   const [choice, setChoice] = useState(FIRST_CHOICE);
   const toPrint = useRef(sheetChoiceOf(choice, settings));
@@ -119,6 +137,7 @@ export function App({ host }: { readonly host: Host }) {
               trayView={trayView}
               theme={theme}
               shown={shown}
+              closerLook={closerLook}
               markedPoints={markedPoints}
               onReadout={(readout) => window.set({ readout })}
             />
@@ -130,6 +149,16 @@ export function App({ host }: { readonly host: Host }) {
               onTape={() => trayView.setTool(tool === "tape" ? "hand" : "tape")}
             />
           </>
+        }
+        closer={
+          <CloserCard
+            document={document}
+            window={window}
+            closerLook={closerLook}
+            tool={tool}
+            onTool={(next) => trayView.setTool(trayView.getState().tool === next ? "hand" : next)}
+            onCompare={() => void compareWithFile(host, window, closerLook, planAside)}
+          />
         }
         startPage={
           <StartPage host={host} files={files} examples={EXAMPLES} settings={settings} onBack={() => window.set({ startPage: false })} />

@@ -16,6 +16,19 @@ interface Stops {
 }
 
 const LIGHT: Stops = { low: [0.74, 0.08, 252], middle: [0.865, 0.062, 192], high: [0.96, 0.07, 95] };
+/** The same lightness without any hue: what a grey printer makes of it. */
+const grey = ({ low, middle, high }: Stops): Stops => ({ low: [low[0], 0, 0], middle: [middle[0], 0, 0], high: [high[0], 0, 0] });
+/** Differences: blue below, nothing in the middle, ochre above, as far apart as blue and yellow are for every common kind of eye. */
+const APART_LIGHT: readonly [below: Triple, none: Triple, above: Triple] = [
+  [0.74, 0.1, 252],
+  [0.97, 0.006, 150],
+  [0.79, 0.115, 72],
+];
+const APART_DARK: readonly [below: Triple, none: Triple, above: Triple] = [
+  [0.5, 0.1, 252],
+  [0.26, 0.008, 150],
+  [0.53, 0.1, 72],
+];
 const DARK: Stops = { low: [0.26, 0.055, 252], middle: [0.41, 0.045, 200], high: [0.545, 0.082, 82] };
 
 /** More than a channel's 256 steps: the three channels step at different places, which hides the steps. */
@@ -57,8 +70,9 @@ function along({ low, middle, high }: Stops, share: number): Triple {
 }
 
 /** The scale's shades in Oklab, spaced evenly along the curve. */
-export function shadesInOklab(dark: boolean): readonly Triple[] {
-  const stops = dark ? DARK : LIGHT;
+export function shadesInOklab(dark: boolean, greys = false): readonly Triple[] {
+  const hued = dark ? DARK : LIGHT;
+  const stops = greys ? grey(hued) : hued;
   const fine = Array.from({ length: FINE + 1 }, (_, index) => along(stops, index / FINE));
   const walked = [0];
   fine.slice(1).forEach((shade, index) => {
@@ -74,8 +88,8 @@ export function shadesInOklab(dark: boolean): readonly Triple[] {
   });
 }
 
-const tableOf = (dark: boolean): readonly Triple[] =>
-  shadesInOklab(dark).map((shade) => {
+const tableOf = (shades: readonly Triple[]): readonly Triple[] =>
+  shades.map((shade) => {
     const [r, g, b] = linearRgb(shade);
     return [encoded(r), encoded(g), encoded(b)] as const;
   });
@@ -87,15 +101,49 @@ export interface ColourScale {
   readonly packed: Uint32Array;
 }
 
-function scaleOf(dark: boolean): ColourScale {
-  const shades = tableOf(dark);
+/** Straight from below to none, and from none to above. */
+function shadesApart(dark: boolean): readonly Triple[] {
+  const [below, none, above] = (dark ? APART_DARK : APART_LIGHT).map(lab) as [Triple, Triple, Triple];
+  return Array.from({ length: SHADES }, (_, index): Triple => {
+    const share = (2 * index) / (SHADES - 1) - 1;
+    const end = share < 0 ? below : above;
+    const at = (axis: 0 | 1 | 2): number => none[axis] + Math.abs(share) * (end[axis] - none[axis]);
+    return [at(0), at(1), at(2)];
+  });
+}
+
+function scaleOf(inOklab: readonly Triple[]): ColourScale {
+  const shades = tableOf(inOklab);
   const bytes = new Uint8ClampedArray(SHADES * 4);
   for (const [index, shade] of shades.entries()) bytes.set([...shade, 255], index * 4);
   return { shades, packed: new Uint32Array(bytes.buffer) };
 }
 
-export const LIGHT_SCALE = scaleOf(false);
-export const DARK_SCALE = scaleOf(true);
+export const LIGHT_SCALE = scaleOf(shadesInOklab(false));
+export const DARK_SCALE = scaleOf(shadesInOklab(true));
+
+/** @returns a scale with so many bands of one colour each: every shade of a band is its middle one. */
+export function stepped({ shades }: ColourScale, bands: number): ColourScale {
+  const ofBand = (index: number): Triple => {
+    const band = Math.min(bands - 1, Math.floor((index / shades.length) * bands));
+    return shades[Math.round(((band + 0.5) / bands) * (shades.length - 1))] as Triple;
+  };
+  const banded = shades.map((_, index) => ofBand(index));
+  const bytes = new Uint8ClampedArray(banded.length * 4);
+  for (const [index, shade] of banded.entries()) bytes.set([...shade, 255], index * 4);
+  return { shades: banded, packed: new Uint32Array(bytes.buffer) };
+}
+
+/**
+ * @param colours hues, or greys alone.
+ * @param apart whether the middle of the scale is nothing and both ends are apart (differences); greys run from dark to light then too.
+ * @returns the scale for a light or dark window.
+ */
+export function scaleFor(dark: boolean, colours: "hues" | "greys", apart: boolean): ColourScale {
+  if (colours === "greys") return scaleOf(shadesInOklab(dark, true));
+  if (apart) return scaleOf(shadesApart(dark));
+  return dark ? DARK_SCALE : LIGHT_SCALE;
+}
 
 /** @returns the CSS colour at a share (0 lowest potential, 1 highest) of the scale. */
 export function colourAt({ shades }: ColourScale, share: number): string {

@@ -2,6 +2,7 @@ import { useEffect, useMemo, useState } from "react";
 import { useStore } from "zustand";
 import type { Finding } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import type { CloserLook } from "../document/closer-look";
 import type { Document } from "../document/document";
 import type { Planning } from "../document/planning";
 import { announcement } from "./announcement";
@@ -29,12 +30,14 @@ export function DocumentTray(props: {
   readonly trayView: TrayView;
   readonly theme: CanvasTheme;
   readonly shown: Shown;
+  readonly closerLook: CloserLook;
   readonly markedPoints?: ReadonlySet<number>;
   readonly editable?: boolean;
   readonly onReadout: (readout: PointerReadout | null) => void;
 }) {
   const { document, planning, client, onReadout } = props;
   const setup = useStore(document, (state) => state.setup);
+  const closer = useStore(props.closerLook);
   const selection = useStore(document, (state) => state.selection);
   const snapping = useStore(document, (state) => state.snapping);
   const plan = useStore(planning, (state) => state.plan);
@@ -67,6 +70,8 @@ export function DocumentTray(props: {
         trayView={props.trayView}
         theme={props.theme}
         shown={props.shown}
+        closer={closer}
+        closerActions={props.closerLook}
         markedPoints={props.markedPoints ?? NO_POINTS}
         editable={props.editable ?? true}
         actions={document}

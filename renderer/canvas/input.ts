@@ -15,6 +15,7 @@ function actOnView(trayView: TrayView, view: Extract<KeyMeaning, { kind: "view" 
     "zoom out": trayView.zoomOut,
     fit: trayView.fit,
     tape: () => trayView.setTool(trayView.getState().tool === "tape" ? "hand" : "tape"),
+    pin: () => trayView.setTool(trayView.getState().tool === "pin" ? "hand" : "pin"),
   };
   acts[view]();
 }

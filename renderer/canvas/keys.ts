@@ -8,7 +8,7 @@ import { boxOfThing } from "./hit";
 export type KeyMeaning =
   | { readonly kind: "edit"; readonly edit: Edit }
   | { readonly kind: "select"; readonly ids: readonly string[] }
-  | { readonly kind: "view"; readonly view: "zoom in" | "zoom out" | "fit" | "tape" };
+  | { readonly kind: "view"; readonly view: "zoom in" | "zoom out" | "fit" | "tape" | "pin" };
 
 /** The facts of a keyboard event that matter here. */
 export interface Key {
@@ -53,7 +53,7 @@ function onSelection(key: Key, setup: Setup, selection: readonly string[]): KeyM
 /**
  * Arrows nudge the selected things by 1 mm (Shift 10, Alt 0.1), L and R turn them left and right by 5° (Shift 45°), Delete
  * takes them away, Ctrl or Cmd with D duplicates and with A selects all, Escape selects nothing, + − 0 zoom, M takes up the measuring
- * tape or puts it away.
+ * tape or puts it away, P the pins.
  * @returns what the key means, or null when it means nothing here.
  */
 export function meaningOf(key: Key, setup: Setup, selection: readonly string[]): KeyMeaning | null {
@@ -64,6 +64,7 @@ export function meaningOf(key: Key, setup: Setup, selection: readonly string[]):
     if (key.key === "-") return { kind: "view", view: "zoom out" };
     if (key.key === "0") return { kind: "view", view: "fit" };
     if (key.key.toLowerCase() === "m") return { kind: "view", view: "tape" };
+    if (key.key.toLowerCase() === "p") return { kind: "view", view: "pin" };
     if (key.key === "Escape" && selection.length > 0) return { kind: "select", ids: [] };
   }
   return selection.length === 0 ? null : onSelection(key, setup, selection);

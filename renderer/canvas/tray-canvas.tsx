@@ -3,22 +3,24 @@ import { Stage } from "react-konva";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import type { CloserLook, CloserLookState } from "../document/closer-look";
 import { texts } from "../texts/texts";
 import { type CanvasActions, shownHandles } from "./hand";
 import { actOnKey, useClipboard, useDrop } from "./input";
+import { paintPins, paintSection } from "./paint/closer-look";
 import { paintGaps, paintGuides, paintLength } from "./paint/guides";
 import { paintFrame, paintHandles } from "./paint/hand";
 import type { Pen } from "./paint/pen";
 import { PaintedLayer } from "./painted-layer";
 import { PartNotes } from "./part-notes";
 import { PartsList } from "./parts-list";
+import { PictureScale } from "./picture-scale";
 import { tapeText } from "./tape";
 import type { CanvasTheme } from "./theme";
 import { themeProperties, useLoadedTheme } from "./use-loaded-theme";
-import { type PlannedField, type Shown, useBenchPaint, useFieldPaint, usePartsPaint } from "./use-paints";
+import { type PlannedField, type Shown, useBenchPaint, useFieldPaint, usePartsPaint, useShownPicture } from "./use-paints";
 import { usePointer } from "./use-pointer";
 import { type Place, type TrayView, toScreen, viewOf } from "./view";
-import { VoltScale } from "./volt-scale";
 
 export interface TrayCanvasProps {
   readonly setup: Setup;
@@ -30,6 +32,9 @@ export interface TrayCanvasProps {
   readonly trayView: TrayView;
   readonly theme: CanvasTheme;
   readonly shown: Shown;
+  /** Which picture, and what is pinned and cut through. */
+  readonly closer: CloserLookState;
+  readonly closerActions: Pick<CloserLook, "addPin" | "laySection">;
   /** Numbers of probe points to bring out, because a list has them selected. */
   readonly markedPoints: ReadonlySet<number>;
   /** Whether parts may be moved and changed here. */
@@ -44,7 +49,7 @@ const planForTags = (field: PlannedField | null): Plan | null => (field === null
 
 /** The tray on its bench, drawn to scale, with everything that hands and keys can do to it. Takes data and callbacks only. */
 export function TrayCanvas(props: TrayCanvasProps) {
-  const { setup, selection, field, findings, trayView, shown, editable, actions } = props;
+  const { setup, selection, field, findings, trayView, shown, closer, editable, actions } = props;
   const theme = useLoadedTheme(props.theme);
   const viewState = useStore(trayView);
   const view = useMemo(() => viewOf(viewState), [viewState]);
@@ -66,7 +71,8 @@ export function TrayCanvas(props: TrayCanvasProps) {
   }
 
   const bench = useBenchPaint(setup, view, theme);
-  const paints = useFieldPaint(field, setup, view, theme, shown, props.markedPoints);
+  const shownPicture = useShownPicture(field, closer, theme, shown.picture);
+  const paints = useFieldPaint(field, setup, view, theme, shown, shownPicture, props.markedPoints);
   const { hovered } = look;
   const emphasis = useMemo(() => ({ selection, hovered, findings }), [selection, hovered, findings]);
   const parts = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed, look.gaps);
@@ -75,15 +81,18 @@ export function TrayCanvas(props: TrayCanvasProps) {
     () => (moving ? [] : shownHandles({ setup, selection, view, editable })),
     [setup, selection, view, editable, moving],
   );
+  const { section, pins, pinReadings } = closer;
   const handPaint = useCallback(
     (pen: Pen) => {
+      if (section !== null) paintSection(pen, section, view, theme);
+      paintPins(pen, pins, pinReadings, view, theme);
       paintHandles(pen, handles, view, theme, look.activeHandle);
       paintGuides(pen, look.guides, view, theme);
       paintGaps(pen, look.gaps, view, theme);
       if (tape !== null) paintLength(pen, toScreen(view, ...tape.from), toScreen(view, ...tape.to), tapeText(tape), theme);
       if (look.frame !== null) paintFrame(pen, look.frame[0], look.frame[1], theme);
     },
-    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.gaps, tape],
+    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.gaps, tape, section, pins, pinReadings],
   );
   const attended = useMemo(() => new Set([...selection, ...(look.hovered === null ? [] : [look.hovered])]), [selection, look.hovered]);
   const count = setup.parts.length;
@@ -118,7 +127,9 @@ export function TrayCanvas(props: TrayCanvasProps) {
           <PaintedLayer name="hand" zoom={zoom} paint={handPaint} />
         </Stage>
       </div>
-      {field !== null && shown.picture && !field.outOfDate && <VoltScale plan={field.plan} dark={theme.dark} />}
+      {field !== null && shownPicture !== null && !field.outOfDate && (
+        <PictureScale plan={field.plan} shown={shownPicture.values} scale={shownPicture.scale} steps={closer.steps} />
+      )}
       {count === 0 && <p className="tray-empty">{texts.canvas.empty}</p>}
       <PartNotes findings={findings} setup={setup} view={view} attended={attended} />
       {look.live !== null && place !== null && (

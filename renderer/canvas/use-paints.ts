@@ -1,10 +1,11 @@
 import { useMemo } from "react";
 import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
+import type { CloserLookState } from "../document/closer-look";
 import { decimalsForStep, fixed, trimmed } from "../document/number-text";
 import { signedDistance } from "../engine/geometry/signed-distance";
 import { texts } from "../texts/texts";
-import { DARK_SCALE, LIGHT_SCALE } from "./colour-scale";
+import { type ColourScale, scaleFor, stepped } from "./colour-scale";
 import { fieldPixels, imageOf } from "./field-image";
 import type { Gap } from "./gaps";
 import { outlinedThing } from "./hit";
@@ -16,6 +17,8 @@ import { paintParts } from "./paint/parts";
 import type { Pen } from "./paint/pen";
 import { numberFont, paintPoints } from "./paint/points";
 import { paintOrigin, paintRules, rulesLieOver } from "./paint/rules";
+import { bandsOf } from "./picture-scale";
+import { type PictureValues, pictureValues } from "./picture-values";
 import { type Crowd, createCrowd, type PixelBox, type PlacedPoint, placeNumbers, RING_PX } from "./point-numbers";
 import { placeTags } from "./tags";
 import { type WidthOf, widthIn } from "./text-width";
@@ -27,6 +30,27 @@ import { toScreen, toTray, type View } from "./view";
 export interface Shown extends FieldParts {
   readonly points: boolean;
   readonly tags: boolean;
+}
+
+/** What the colours show, and in which colours. */
+export type PictureLook = Pick<CloserLookState, "quantity" | "colours" | "steps" | "comparison">;
+
+/** The picture's values and colours, ready to be painted and explained; null while it is not shown. */
+export interface ShownPicture {
+  readonly values: PictureValues;
+  readonly scale: ColourScale;
+}
+
+/** @returns what the picture shows of a plan. */
+export function useShownPicture(field: PlannedField | null, look: PictureLook, theme: CanvasTheme, picture: boolean): ShownPicture | null {
+  const { quantity, colours, steps, comparison } = look;
+  const plan = picture ? (field?.plan ?? null) : null;
+  const other = comparison?.plan.picture ?? null;
+  const values = useMemo(() => (plan === null ? null : pictureValues(plan, quantity, other)), [plan, quantity, other]);
+  const smooth = useMemo(() => scaleFor(theme.dark, colours, values?.quantity === "difference"), [theme.dark, colours, values?.quantity]);
+  const bands = plan === null || values === null || !steps ? null : bandsOf(plan, values);
+  const scale = useMemo(() => (bands === null ? smooth : stepped(smooth, bands)), [smooth, bands]);
+  return useMemo(() => (values === null ? null : { values, scale }), [values, scale]);
 }
 
 /** A plan with the setup that it belongs to. */
@@ -109,20 +133,21 @@ export function useFieldPaint(
   view: View,
   theme: CanvasTheme,
   shown: Shown,
+  shownPicture: ShownPicture | null,
   markedPoints: ReadonlySet<number>,
 ): { readonly field: Paint; readonly points: Paint; readonly placed: readonly PlacedPoint[] } {
   const widths = useWidths(theme);
-  const scale = theme.dark ? DARK_SCALE : LIGHT_SCALE;
   const { plan, outOfDate } = field ?? { plan: null, outOfDate: false };
   const plannedSetup = field?.setup ?? null;
   const { tray } = setup;
   const plannedTray = plannedSetup?.tray ?? tray;
-  const { picture, fieldLines, equipotentials, points, tags } = shown;
-  const picturePlan = picture ? plan : null;
-  const image = useMemo(
-    () => (picturePlan === null ? null : imageOf(fieldPixels(picturePlan.picture, picturePlan.spanV, plannedTray, scale))),
-    [picturePlan, plannedTray, scale],
-  );
+  const { fieldLines, equipotentials, points, tags } = shown;
+  const scale = shownPicture?.values.quantity === "potential" ? shownPicture.scale : null;
+  const image = useMemo(() => {
+    if (plan === null || shownPicture === null) return null;
+    const { values, scale: colours } = shownPicture;
+    return imageOf(fieldPixels({ ...plan.picture, volts: values.values }, values.span, plannedTray, colours));
+  }, [plan, shownPicture, plannedTray]);
   const placed = useMemo(
     () => (plan === null || !points ? [] : placeNumbers(pointsOf(plan), view, widths.number)),
     [plan, points, view, widths],

@@ -10,6 +10,7 @@ const WHEEL_UNIT_PX = [1, 16, 400];
 const ZOOM_PER_PX = 0.0015;
 /** A trackpad's pinch comes as a wheel with small steps. */
 const PINCH = 6;
+const LEAST_SECTION_MM = 2;
 
 /** How many pixels of the window one pixel of the element takes: the zoom of the interface. */
 export function zoomOf(element: HTMLElement): number {
@@ -63,6 +64,7 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
   const [look, setLook] = useState(IDLE);
   const [tape, setTape] = useState<Tape | null>(null);
   const [place, setPlace] = useState<Place | null>(null);
+  const cutFrom = useRef<Place | null>(null);
   const panKey = useRef(false);
   const latest = useRef(props);
   latest.current = props;
@@ -90,11 +92,22 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
     fine: event.altKey,
     pan: panKey.current || event.button === 1 || (event.buttons & 4) !== 0,
   });
-  /** @returns whether the tape was in hand. */
-  function putTapeAway(): boolean {
+  /** @returns whether a tool was in hand. */
+  function putToolAway(): boolean {
     if (tool === "hand") return false;
+    cutFrom.current = null;
     if (!tapeHand.rollUp()) trayView.setTool("hand");
     return true;
+  }
+  /** Where on the tray, mm, to half a millimetre: as a probe is placed. */
+  const whereOn = (at: Place): Place => {
+    const [x, y] = toTray(viewOf(trayView.getState()), ...at);
+    return [Math.round(2 * x) / 2, Math.round(2 * y) / 2];
+  };
+  /** Draws the section from where the pointer was pressed to where it is; a press without a way is none. */
+  function cutTo(at: Place): void {
+    const [from, to] = [cutFrom.current, whereOn(at)];
+    if (from !== null && Math.hypot(to[0] - from[0], to[1] - from[1]) >= LEAST_SECTION_MM) props.closerActions.laySection({ from, to });
   }
 
   return {
@@ -104,9 +117,9 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
     tape,
     /** Where the pointer is, px; null when it has left. */
     place,
-    cursor: tool === "tape" && look.cursor !== "grabbing" ? "crosshair" : look.cursor,
+    cursor: tool !== "hand" && look.cursor !== "grabbing" ? "crosshair" : look.cursor,
     /** Calls off what is under way, or puts the tape away. @returns whether there was anything. */
-    cancel: (): boolean => hand.cancel() || putTapeAway(),
+    cancel: (): boolean => hand.cancel() || putToolAway(),
     holdPan: (event: KeyboardEvent, held: boolean): boolean => {
       if (event.key === " ") panKey.current = held;
       return event.key === " ";
@@ -116,19 +129,27 @@ export function usePointer(props: TrayCanvasProps, surface: RefObject<HTMLDivEle
         if (event.button > 1) return;
         event.currentTarget.setPointerCapture(event.pointerId);
         const [at, modifiers] = [placeOn(surface.current, event), modifiersOf(event)];
+        const { closerActions } = props;
         if (tool === "tape" && !modifiers.pan) tapeHand.press(at);
+        else if (tool === "pin" && !modifiers.pan && event.button === 0) closerActions.addPin(whereOn(at));
+        else if (tool === "section" && !modifiers.pan && event.button === 0) cutFrom.current = whereOn(at);
         else hand.press(at, modifiers);
       },
       onPointerMove: (event: PointerEvent): void => {
         const [at, modifiers] = [placeOn(surface.current, event), modifiersOf(event)];
         setPlace(at);
         if (tool === "tape" && !modifiers.pan) tapeHand.move(at);
+        else if (cutFrom.current !== null) cutTo(at);
         else hand.move(at, modifiers);
         props.onPointer(toTray(viewOf(trayView.getState()), ...at));
       },
       onPointerUp: (event: PointerEvent): void => {
         const at = placeOn(surface.current, event);
         if (tool === "tape") tapeHand.release(at);
+        if (cutFrom.current !== null) {
+          cutFrom.current = null;
+          trayView.setTool("hand");
+        }
         hand.release(at, modifiersOf(event));
       },
       onPointerCancel: (): void => void hand.cancel(),

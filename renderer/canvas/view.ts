@@ -31,6 +31,9 @@ const LARGEST_SCALE = 60;
 /** One press of a zoom key or button. */
 export const ZOOM_STEP = 1.25;
 
+/** What the pointer is on the tray: a hand that takes parts, a measuring tape, a pin for a probe, or the line of a section. */
+export type Tool = "hand" | "tape" | "pin" | "section";
+
 /** What the view is made from: the middle of the stage stays on one place of the tray while the window changes size. */
 export interface TrayViewState {
   readonly widthPx: number;
@@ -41,8 +44,7 @@ export interface TrayViewState {
   readonly middleMm: Place;
   /** Whether the whole tray is kept in sight. */
   readonly fitted: boolean;
-  /** What the pointer is on the tray: a hand that takes parts, or a measuring tape. */
-  readonly tool: "hand" | "tape";
+  readonly tool: Tool;
 }
 
 export interface TrayView extends Pick<StoreApi<TrayViewState>, "getState" | "subscribe" | "getInitialState"> {

@@ -38,6 +38,8 @@ export interface ShellProps {
   readonly tray: ReactNode;
   readonly sheets: ReactNode;
   readonly startPage: ReactNode;
+  /** The card of the closer look, shown over the desk's cards. */
+  readonly closer: ReactNode;
 }
 
 /** The cards of laying out: those of the selected parts, else those of the tray. */
@@ -93,6 +95,7 @@ export function Shell(props: ShellProps) {
       {!startPage && desk !== "sheets" && <TrayDesk {...props} desk={desk} />}
       <Ledger document={document} planning={planning} window={window} />
       <KeysCard window={window} act={props.act} />
+      {!startPage && desk !== "sheets" && props.closer}
       <SettingsCard window={window} settings={settings} onSettings={props.onSettings} />
       <Messages window={window} />
       {fault !== null && <FaultCard host={host} title={words.fault.field} message={fault} onAgain={planning.retry} />}

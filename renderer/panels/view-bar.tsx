@@ -26,6 +26,7 @@ export interface ViewBarProps {
 
 /** What the tray shows, how it is looked at, and the measuring tape: along the tray's lower edge on every desk. */
 export function ViewBar({ document, window, zoom, tapeOut, onTape }: ViewBarProps) {
+  const closerShown = useStore(window, (state) => state.closerShown);
   const shown = useStore(window, (state) => state.shown);
   const snapping = useStore(document, (state) => state.snapping);
   return (
@@ -49,6 +50,12 @@ export function ViewBar({ document, window, zoom, tapeOut, onTape }: ViewBarProp
           name={words.snapLong}
           pressed={snapping}
           onPress={() => document.setSnapping(!document.getState().snapping)}
+        />
+        <IconButton
+          icon="closer-look"
+          name={words.closer}
+          pressed={closerShown}
+          onPress={() => window.set({ closerShown: !closerShown, settingsShown: false, keysShown: false })}
         />
         <IconButton icon="tape" name={words.tape} pressed={tapeOut} onPress={onTape} />
         <IconButton icon="further" name={words.zoomOut} onPress={zoom.zoomOut} />

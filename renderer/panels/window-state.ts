@@ -38,6 +38,7 @@ export interface WindowState {
   readonly startPage: boolean;
   readonly keysShown: boolean;
   readonly settingsShown: boolean;
+  readonly closerShown: boolean;
   readonly findingsShown: boolean;
   readonly shown: Shown;
   readonly readout: PointerReadout | null;
@@ -63,6 +64,7 @@ export function createWindowStore(): WindowStore {
     startPage: false,
     keysShown: false,
     settingsShown: false,
+    closerShown: false,
     findingsShown: false,
     shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
     readout: null,

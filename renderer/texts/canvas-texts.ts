@@ -11,6 +11,8 @@ const kinds: Readonly<Record<ShapeKind, string>> = {
 };
 const severities: Readonly<Record<Severity, string>> = { stop: "Stop", caution: "Caution", note: "Note" };
 
+type Quantity = "potential" | "field" | "current" | "difference";
+
 /** What the tray says: its names for those who listen, its labels, the numbers under the hand, and what is announced. */
 export const canvasTexts = {
   tray: (count: number): string => `Tray with ${count} ${count === 1 ? "part" : "parts"}. Arrow keys move what is selected.`,
@@ -61,7 +63,17 @@ export const canvasTexts = {
   },
   rules: { x: "x mm", y: "y mm" },
   scale: {
-    volts: (text: string): string => `${text} V`,
-    potential: (low: string, high: string): string => `Colours of potential, from ${low} to ${high}, lighter is higher`,
+    units: { potential: "V", field: "V/cm", current: "A/m²", difference: "V" } satisfies Readonly<Record<Quantity, string>>,
+    of: {
+      potential: "potential",
+      field: "field strength",
+      current: "current density",
+      difference: "the difference of potential",
+    } satisfies Readonly<Record<Quantity, string>>,
+    value: (text: string, unit: string): string => `${text} ${unit}`,
+    andMore: (text: string): string => `≥ ${text}`,
+    name: (of: string, low: string, high: string, apart: boolean): string =>
+      apart ? `Colours of ${of}, from ${low} to ${high}` : `Colours of ${of}, from ${low} to ${high}, lighter is higher`,
   },
+  pin: (number: number, volts: string | null): string => (volts === null ? `${number}` : `${number}  ${volts} V`),
 } as const;

@@ -1,5 +1,6 @@
 import { benchTexts } from "./bench-texts";
 import { canvasTexts } from "./canvas-texts";
+import { closerTexts } from "./closer-texts";
 import { documentTexts } from "./document-texts";
 import { fileTexts } from "./file-texts";
 import { layOutTexts } from "./lay-out-texts";
@@ -12,6 +13,7 @@ export const texts = {
   window: windowTexts,
   layOut: layOutTexts,
   canvas: canvasTexts,
+  closer: closerTexts,
   document: documentTexts,
   files: fileTexts,
   bench: benchTexts,

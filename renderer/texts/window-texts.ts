@@ -47,6 +47,7 @@ export const windowTexts = {
     snap: "Snap",
     snapLong: "Snap to whole millimetres and to neighbours",
     tape: "Measuring tape (M)",
+    closer: "Closer look: pictures, pins, section",
     zoomOut: "Further away (−)",
     zoomToTray: "Whole tray (0)",
     zoomIn: "Closer (+)",
@@ -82,6 +83,7 @@ export const windowTexts = {
     tray: [
       ["Arrow keys", "Move what is selected by 1 mm (Shift 10 mm, Alt 0.1 mm)"],
       ["L, R", "Turn it left or right by 5° (Shift 45°)"],
+      ["M, P", "Take up the measuring tape, the pins"],
       ["Escape", "Let go, select nothing"],
       ["Space + drag", "Slide the tray"],
       ["+ − 0", "Closer, further away, whole tray"],

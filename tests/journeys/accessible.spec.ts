@@ -22,6 +22,16 @@ const SCENES: readonly (readonly [scene: string, go: (page: Page) => Promise<unk
       await page.getByText("Copies", { exact: true }).click();
     },
   ],
+  [
+    "the closer look",
+    async (page) => {
+      const card = page.getByRole("region", { name: "Closer look" });
+      await page.getByRole("button", { name: /^Closer look/ }).click();
+      await card.getByRole("button", { name: "Pin the tray's middle" }).click();
+      await card.getByRole("button", { name: "Across the middle" }).click();
+      await card.getByText("Values", { exact: true }).click();
+    },
+  ],
   ["the Bench desk", (page) => goTo(page, "Bench")],
   ["the Probe plan desk", (page) => goTo(page, "Probe plan")],
   [

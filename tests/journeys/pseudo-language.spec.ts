@@ -102,6 +102,9 @@ for (const [width, height] of [
     await desks(page).nth(0).click();
     await page.locator(".in-tray").first().click();
     expect.soft(await cutOff(page), "a selected part").toEqual([]);
+    await page.locator(".view-bar .view-group").last().getByRole("button").nth(1).click();
+    for (const button of await page.locator(".closer-card .choices button:last-child").all()) await button.click();
+    expect.soft(await cutOff(page), "the closer look").toEqual([]);
   });
 }
 

@@ -91,7 +91,7 @@ export function paintEquipotentials(
     pen.save();
     pen.translate(x, y);
     pen.rotate(angleRad);
-    writeLifted(pen, text, 0, 0.5, theme.ink, scale === null ? theme.water : colourAt(scale, (volts - low) / (high - low)), 6);
+    writeLifted(pen, text, 0, 0.5, theme.ink, scale === null ? theme.halo : colourAt(scale, (volts - low) / (high - low)), 6);
     pen.restore();
   }
   pen.restore();
