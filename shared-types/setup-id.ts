@@ -5,10 +5,13 @@ import type { Setup } from "./setup";
 /** Digits without I, L, O and U, which a hand confuses on paper (Crockford's base 32, a published alphabet). */
 const DIGITS = "0123456789ABCDEFGHJKMNPQRSTVWXYZ";
 
+/** What only holds parts for the hand that edits them is on no sheet: a setup locked after printing is still the printed one. */
+const FOR_THE_HAND: ReadonlySet<string> = new Set(["group", "locked"]);
+
 function canonical(value: unknown): string {
   if (Array.isArray(value)) return `[${value.map(canonical).join(",")}]`;
   if (typeof value === "object" && value !== null) {
-    const entries = Object.entries(value).filter(([, item]) => item !== undefined);
+    const entries = Object.entries(value).filter(([key, item]) => item !== undefined && !FOR_THE_HAND.has(key));
     entries.sort(([a], [b]) => (a < b ? -1 : 1));
     return `{${entries.map(([key, item]) => `${JSON.stringify(key)}:${canonical(item)}`).join(",")}}`;
   }
@@ -16,7 +19,7 @@ function canonical(value: unknown): string {
 }
 
 /**
- * A short name for exactly this content: the first 40 bits of SHA-256 over the setup with its keys sorted.
+ * A short name for exactly this content: the first 40 bits of SHA-256 over the setup with its keys sorted, groups and locks left out.
  * @returns eight digits with a dash, such as `K7Q2-9F3A`; equal for equal setups whatever the order of their keys.
  */
 export function setupId(setup: Setup): string {

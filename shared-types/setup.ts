@@ -63,7 +63,15 @@ const shapeSchema = z
     }
   });
 
-const placement = { id: identifier, xMm: coordinateMm, yMm: coordinateMm, turnDeg: between(-3600, 3600).default(0) };
+const placement = {
+  id: identifier,
+  xMm: coordinateMm,
+  yMm: coordinateMm,
+  turnDeg: between(-3600, 3600).default(0),
+  /** For the hand that edits, not for the tray: what bears the same word is selected and moved as one; what is locked stays. */
+  group: identifier.optional(),
+  locked: z.boolean().optional(),
+};
 const partCommon = {
   ...placement,
   name: z.string().max(80).default(""),

@@ -24,5 +24,8 @@ export function roleWords(thing: Thing, supplyVolts: number): string {
 }
 
 /** @returns a thing in one line: name, role, kind and sizes, place. */
-export const describeThing = (thing: Thing, supplyVolts: number): string =>
-  words.whole(thingName(thing), roleWords(thing, supplyVolts), thing.shape.kind, sizeText(thing.shape), placeWords(thing));
+export function describeThing(thing: Thing, supplyVolts: number): string {
+  const whole = words.whole(thingName(thing), roleWords(thing, supplyVolts), thing.shape.kind, sizeText(thing.shape), placeWords(thing));
+  const held = [thing.group === undefined ? [] : [words.inGroup(thing.group)], thing.locked === true ? [words.locked] : []].flat();
+  return [whole, ...held].join(", ");
+}

@@ -4,6 +4,7 @@ import type { Finding } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import type { CloserLook } from "../document/closer-look";
 import type { Document } from "../document/document";
+import { LOCKED } from "../document/holding";
 import type { Planning } from "../document/planning";
 import { announcement } from "./announcement";
 import { createReadout, type PointerReadout, type SampleSource } from "./readout";
@@ -39,6 +40,7 @@ export function DocumentTray(props: {
   const setup = useStore(document, (state) => state.setup);
   const closer = useStore(props.closerLook);
   const selection = useStore(document, (state) => state.selection);
+  const held = useStore(document, (state) => state.refused.find(({ where }) => where === LOCKED));
   const snapping = useStore(document, (state) => state.snapping);
   const plan = useStore(planning, (state) => state.plan);
   const plannedSetup = useStore(planning, (state) => state.plannedSetup);
@@ -77,6 +79,7 @@ export function DocumentTray(props: {
         actions={document}
         onPointer={setPointer}
       />
+      {held !== undefined && <p className="tray-refusal">{held.message}</p>}
       <Announcements document={document} planning={planning} />
     </>
   );

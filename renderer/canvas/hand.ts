@@ -2,6 +2,7 @@ import type { Setup } from "../../shared-types/setup";
 import { boxOfAll, moveThings, placeThing, resizeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
 import { type BoxMm, isPart, namesOf, type Thing, thingById, thingsById, thingsOf, tidyMm } from "../document/edit";
+import { LOCKED, toggled } from "../document/holding";
 import { sizeText, trimmed } from "../document/number-text";
 import { traySizeMm } from "../engine/geometry/tray-outline";
 import { texts } from "../texts/texts";
@@ -107,7 +108,7 @@ export function shownHandles({
 }: Pick<HandWorld, "setup" | "selection" | "view" | "editable">): readonly Handle[] {
   const [only] = selection;
   const thing = only === undefined || selection.length > 1 || !editable ? undefined : thingById(setup, only);
-  return thing === undefined ? [] : handlesOf(thing, view.scale);
+  return thing === undefined || thing.locked === true ? [] : handlesOf(thing, view.scale);
 }
 
 /**
@@ -145,7 +146,7 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
       return;
     }
     const wasSelected = selection.includes(thing.id);
-    if (modifiers.shift) actions.select(wasSelected ? selection.filter((id) => id !== thing.id) : [...selection, thing.id]);
+    if (modifiers.shift) actions.select(toggled(setup, selection, thing.id));
     else if (!wasSelected) actions.select([thing.id]);
     doing = { kind: "pressed", at, thing, wasSelected };
   }
@@ -155,7 +156,7 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
     const handle = handleAt(shownHandles(world()), world().view, at);
     if (handle !== null) return { ...IDLE, cursor: cursorOf(handle) };
     const thing = under(at);
-    return thing === null ? IDLE : { ...IDLE, hovered: thing.id, cursor: world().editable ? "move" : "default" };
+    return thing === null ? IDLE : { ...IDLE, hovered: thing.id, cursor: world().editable && thing.locked !== true ? "move" : "default" };
   }
 
   function hover(at: Place, modifiers: Modifiers): void {
@@ -178,6 +179,10 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
       shift[1] === 0 && modifiers.shift ? 0 : tidyMm(snapped.byYMm),
     ];
     const moved = actions.dragTo(moveThings(before, ids, byX, byY));
+    if (!moved.ok && moved.problems.some(({ where }) => where === LOCKED)) {
+      show({ ...IDLE, live: texts.canvas.hand.locked });
+      return;
+    }
     const alone = ids.length === 1 && moved.ok ? thingById(moved.value, lead.id) : undefined;
     const gaps = alone === undefined || !isPart(alone) ? [] : gapsAround(alone, before);
     const live =

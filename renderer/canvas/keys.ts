@@ -1,4 +1,5 @@
 import type { Setup } from "../../shared-types/setup";
+import { toggleGroup, toggleLock } from "../document/commands/holding";
 import { duplicateThings, removeThings } from "../document/commands/parts";
 import { moveThings, turnThings } from "../document/commands/placing";
 import { type Edit, thingsOf } from "../document/edit";
@@ -44,6 +45,8 @@ function onSelection(key: Key, setup: Setup, selection: readonly string[]): KeyM
     const step = key.shiftKey ? NUDGE_FAR_MM : key.altKey ? NUDGE_FINE_MM : NUDGE_MM;
     return edit(moveThings(setup, selection, arrow[0] * step, arrow[1] * step, `nudge ${selection.join(" ")}`));
   }
+  if (!key.altKey && key.key.toLowerCase() === "k") return edit(toggleLock(setup, selection));
+  if (!key.altKey && key.key.toLowerCase() === "g") return edit(toggleGroup(setup, selection));
   const turn = { l: 1, r: -1 }[key.key.toLowerCase()];
   if (turn === undefined || key.altKey) return null;
   const byDeg = turn * (key.shiftKey ? TURN_FAR_DEG : TURN_DEG);
@@ -53,7 +56,7 @@ function onSelection(key: Key, setup: Setup, selection: readonly string[]): KeyM
 /**
  * Arrows nudge the selected things by 1 mm (Shift 10, Alt 0.1), L and R turn them left and right by 5° (Shift 45°), Delete
  * takes them away, Ctrl or Cmd with D duplicates and with A selects all, Escape selects nothing, + − 0 zoom, M takes up the measuring
- * tape or puts it away, P the pins.
+ * tape or puts it away, K locks and unlocks, G groups and takes apart, P the pins.
  * @returns what the key means, or null when it means nothing here.
  */
 export function meaningOf(key: Key, setup: Setup, selection: readonly string[]): KeyMeaning | null {

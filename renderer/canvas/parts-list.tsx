@@ -1,6 +1,7 @@
 import { type KeyboardEvent, memo, useId, useState } from "react";
 import type { Setup } from "../../shared-types/setup";
 import { type Thing, thingsOf } from "../document/edit";
+import { toggled } from "../document/holding";
 import { texts } from "../texts/texts";
 import { describeThing } from "./describe-thing";
 
@@ -69,7 +70,7 @@ export function PartsList(props: {
     else if (event.key === "Enter") props.onEnter();
     else if (event.key === " " && activeThing !== undefined) {
       const { id } = activeThing;
-      onSelect(selection.includes(id) ? selection.filter((other) => other !== id) : [...selection, id]);
+      onSelect(toggled(setup, selection, id));
     } else if (!props.onKey(event)) return;
     event.preventDefault();
     event.stopPropagation();

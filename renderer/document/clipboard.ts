@@ -5,6 +5,7 @@ import type { Part, Setup, Slab } from "../../shared-types/setup";
 import { texts } from "../texts/texts";
 import { freshId } from "./commands/parts";
 import { type Edit, isPart, thingsById, tidyMm } from "./edit";
+import { freeCopies } from "./holding";
 
 const words = texts.document.clipping;
 
@@ -12,12 +13,13 @@ const words = texts.document.clipping;
 
 const FORMAT = "fieldtray.things";
 
+const held = { group: z.string().optional(), locked: z.boolean().optional() };
 /** Only the frame is checked here; each thing is checked by the document, against the schema of setups, when it is pasted. */
 const clippingSchema = z.strictObject({
   format: z.literal(FORMAT),
   version: z.literal(1),
-  parts: z.array(z.looseObject({ id: z.string(), xMm: z.number(), yMm: z.number(), name: z.string().default("") })),
-  slabs: z.array(z.looseObject({ id: z.string(), xMm: z.number(), yMm: z.number() })),
+  parts: z.array(z.looseObject({ id: z.string(), xMm: z.number(), yMm: z.number(), name: z.string().default(""), ...held })),
+  slabs: z.array(z.looseObject({ id: z.string(), xMm: z.number(), yMm: z.number(), ...held })),
 });
 type Clipping = z.infer<typeof clippingSchema>;
 
@@ -80,7 +82,9 @@ export function pasteThings(text: string): Result<Edit> | null {
       const taken: string[] = [];
       const steps = stepsAside(before, [...parts, ...slabs]);
       const names = new Set(before.parts.map(({ name }) => name));
-      const placed = <Kind extends Clipping["parts"][number] | Clipping["slabs"][number]>(thing: Kind) => {
+      const free = freeCopies(before);
+      const placed = <Kind extends Clipping["parts"][number] | Clipping["slabs"][number]>(clipped: Kind) => {
+        const thing = free(clipped);
         const used = [...before.parts, ...before.water.slabs].some(({ id }) => id === thing.id) || taken.includes(thing.id);
         const id = used ? freshId(before, taken) : thing.id;
         taken.push(id);

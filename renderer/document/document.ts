@@ -4,6 +4,7 @@ import { parseSetup } from "../../shared-types/parse-setup";
 import type { Problem, Result } from "../../shared-types/result";
 import type { Setup } from "../../shared-types/setup";
 import { type Edit, thingsOf } from "./edit";
+import { lockedProblems, withGroups } from "./holding";
 import { inWords } from "./problem-wording";
 
 /**
@@ -116,6 +117,8 @@ export function createDocument(setup: Setup, file: FileHandle | null = null): Do
   function tried(edit: Edit, on: Setup): Result<Setup> {
     const after = edit.apply(on);
     if (after === on) return { ok: true, value: on };
+    const held = lockedProblems(on, after);
+    if (held.length > 0) return { ok: false, problems: held };
     const checked = parseSetup(after);
     return checked.ok ? { ok: true, value: after } : { ok: false, problems: checked.problems.map((problem) => inWords(problem, after)) };
   }
@@ -222,7 +225,11 @@ export function createDocument(setup: Setup, file: FileHandle | null = null): Do
     redo: () => travel("future", "past"),
     select: (ids) => {
       const known = idsOf(getState().setup);
-      setState({ selection: [...new Set(ids)].filter((id) => known.has(id)) });
+      const whole = withGroups(
+        getState().setup,
+        [...new Set(ids)].filter((id) => known.has(id)),
+      );
+      setState(getState().refused.length > 0 ? { selection: whole, refused: [] } : { selection: whole });
       settle();
     },
     setSnapping: (snapping) => setState({ snapping }),

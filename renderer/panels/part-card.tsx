@@ -1,5 +1,6 @@
 import { useStore } from "zustand";
 import { setThickness } from "../document/commands/bench";
+import { allLocked, oneGroup, toggleGroup, toggleLock } from "../document/commands/holding";
 import { duplicateThings, removeThings, setName } from "../document/commands/parts";
 import { placeThing } from "../document/commands/placing";
 import type { Document } from "../document/document";
@@ -75,10 +76,25 @@ export function PartCard({ document, planning }: { readonly document: Document; 
   const things = thingsById(setup, selection);
   if (things.length === 0) return null;
   const many = things.length > 1;
+  const [locked, grouped] = [allLocked(setup, selection), oneGroup(setup, selection)];
   return (
     <section className="card" aria-label={words.label} key={selection.join(" ")}>
       <header className="card-head">
         <h2>{many ? texts.layOut.many.title(things.length) : thingName(things[0])}</h2>
+        {many && (
+          <IconButton
+            icon="group"
+            name={grouped ? words.ungroup : words.group}
+            pressed={grouped}
+            onPress={() => document.run(toggleGroup(setup, selection))}
+          />
+        )}
+        <IconButton
+          icon={locked ? "lock" : "unlock"}
+          name={locked ? words.unlock : words.lock}
+          pressed={locked}
+          onPress={() => document.run(toggleLock(setup, selection))}
+        />
         <IconButton
           icon="duplicate"
           name={words.duplicate}

@@ -2,8 +2,10 @@ import { memo } from "react";
 import { useStore } from "zustand";
 import type { Document } from "../document/document";
 import { isPart, type Thing, thingName, thingsOf } from "../document/edit";
+import { toggled } from "../document/holding";
 import { trimmed } from "../document/number-text";
 import { texts } from "../texts/texts";
+import { Icon } from "./icons";
 import { PartPicture } from "./part-picture";
 
 const words = texts.layOut.parts;
@@ -35,6 +37,8 @@ const Row = memo(function Row(props: {
       >
         <PartPicture shape={thing.shape} turnDeg={thing.turnDeg} sizePx={22} plate={kind === "slab"} hollow={kind === "insulator"} />
         <span className="in-tray-name">{thingName(thing)}</span>
+        {thing.locked === true && <Icon name="lock" />}
+        {thing.group !== undefined && <span className="in-tray-group">{words.group(thing.group)}</span>}
         <span className="in-tray-standing">{standing(thing, volts)}</span>
       </button>
     </li>
@@ -63,7 +67,7 @@ export function PartsInTray({ document, none }: { readonly document: Document; r
               selected={selection.includes(thing.id)}
               onSelect={(id, adding) => {
                 const chosen = document.getState().selection;
-                document.select(!adding ? [id] : chosen.includes(id) ? chosen.filter((one) => one !== id) : [...chosen, id]);
+                document.select(adding ? toggled(document.getState().setup, chosen, id) : [id]);
               }}
             />
           ))}

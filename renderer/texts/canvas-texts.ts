@@ -43,11 +43,11 @@ export const canvasTexts = {
     nothingSelected: "Nothing selected",
     selected: (name: string, place: string): string => `${name} selected, ${place}`,
     manySelected: (count: number): string => `${count} selected`,
-    locked: (names: string): string => `${names} locked: unlock first`,
   },
   hand: {
     place: (x: string, y: string): string => `x ${x}, y ${y} mm`,
     by: (x: string, y: string): string => `by ${x}, ${y} mm`,
+    locked: "locked",
     angle: (degrees: string): string => `${degrees}°`,
     gap: (mm: string): string => `${mm} mm`,
     equalGap: (mm: string): string => `= ${mm} mm`,

@@ -87,4 +87,5 @@ export const documentTexts = {
     frequencyHz: "frequency",
   } as Readonly<Record<string, string>>,
   part: "part",
+  locked: (name: string): string => `${name} is locked. Unlock it first (K).`,
 } as const;

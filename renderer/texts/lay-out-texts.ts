@@ -27,6 +27,7 @@ export const layOutTexts = {
     floats: "floats",
     insulates: "insulates",
     slab: "on the bed",
+    group: (name: string): string => `G${name}`,
   },
   tray: {
     title: "Tray",
@@ -65,6 +66,10 @@ export const layOutTexts = {
     label: "Selected part",
     duplicate: "Duplicate",
     duplicateLong: "Duplicate (Ctrl+D)",
+    lock: "Lock in its place (K)",
+    unlock: "Unlock (K)",
+    group: "Group: select and move as one (G)",
+    ungroup: "Take the group apart (G)",
     takeAway: "Take away",
     takeAwayLong: "Take away (Delete)",
     name: "Name",

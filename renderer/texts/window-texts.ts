@@ -83,6 +83,7 @@ export const windowTexts = {
     tray: [
       ["Arrow keys", "Move what is selected by 1 mm (Shift 10 mm, Alt 0.1 mm)"],
       ["L, R", "Turn it left or right by 5° (Shift 45°)"],
+      ["K, G", "Lock it in its place, group several (again: undo that)"],
       ["M, P", "Take up the measuring tape, the pins"],
       ["Escape", "Let go, select nothing"],
       ["Space + drag", "Slide the tray"],

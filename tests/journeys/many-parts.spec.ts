@@ -78,3 +78,43 @@ test("a polygon's corners are set by number; an outline that touches itself is r
   await page.getByRole("button", { name: "Take corner 2 away" }).click();
   await expect(page.getByRole("button", { name: "Take corner 1 away" })).toBeDisabled();
 });
+
+test("a locked part stays under hand and keys, and says why; unlocked it moves", async ({ page }) => {
+  await part(page, /^Left bar/).click();
+  await page.getByRole("button", { name: "Lock in its place (K)" }).click();
+  await page.locator(".tray-surface").focus();
+  await page.keyboard.press("ArrowRight");
+  await expect(page.locator(".tray-refusal")).toHaveText("Left bar is locked. Unlock it first (K).");
+  await expect(described(page, /^Left bar/)).toContainText("x 65, y 100 mm");
+  await expect(described(page, /^Left bar/)).toContainText("locked");
+  await page.getByLabel("x", { exact: true }).fill("70");
+  await page.getByLabel("x", { exact: true }).press("Enter");
+  await expect(page.locator(".field-refusal")).toContainText("locked");
+  await page.getByLabel("x", { exact: true }).press("Escape");
+  await page.locator(".tray-surface").focus();
+  await page.keyboard.press("k");
+  await page.keyboard.press("ArrowRight");
+  await expect(described(page, /^Left bar/)).toContainText("x 66, y 100 mm");
+  await expect(page.locator(".tray-refusal")).toHaveCount(0);
+});
+
+test("grouped parts are chosen and moved as one, by keyboard alone, and one undo takes the move back", async ({ page }) => {
+  await page.getByRole("listbox", { name: "Parts in the tray" }).focus();
+  await page.keyboard.press("Home");
+  await page.keyboard.press("Shift+ArrowDown");
+  await page.keyboard.press("Enter");
+  await page.keyboard.press("g");
+  await page.keyboard.press("Escape");
+  await part(page, /^Right bar/).click();
+  await expect(page.getByRole("heading", { name: "2 parts selected" })).toBeVisible();
+  await page.locator(".tray-surface").focus();
+  await page.keyboard.press("ArrowUp");
+  await expect(described(page, /^Left bar/)).toContainText("x 65, y 101 mm");
+  await expect(described(page, /^Right bar/)).toContainText("x 235, y 101 mm");
+  await expect(described(page, /^Right bar/)).toContainText("in group 1");
+  await page.keyboard.press("Control+z");
+  await expect(described(page, /^Left bar/)).toContainText("x 65, y 100 mm");
+  await page.getByRole("button", { name: "Take the group apart (G)" }).click();
+  await part(page, /^Right bar/).click();
+  await expect(page.getByRole("heading", { name: "Right bar" })).toBeVisible();
+});

@@ -97,8 +97,33 @@ export function paintEmphasis(pen: Pen, setup: Setup, view: View, theme: CanvasT
     pen.stroke();
     pen.strokeStyle = theme.accent;
     pen.lineWidth = 2.5;
+    const held = thingById(setup, id);
+    // A locked part's edge is broken, and a lock stands on it.
+    pen.setLineDash(held?.locked === true ? [3, 4] : []);
     pen.stroke();
+    pen.setLineDash([]);
+    if (held?.locked === true) paintLock(pen, toScreen(view, held.xMm, held.yMm), theme);
   }
+  pen.restore();
+}
+
+/** A padlock in a disc. */
+function paintLock(pen: Pen, [x, y]: readonly [number, number], theme: CanvasTheme): void {
+  pen.save();
+  pen.translate(x, y);
+  pen.beginPath();
+  pen.arc(0, 0, 10, 0, 2 * Math.PI);
+  pen.fillStyle = theme.tag;
+  pen.fill();
+  pen.strokeStyle = theme.accent;
+  pen.lineWidth = 1.5;
+  pen.stroke();
+  pen.fillStyle = theme.tagInk;
+  pen.fillRect(-4.5, -1, 9, 6.5);
+  pen.strokeStyle = theme.tagInk;
+  pen.beginPath();
+  pen.arc(0, -1.5, 2.8, Math.PI, 0);
+  pen.stroke();
   pen.restore();
 }
 

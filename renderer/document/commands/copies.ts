@@ -1,6 +1,7 @@
 import type { Setup } from "../../../shared-types/setup";
 import { texts } from "../../texts/texts";
 import { type BoxOf, type Edit, isPart, namesOf, type Thing, thingsById, tidyDeg, tidyMm } from "../edit";
+import { freeCopies } from "../holding";
 import { freshId } from "./parts";
 import { boxOfAll } from "./placing";
 
@@ -22,8 +23,11 @@ function copies(
       const things = thingsById(before, ids);
       if (things.length === 0 || count < 2) return before;
       const taken: string[] = [];
-      const made = Array.from({ length: count - 1 }, (_, index) => index + 1).flatMap((copy) =>
-        things.map((thing): Thing => {
+      const groups: string[] = [];
+      const made = Array.from({ length: count - 1 }, (_, index) => index + 1).flatMap((copy) => {
+        const free = freeCopies(before, groups);
+        return things.map((original): Thing => {
+          const thing = free(original);
           const id = freshId(before, taken);
           taken.push(id);
           const { xMm, yMm, turnDeg } = placeOf(thing, copy, things);
@@ -31,8 +35,8 @@ function copies(
           return isPart(thing)
             ? { ...thing, ...place, name: thing.name === "" ? "" : `${thing.name} ${copy + 1}`.slice(0, 80) }
             : { ...thing, ...place };
-        }),
-      );
+        });
+      });
       const slabs = made.flatMap((thing) => (isPart(thing) ? [] : [thing]));
       return {
         ...before,

@@ -13,6 +13,7 @@ import {
   thingsOf,
   tidyMm,
 } from "../edit";
+import { freeCopies } from "../holding";
 import type { ShelfPart } from "../shelf-part";
 
 const { kinds, steps } = texts.document;
@@ -110,7 +111,9 @@ export function duplicateThings(setup: Setup, ids: readonly string[], byXMm = 10
     label: steps.duplicate(namesOf(setup, ids)),
     apply: (before) => {
       const taken: string[] = [];
-      const copied = <Kind extends Thing>(thing: Kind): Kind => {
+      const free = freeCopies(before);
+      const copied = <Kind extends Thing>(original: Kind): Kind => {
+        const thing = free(original);
         const id = freshId(before, taken);
         taken.push(id);
         const place = { id, xMm: tidyMm(thing.xMm + byXMm), yMm: tidyMm(thing.yMm + byYMm) };
@@ -174,8 +177,10 @@ export function setRole(setup: Setup, ids: readonly string[], role: PartRole): E
     (names) => steps.role(names, role),
     (part) => {
       if (part.role === role) return part;
-      const { id, name, xMm, yMm, turnDeg, heightMm, material, shape } = part;
-      return withRole({ id, name, xMm, yMm, turnDeg, heightMm, material, shape }, role, firstTap(setup));
+      const { role: _, ...same } = part;
+      if (!("tap" in same)) return withRole(same, role, firstTap(setup));
+      const { tap: __, ...untapped } = same;
+      return withRole(untapped, role, firstTap(setup));
     },
   );
 }
