@@ -44,6 +44,8 @@ export interface TrayCanvasProps {
   readonly onPointer: (place: Place | null) => void;
 }
 
+const NONE: readonly string[] = [];
+
 /** Numbers that a tag shows come from the plan of this very water; a stale plan would show another tray's volts. */
 const planForTags = (field: PlannedField | null): Plan | null => (field === null || field.outOfDate ? null : field.plan);
 
@@ -75,7 +77,8 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const paints = useFieldPaint(field, setup, view, theme, shown, shownPicture, props.markedPoints);
   const { hovered } = look;
   const emphasis = useMemo(() => ({ selection, hovered, findings }), [selection, hovered, findings]);
-  const parts = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed, look.gaps);
+  const dragged = look.live === null ? NONE : selection;
+  const sheets = usePartsPaint(setup, planForTags(field), view, theme, emphasis, shown.tags, paints.placed, look.gaps, dragged);
   const moving = look.live !== null && look.activeHandle === null;
   const handles = useMemo(
     () => (moving ? [] : shownHandles({ setup, selection, view, editable })),
@@ -122,7 +125,8 @@ export function TrayCanvas(props: TrayCanvasProps) {
         <Stage width={view.widthPx} height={view.heightPx} listening={false} aria-hidden="true">
           <PaintedLayer name="bench" zoom={zoom} paint={bench} />
           <PaintedLayer name="field" zoom={zoom} paint={paints.field} />
-          <PaintedLayer name="parts" zoom={zoom} paint={parts} />
+          <PaintedLayer name="parts" zoom={zoom} paint={sheets.parts} />
+          <PaintedLayer name="tags" zoom={zoom} paint={sheets.tags} />
           <PaintedLayer name="points" zoom={zoom} paint={paints.points} />
           <PaintedLayer name="hand" zoom={zoom} paint={handPaint} />
         </Stage>
@@ -133,7 +137,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
       {count === 0 && <p className="tray-empty">{texts.canvas.empty}</p>}
       <PartNotes findings={findings} setup={setup} view={view} attended={attended} />
       {look.live !== null && place !== null && (
-        <output className="live-number" style={{ left: place[0] + 16, top: place[1] + 22 }} aria-hidden="true">
+        <output className="live-number" style={{ transform: `translate(${place[0] + 16}px, ${place[1] + 22}px)` }} aria-hidden="true">
           {look.live}
         </output>
       )}

@@ -1,4 +1,4 @@
-import { useMemo } from "react";
+import { useMemo, useRef } from "react";
 import type { Plan, ProbePoint } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import type { CloserLookState } from "../document/closer-look";
@@ -190,7 +190,7 @@ export function useFieldPaint(
   return { field: fieldPaint, points: pointsPaint, placed };
 }
 
-/** @returns the sheet of the parts, with the edges of selected and faulty ones, and their tags. */
+/** @returns the sheet of the parts that rest, and above it that of dragged parts, the edges of selected and faulty ones, and tags. */
 export function usePartsPaint(
   setup: Setup,
   plan: Plan | null,
@@ -200,7 +200,8 @@ export function usePartsPaint(
   tagsShown: boolean,
   points: readonly PlacedPoint[],
   gaps: readonly Gap[],
-): Paint {
+  dragged: readonly string[],
+): { readonly parts: Paint; readonly tags: Paint } {
   const widths = useWidths(theme);
   const crowd = useMemo(() => {
     const taken = crowdOf(points);
@@ -212,12 +213,27 @@ export function usePartsPaint(
     () => (tagsShown ? placeTags(setup, plan, view, widths.tag, new Set(selection), crowd) : []),
     [setup, plan, view, widths, selection, tagsShown, crowd],
   );
-  return useMemo(
+  const resting = useSameList(setup.parts.filter(({ id }) => !dragged.includes(id)));
+  const parts = useMemo(() => (pen: Pen) => paintParts(pen, resting, view, theme), [resting, view, theme]);
+  const above = useMemo(
     () => (pen: Pen) => {
-      paintParts(pen, setup, view, theme);
+      paintParts(
+        pen,
+        setup.parts.filter(({ id }) => dragged.includes(id)),
+        view,
+        theme,
+      );
       paintEmphasis(pen, setup, view, theme, emphasis);
       paintTags(pen, tags, theme);
     },
-    [setup, view, theme, emphasis, tags],
+    [setup, view, theme, emphasis, tags, dragged],
   );
+  return { parts, tags: above };
+}
+
+/** @returns the list of before while it holds the very same items: a drag makes a new setup in every frame, out of parts that rest. */
+function useSameList<Item>(list: readonly Item[]): readonly Item[] {
+  const before = useRef(list);
+  if (before.current.length !== list.length || list.some((item, index) => item !== before.current[index])) before.current = list;
+  return before.current;
 }

@@ -13,6 +13,8 @@ import { IconButton } from "./icon-button";
 import type { WindowStore } from "./window-state";
 
 const words = texts.window.ledger;
+/** Finer steps would only flicker, %. */
+const PERCENT_STEP = 10;
 const NO_FINDINGS: readonly Finding[] = [];
 /** Power follows from volts, exactly given, and the current. */
 const powerOf = ({ powerW, currentA }: Plan) => ({
@@ -96,7 +98,7 @@ export function Ledger({ document, planning, window }: LedgerProps) {
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
   const busy = useStore(planning, (state) => state.busy);
-  const percent = useStore(planning, (state) => Math.round(state.progress * 100));
+  const percent = useStore(planning, (state) => PERCENT_STEP * Math.round((100 / PERCENT_STEP) * state.progress));
   const findingsShown = useStore(window, (state) => state.findingsShown);
   const findings = refusal?.findings ?? plan?.findings ?? NO_FINDINGS;
   const counts = (["stop", "caution", "note"] as const).map(

@@ -1,3 +1,4 @@
+import { useDeferredValue, useMemo } from "react";
 import { useStore } from "zustand";
 import { setThickness } from "../document/commands/bench";
 import { allLocked, oneGroup, toggleGroup, toggleLock } from "../document/commands/holding";
@@ -71,8 +72,10 @@ function OneThing({ document, planning, thing }: { readonly document: Document; 
 
 /** What is selected, with exact numbers. */
 export function PartCard({ document, planning }: { readonly document: Document; readonly planning: Planning }) {
-  const setup = useStore(document, (state) => state.setup);
-  const selection = useStore(document, (state) => state.selection);
+  const now = useStore(document, (state) => state.setup);
+  const chosen = useStore(document, (state) => state.selection);
+  // Under a drag the card's many fields follow when there is time: the hand comes first.
+  const { setup, selection } = useDeferredValue(useMemo(() => ({ setup: now, selection: chosen }), [now, chosen]));
   const things = thingsById(setup, selection);
   if (things.length === 0) return null;
   const many = things.length > 1;

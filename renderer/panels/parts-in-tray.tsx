@@ -31,15 +31,17 @@ const Row = memo(function Row(props: {
     <li>
       <button
         type="button"
-        className={`in-tray in-tray-${kind}`}
+        className={`in-tray in-tray-${kind}${thing.locked === true || thing.group !== undefined ? " in-tray-held" : ""}`}
         aria-pressed={selected}
         onClick={(event) => onSelect(thing.id, event.shiftKey || event.ctrlKey || event.metaKey)}
       >
         <PartPicture shape={thing.shape} turnDeg={thing.turnDeg} sizePx={22} plate={kind === "slab"} hollow={kind === "insulator"} />
         <span className="in-tray-name">{thingName(thing)}</span>
-        {thing.locked === true && <Icon name="lock" />}
-        {thing.group !== undefined && <span className="in-tray-group">{words.group(thing.group)}</span>}
-        <span className="in-tray-standing">{standing(thing, volts)}</span>
+        <span className="in-tray-standing">
+          {standing(thing, volts)}
+          {thing.group !== undefined && <span title={words.groupLong(thing.group)}> {words.group(thing.group)}</span>}
+          {thing.locked === true && <Icon name="lock" />}
+        </span>
       </button>
     </li>
   );

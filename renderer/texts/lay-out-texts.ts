@@ -27,7 +27,8 @@ export const layOutTexts = {
     floats: "floats",
     insulates: "insulates",
     slab: "on the bed",
-    group: (name: string): string => `G${name}`,
+    group: (name: string): string => `· G${name}`,
+    groupLong: (name: string): string => `In group ${name}`,
   },
   tray: {
     title: "Tray",

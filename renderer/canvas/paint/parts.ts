@@ -1,4 +1,4 @@
-import type { Part, Setup } from "../../../shared-types/setup";
+import type { Part } from "../../../shared-types/setup";
 import { outlinedThing } from "../hit";
 import type { CanvasTheme } from "../theme";
 import type { View } from "../view";
@@ -61,8 +61,8 @@ function paintPart(pen: Pen, part: Part, view: View, theme: CanvasTheme): void {
   pen.restore();
 }
 
-/** All parts, in the order of the setup. */
-export function paintParts(pen: Pen, setup: Setup, view: View, theme: CanvasTheme): void {
+/** Parts, in the order of the setup. */
+export function paintParts(pen: Pen, parts: readonly Part[], view: View, theme: CanvasTheme): void {
   pen.lineJoin = "round";
-  for (const part of setup.parts) paintPart(pen, part, view, theme);
+  for (const part of parts) paintPart(pen, part, view, theme);
 }
