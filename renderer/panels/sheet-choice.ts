@@ -44,7 +44,7 @@ export const FIRST_CHOICE: PageChoice = {
   fieldFullSize: false,
   grid: "fine",
   wallMm: 0,
-  edgeMm: 7,
+  edgeMm: 5,
 };
 
 /** Whoever waits for a pack: hears of every page done, and may give up between two pages. */

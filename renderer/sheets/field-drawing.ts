@@ -56,6 +56,9 @@ function along(chain: readonly Point[], share: number): { place: Point; directio
 
 const plainVolts = (volts: number): string => `${Number(volts.toPrecision(3))} V`.replace("-", "−");
 
+/** Where along a line its volts are tried: the plainest places first, then all others. */
+const LABEL_SHARES = [0.3, 0.7, 0.2, 0.8, 0.5, 0.1, 0.9, 0.4, 0.6, ...Array.from({ length: 39 }, (_, k) => (k + 1) / 40)];
+
 /** Volts in a gap of their own line, on the longest path of every level first. */
 function voltLabels(plan: Plan, scale: number, places: LabelPlaces, fonts: SheetFonts): TextItem[] {
   return plan.equipotentials.flatMap(({ volts, paths }) => {
@@ -68,7 +71,7 @@ function voltLabels(plan: Plan, scale: number, places: LabelPlaces, fonts: Sheet
       .sort((a, b) => b.length - a.length)
       .slice(0, 3)
       .flatMap((chain): TextItem[] => {
-        const middles = [0.3, 0.7, 0.2, 0.8, 0.5, 0.1, 0.9, 0.4, 0.6].flatMap((share) => {
+        const middles = LABEL_SHARES.flatMap((share) => {
           const found = along(chain, share);
           return found === null ? [] : [found.place];
         });

@@ -26,7 +26,7 @@ export interface PackOptions {
   readonly fieldInk?: FieldInk;
   /** The field key at full size on as many tiles as it needs; absent: fitted to one page. */
   readonly fieldFullSize?: boolean;
-  /** What the printer leaves blank at every edge, mm, 4 to 20; absent: 7. */
+  /** What the printer leaves blank at every edge, mm, 4 to 20; absent: PRINTER_EDGE_MM. */
   readonly edgeMm?: number;
   /** Thickness of the tray's wall, mm: draws the outside of the base too; absent: the inside alone. */
   readonly wallMm?: number;

@@ -11,8 +11,8 @@ export const PAPERS = {
 
 export type PaperName = keyof typeof PAPERS;
 
-/** What printers leave blank at every edge, mm (they differ: 4 to 6.7 mm); nothing is printed nearer unless a pack is ordered so. */
-export const PRINTER_EDGE_MM = 7;
+/** What most printers leave blank at every edge, mm (common practice, no source); a printer that needs more is ordered for. */
+export const PRINTER_EDGE_MM = 5;
 /** Room round a page's content: check bar and figures at the left, header above, check bar, figures and notes below. */
 const LEFT_MM = 13;
 const ABOVE_MM = 12;

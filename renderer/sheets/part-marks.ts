@@ -87,17 +87,20 @@ const TAG_GAP_MM = 1.2;
 
 /**
  * @param scale paper mm for a tray mm.
- * @returns middles for a tag of this size (paper mm) beside a part or slab: round its box where it fills it, else along its outline.
+ * @returns middles for a tag of this size (paper mm) beside a part or slab: round its box where it fills it, else along its outline; last within its opening.
  */
-export function besidePlaced(placed: PlacedShape, scale: number, width: number, height: number, farMm: number): Iterable<Point> {
+export function* besidePlaced(placed: PlacedShape, scale: number, width: number, height: number, farMm: number): Iterable<Point> {
   const { shape, turnDeg } = placed;
   const fillsItsBox =
     shape.kind === "disc" || shape.kind === "ring" || (shape.kind !== "polygon" && shape.kind !== "arc" && turnDeg % 90 === 0);
   const loops = outlineOf(placed);
   if (fillsItsBox) {
     const [left, bottom, right, top] = boundsOf(loops).map((value) => value * scale);
-    return besideBox([left, bottom, right, top], width, height, TAG_GAP_MM, farMm);
+    yield* besideBox([left, bottom, right, top], width, height, TAG_GAP_MM, farMm);
   }
-  const chain = chainOf(loops[0], 0.2).map(([x, y]): Point => [x * scale, y * scale]);
-  return besideOutline(chain, width, height, TAG_GAP_MM, farMm);
+  // A ring close to the tray's wall has its room inside.
+  for (const loop of fillsItsBox ? loops.slice(1) : loops) {
+    const chain = chainOf(loop, 0.2).map(([x, y]): Point => [x * scale, y * scale]);
+    yield* besideOutline(chain, width, height, TAG_GAP_MM, farMm);
+  }
 }

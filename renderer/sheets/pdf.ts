@@ -1,5 +1,6 @@
 import { jsPDF } from "jspdf";
 import { type ClippedItem, type ImageItem, type Ink, type Item, type Pack, type Page, type PathItem, plateOf, type TextItem } from "./page";
+import { PdfTags, readingRuns } from "./pdf-tags";
 
 /** The font files that are embedded, as bytes of TrueType. */
 export interface FontFiles {
@@ -84,7 +85,8 @@ class PagePen {
       left -= width * Math.cos(angle);
       base += width * Math.sin(angle);
     }
-    document.text(words, left, base, turnDeg === undefined ? {} : { angle: turnDeg });
+    // The space parts neighbouring texts for whoever has the page read aloud.
+    document.text(`${words} `, left, base, turnDeg === undefined ? {} : { angle: turnDeg });
   }
 
   private image({ x, y, widthMm, heightMm, columns, rows, rgb }: ImageItem): void {
@@ -171,10 +173,15 @@ export function* packPdfSteps(pack: Pack, fonts: FontFiles, createdOn: string): 
   });
   document.setLanguage("en-GB");
   document.viewerPreferences({ PrintScaling: "None", DisplayDocTitle: true });
+  const tags = new PdfTags(document);
   for (const [index, page] of pack.pages.entries()) {
     if (index > 0) document.addPage(sizeOf(page), orientation(sizeOf(page)));
     const pen = new PagePen(document, page.heightMm, ...page.printerScale);
-    for (const item of page.items) pen.draw(item);
+    tags.beginPage(page.title);
+    for (const run of readingRuns(page.items))
+      tags.mark(run, () => {
+        for (const item of run) pen.draw(item);
+      });
     yield index + 1;
   }
   return new Uint8Array(document.output("arraybuffer"));

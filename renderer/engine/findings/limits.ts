@@ -65,8 +65,11 @@ export const ADVISABLE_LOW_HZ = limit(40, "Hz", "below it the electrodes' surfac
 export const ADVISABLE_HIGH_HZ = limit(1000, "Hz", "above it meters and leads lose accuracy", "ours");
 export const NEEDLESS_CONDUCTIVITY = limit(2790, "µS/cm", "drinking-water limit of the EU (2790 µS/cm at 25 °C)", "confirmed");
 export const DISTILLED = limit(10, "µS/cm", "distilled water conducts 0.5 to 5 µS/cm", "confirmed");
-/** A printed page's free area in mm (ISO 216 A4, 10 mm margins kept from the printer's edge). */
-export const A4_FREE_MM: readonly [number, number] = [277, 190];
+/** What one A4 sheet (ISO 216) shows of a tray at full size, along x and y, mm: upright, then across. A test of the sheets holds them to the paper. */
+export const A4_FREE_MM: readonly (readonly [number, number])[] = [
+  [185, 248],
+  [272, 161],
+];
 /** How far a part may reach beyond the wall before it counts as outside, mm: rounding, not steel. */
 export const OUTSIDE_TOLERANCE_MM = limit(0.01, "mm", "rounding of drawn sizes", "ours");
 

@@ -1,7 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { areaOf, boundsOf, type Loop, outlineOf } from "../../../renderer/engine/geometry/outline";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
-import { probeCsv } from "../../../renderer/sheets/probe-csv";
 import { pointsOf } from "../../../renderer/sheets/template-drawing";
 import { templateDxf } from "../../../renderer/sheets/template-dxf";
 import { templateSvg } from "../../../renderer/sheets/template-svg";
@@ -95,22 +94,5 @@ describe("the template as SVG", () => {
     expect(Number(height)).toBeCloseTo(200 + 2 * 0.8 + 4, 3);
     expect(svg).toContain(plan.setupId);
     for (const { n } of pointsOf(plan)) expect(svg).toContain(`>${n}</text>`);
-  });
-});
-
-describe("the probe plan as a table of values", () => {
-  it("has a line for each point in visiting order, with what the meter should read", async () => {
-    const plan = await planned(EXAMPLES[1].setup);
-    const [heads, ...rows] = probeCsv(plan)
-      .trimEnd()
-      .split("\r\n")
-      .map((line) => line.split(","));
-    const column = (name: string): number => heads.indexOf(name);
-    expect(rows.map((row) => Number(row[0]))).toEqual(pointsOf(plan).map(({ n }) => n));
-    pointsOf(plan).forEach(({ volts, xMm, bandV }, index) => {
-      expect(Number(rows[index][column("expected_V")])).toBeCloseTo(volts, 5);
-      expect(Number(rows[index][column("x_mm")])).toBe(xMm);
-      expect(Number(rows[index][column("band_V")])).toBeCloseTo(bandV, 5);
-    });
   });
 });

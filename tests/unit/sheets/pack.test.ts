@@ -1,9 +1,12 @@
 import { beforeAll, describe, expect, it } from "vitest";
+import { A4_FREE_MM } from "../../../renderer/engine/findings/limits";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
 import type { Item, Page } from "../../../renderer/sheets/page";
 import { OVERLAP_MM, PRINTER_EDGE_MM, tilingFor } from "../../../renderer/sheets/paper";
+import { tagsOf } from "../../../renderer/sheets/part-marks";
 import { SHEET_NAMES } from "../../../renderer/sheets/sheets";
 import { pageSvg } from "../../../renderer/sheets/svg";
+import { drawingBounds } from "../../../renderer/sheets/template-drawing";
 import type { Plan } from "../../../shared-types/plan";
 import { trayWith } from "../../reference/solved";
 import { FONTS as fonts, packOf, pdfOf, planned } from "./packs";
@@ -85,6 +88,33 @@ describe("the pack of an example, all sheets", () => {
     expect(Buffer.from(pdfOf(packOf(setup, plan, { sheets: SHEET_NAMES }))).equals(Buffer.from(pdf))).toBe(true);
   });
 
+  it("can be read aloud: titled, tagged, each page's heading first, its text in order, its drawings in words", () => {
+    const pack = packOf(setup, plan, { sheets: SHEET_NAMES });
+    const pdf = pdfOf(pack);
+    const facts = readPdf("pdfinfo", pdf);
+    expect(facts).toMatch(/Tagged:\s+yes/);
+    expect(facts).toContain(`Title:           ${setup.title} (${plan.setupId})`);
+    expect(facts).toMatch(/Creator:\s+Fieldtray 0\.1\.0/);
+    const spoken = readPdf("pdfinfo", pdf, ["-struct-text"]);
+    const sections = spoken.split(/^ {2}Sect/m).slice(1);
+    expect(sections).toHaveLength(pack.pages.length);
+    sections.forEach((section, index) => {
+      const page = pack.pages[index];
+      expect(section.split("\n").find((line) => line.includes("H1"))).toBeDefined();
+      // Only the words that stand outside drawings: those are told in words of their own.
+      const words = section.replace(/\s+/g, "");
+      let from = 0;
+      for (const item of page.items) {
+        if (item.kind !== "text" || item.text.trim() === "") continue;
+        const at = words.indexOf(item.text.replace(/\s+/g, "").replaceAll('"', "").slice(0, 12), from);
+        expect(at, `“${item.text}” on ${page.title}`).toBeGreaterThanOrEqual(from);
+        from = at;
+      }
+      const drawings = page.items.filter(({ kind }) => kind === "clipped").length;
+      expect(section.match(/^ +Figure/gm)?.length ?? 0).toBe(drawings);
+    });
+  });
+
   it("is drawn on screen from the same data", () => {
     const [page] = packOf(setup, plan).pages;
     const svg = pageSvg(page);
@@ -112,6 +142,42 @@ describe("tiles", () => {
       const { columns, rows, window } = tilingFor(size, [210, 297], { stopped: false, edgeMm: PRINTER_EDGE_MM });
       expect(columns * (window[0] - OVERLAP_MM) + OVERLAP_MM).toBeGreaterThanOrEqual(size[0] - 1e-9);
       expect(rows * (window[1] - OVERLAP_MM) + OVERLAP_MM).toBeGreaterThanOrEqual(size[1] - 1e-9);
+    }
+  });
+});
+
+describe("a tray that the findings say fits one A4 sheet", () => {
+  it("has a template of one page, and one that is 1 mm longer or wider has not", () => {
+    const pagesOf = (lengthMm: number, widthMm: number): number => {
+      const [left, bottom, right, top] = drawingBounds({ ...setup, tray: { ...setup.tray, shape: "rectangle", lengthMm, widthMm } });
+      const { columns, rows } = tilingFor([right - left, top - bottom], [210, 297], { stopped: false, edgeMm: PRINTER_EDGE_MM });
+      return columns * rows;
+    };
+    for (const [alongX, alongY] of A4_FREE_MM) {
+      expect(pagesOf(alongX, alongY)).toBe(1);
+      expect(pagesOf(alongX + 1, alongY)).toBe(2);
+      expect(pagesOf(alongX, alongY + 1)).toBe(2);
+    }
+  });
+});
+
+describe("every part of every example", () => {
+  it("carries its sign and volts, or what it is, on the template, the cover and the field key", async () => {
+    for (const example of EXAMPLES) {
+      const pack = packOf(example.setup, await planned(example.setup), { sheets: ["cover", "template", "field-key"], paper: "a3" });
+      for (const sheet of ["cover", "template", "field-key"]) {
+        const words = pack.pages
+          .filter((page) => page.sheet === sheet)
+          .flatMap(({ items }) => items.flatMap((item) => (item.kind === "clipped" ? item.items : [item])))
+          .flatMap((item) => (item.kind === "text" ? [item.text] : []));
+        for (const part of example.setup.parts) {
+          const tags = tagsOf(part, example.setup.supply.volts);
+          expect(
+            words.some((one) => tags.includes(one)),
+            `${part.id} on the ${sheet} of ${example.title}`,
+          ).toBe(true);
+        }
+      }
     }
   });
 });

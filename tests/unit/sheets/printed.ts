@@ -64,8 +64,8 @@ export function onFaultyPrinter(print: Print, [short, long]: readonly [number, n
   return { widthMm: print.widthMm * x, heightMm: print.heightMm * y, darkness: (atX, atY) => print.darkness(atX / x, atY / y) };
 }
 
-/** @returns what one of Poppler's readers (pdftotext, pdffonts) says of a PDF. */
-export const readPdf = (reader: "pdftotext" | "pdffonts", pdf: Uint8Array, options: readonly string[] = []): string =>
+/** @returns what one of Poppler's readers (pdftotext, pdffonts, pdfinfo) says of a PDF. */
+export const readPdf = (reader: "pdftotext" | "pdffonts" | "pdfinfo", pdf: Uint8Array, options: readonly string[] = []): string =>
   withPdf(pdf, (file) => execFileSync(reader, [...options, file, ...(reader === "pdftotext" ? ["-"] : [])], { encoding: "utf8" }));
 
 /**

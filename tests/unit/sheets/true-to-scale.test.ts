@@ -3,7 +3,7 @@ import { outlineOf, pointAlong } from "../../../renderer/engine/geometry/outline
 import { traySizeMm } from "../../../renderer/engine/geometry/tray-outline";
 import { EXAMPLES } from "../../../renderer/examples/all-examples";
 import type { PackOptions } from "../../../renderer/sheets/pack";
-import type { PaperName } from "../../../renderer/sheets/paper";
+import { PRINTER_EDGE_MM as EDGE, type PaperName } from "../../../renderer/sheets/paper";
 import { pointsOf } from "../../../renderer/sheets/template-drawing";
 import type { Plan } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
@@ -25,7 +25,7 @@ function checkBarsMm(print: Print): Place {
     const [first, last] = [lineAcross(print, along(from), direction, 2), lineAcross(print, along(from + 100), direction, 2)];
     return first === null || last === null ? Number.NaN : 100 + last - first;
   };
-  return [ends((at) => [at, 7 + 7 + 2.2], [1, 0], 20), ends((at) => [7 + 4.5 + 2.2, at], [0, 1], 32)];
+  return [ends((at) => [at, EDGE + 7 + 2.2], [1, 0], EDGE + 13), ends((at) => [EDGE + 4.5 + 2.2, at], [0, 1], EDGE + 25)];
 }
 
 /** Where a tile's origin lies on its print, mm, and what the tile shows. */
@@ -227,10 +227,10 @@ describe("a printed template", () => {
     const [print] = printed(pdfOf(pack));
     const at = (x: number, y: number): Place => [x / 0.968, y / 1.012];
     const ticks = [
-      [at(20, 16.2), [1, 0]],
-      [at(120, 16.2), [1, 0]],
-      [at(13.7, 32), [0, 1]],
-      [at(13.7, 132), [0, 1]],
+      [at(EDGE + 13, EDGE + 9.2), [1, 0]],
+      [at(EDGE + 113, EDGE + 9.2), [1, 0]],
+      [at(EDGE + 6.7, EDGE + 25), [0, 1]],
+      [at(EDGE + 6.7, EDGE + 125), [0, 1]],
     ] as const;
     const places = ticks.map(
       ([place, direction]) => (lineAcross(print, place, direction, 1) ?? Number.NaN) + place[direction[0] === 1 ? 0 : 1],

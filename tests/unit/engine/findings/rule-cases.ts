@@ -332,8 +332,8 @@ export const TABLE: readonly Row[] = [
   {
     code: "template-tiles",
     severity: "note",
-    inside: { tray: { lengthMm: 190, widthMm: 277 }, parts: [] },
-    outside: { tray: { lengthMm: 190.5, widthMm: 277.5 }, parts: [] },
-    says: /190\.5 × 277\.5 mm/,
+    inside: { tray: { lengthMm: 185, widthMm: 248 }, parts: [] },
+    outside: { tray: { lengthMm: 185.5, widthMm: 248.5 }, parts: [] },
+    says: /185\.5 × 248\.5 mm/,
   },
 ];
