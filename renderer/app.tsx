@@ -2,6 +2,7 @@ import "./styles/tokens.css";
 import "./styles/window.css";
 import "./styles/fields.css";
 import "./styles/desks.css";
+import "./styles/page-strip.css";
 import "./styles/closer-look.css";
 import "./canvas/canvas.css";
 import { useEffect, useMemo, useRef, useState } from "react";
@@ -9,6 +10,7 @@ import { useStore } from "zustand";
 import type { Host } from "../shared-types/host";
 import type { PlanOutcome } from "../shared-types/plan";
 import type { Setup } from "../shared-types/setup";
+import { canvasPicture } from "./canvas/canvas-picture";
 import { DocumentTray } from "./canvas/document-tray";
 import { canvasTheme } from "./canvas/theme";
 import { createTrayView } from "./canvas/view";
@@ -91,6 +93,7 @@ export function App({ host }: { readonly host: Host }) {
       () => toPrint.current,
       loadSheets,
       (plan) => probeTableCsv(plan.probing, plan.bench.meter.digitVolts),
+      { png: () => canvasPicture(globalThis.document), title: () => document.getState().setup.title },
     );
   }, [host, window, document, planning]);
   const act = useMemo(
@@ -146,6 +149,7 @@ export function App({ host }: { readonly host: Host }) {
               window={window}
               zoom={trayView}
               tapeOut={tool === "tape"}
+              onSavePicture={() => void handOver.savePicture()}
               onTape={() => trayView.setTool(tool === "tape" ? "hand" : "tape")}
             />
           </>

@@ -49,17 +49,7 @@ const nameFor = (setup: Setup): string => {
 
 export function filesOf(host: Host, document: Document, window: WindowStore): Files {
   const fail = (title: string, lines: readonly string[]): void => {
-    window.tell({
-      tone: "problem",
-      title,
-      lines,
-      choices: [
-        {
-          label: words.copyDetails,
-          choose: () => void host.details().then((details) => host.copyText(`${title}\n${lines.join("\n")}\n${details}`)),
-        },
-      ],
-    });
+    window.tell({ tone: "problem", title, lines, choices: [] });
   };
 
   /** Nothing that the user had is lost: replacing is an undo step, and unsaved work stays a step back. */

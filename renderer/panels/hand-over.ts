@@ -16,6 +16,8 @@ export interface HandOver {
   readonly saveDrawing: (kind: DrawingKind) => Promise<void>;
   /** The probe table for a spreadsheet. */
   readonly saveTable: () => Promise<void>;
+  /** The tray as the window shows it, as a picture. */
+  readonly savePicture: () => Promise<void>;
 }
 
 /** A watch over one pack that shows its progress when it takes long. */
@@ -39,6 +41,7 @@ export function handOverOf(
   choice: () => SheetChoice,
   loadSheets: () => Promise<SheetSource>,
   tableOf: (plan: Plan) => string,
+  picture: { readonly png: () => Promise<Uint8Array<ArrayBuffer> | null>; readonly title: () => string },
 ): HandOver {
   const problem = (title: string, line: string): void => {
     window.tell({ tone: "problem", title, lines: [line], choices: [] });
@@ -71,7 +74,7 @@ export function handOverOf(
 
   async function exported(
     suggestedName: string,
-    kind: "pdf" | "csv" | DrawingKind,
+    kind: "pdf" | "csv" | "png" | DrawingKind,
     bytes: Uint8Array<ArrayBuffer>,
   ): Promise<string | null> {
     const outcome = await host.exportFile({ suggestedName: suggestedName.slice(0, 200), kind, bytes });
@@ -101,5 +104,15 @@ export function handOverOf(
       }, words.notHandedOver),
     saveTable: () =>
       hand(({ plan }, title) => exported(words.tableName(title), "csv", new TextEncoder().encode(tableOf(plan))), words.notHandedOverTable),
+    // Of whatever is there to be seen: a tray that cannot be planned has a picture too.
+    savePicture: async () => {
+      try {
+        const png = await picture.png();
+        const refusal = png === null ? words.noPicture : await exported(words.pictureName(picture.title() || words.fileTitle), "png", png);
+        if (refusal !== null) problem(words.notHandedOverPicture, refusal);
+      } catch (error) {
+        problem(words.notHandedOverPicture, error instanceof Error ? error.message : String(error));
+      }
+    },
   };
 }

@@ -27,6 +27,7 @@ const DRAWINGS = {
   duplicate: "M7 7h9v9H7zM4 13V4h9",
   remove: "M4 6h12M8 6V4h4v2M6 6l.8 10h6.4L14 6M8.7 9v4M11.3 9v4",
   picture: "M3 4.5h14v11H3zM6.5 4.5v11M10 4.5v11M13.5 4.5v11",
+  "save-picture": "M3 3.5h14v8.5M3 3.5V13h5M3 11l4-4 3 3 2-2 2 2M13.5 12v5M11 14.8l2.5 2.5 2.5-2.5",
   equipotentials: "M4.5 3.5c3 4 3 9 0 13M10 3.5v13M15.5 3.5c-3 4-3 9 0 13",
   "field-lines": "M3 10h13M13.5 7.5 16 10l-2.5 2.5M3 6.5c4-3 9-3 13-.5M3 13.5c4 3 9 3 13 .5",
   points: "M5.5 5a1.7 1.7 0 1 0 .01 0M14 3.2a1.7 1.7 0 1 0 .01 0M12.5 12.5a1.7 1.7 0 1 0 .01 0",

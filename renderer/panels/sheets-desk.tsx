@@ -1,8 +1,9 @@
-import { useEffect, useMemo, useRef, useState } from "react";
+import { type CSSProperties, useEffect, useMemo, useRef, useState } from "react";
 import { useStore } from "zustand";
 import type { Document } from "../document/document";
 import { isCurrent, type Planning } from "../document/planning";
 import { texts } from "../texts/texts";
+import { PageStrip } from "./page-strip";
 import { type PagePicture, type SheetSource, sheetChoiceOf } from "./sheet-choice";
 import { SheetOptions, type SheetOptionsProps } from "./sheet-options";
 
@@ -26,6 +27,32 @@ export interface SheetsDeskProps extends Omit<SheetOptionsProps, "source" | "rea
   readonly loadSheets: () => Promise<SheetSource>;
 }
 
+/** How large the pages are shown: two or more beside each other, as wide as there is room, or as large as they will be on paper. */
+type Look = "whole" | "wide" | "true";
+const LOOKS: readonly (readonly [Look, string])[] = [
+  ["whole", words.wholePages],
+  ["wide", words.fullWidth],
+  ["true", words.trueSize],
+];
+
+/** The window's height that bars, captions and air take from a whole page. */
+const AROUND_PAGE = "13rem";
+
+function sizeOf({ widthMm, heightMm }: PagePicture, look: Look): CSSProperties {
+  if (look === "true") return { width: `${widthMm}mm` };
+  return look === "whole" ? { maxWidth: `calc((100vh - ${AROUND_PAGE}) * ${widthMm / heightMm})` } : {};
+}
+
+/** @returns which page is the first one to be seen in a scrolled area. */
+function firstSeen(area: HTMLElement): number {
+  const { top } = area.getBoundingClientRect();
+  const figures = [...area.querySelectorAll("figure")];
+  return Math.max(
+    0,
+    figures.findIndex((figure) => figure.getBoundingClientRect().bottom > top + 40),
+  );
+}
+
 const reasonOf = (error: unknown): string => (error instanceof Error ? error.message : String(error));
 
 /** The sheets before they are printed: pages in the tray's place, choices beside them. */
@@ -36,7 +63,9 @@ export function SheetsDesk({ document, planning, loadSheets, ...options }: Sheet
   const [source, setSource] = useState<SheetSource | null>(null);
   const [pages, setPages] = useState<readonly PagePicture[] | null>(null);
   const [fault, setFault] = useState<string | null>(null);
-  const [wide, setWide] = useState(false);
+  const [look, setLook] = useState<Look>("whole");
+  const pagesPlace = useRef<HTMLElement>(null);
+  const [first, setFirst] = useState(0);
   const { choice: pageChoice, settings } = options;
   const choice = useMemo(() => sheetChoiceOf(pageChoice, settings), [pageChoice, settings]);
   useEffect(() => {
@@ -59,17 +88,28 @@ export function SheetsDesk({ document, planning, loadSheets, ...options }: Sheet
   }, [source, setup, plan, choice]);
 
   const shown = refusal === null && fault === null ? (pages ?? []) : [];
+  const goTo = (index: number): void => {
+    const page = pagesPlace.current?.querySelectorAll("figure").item(index);
+    page?.scrollIntoView({ block: "start" });
+    page?.focus({ preventScroll: true });
+  };
   return (
     <>
-      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a scrolling area must be reachable by keyboard (WCAG 2.1.1) */}
-      <main className={wide ? "pages pages-wide" : "pages"} aria-label={words.pagesLabel} tabIndex={0}>
+      <PageStrip pages={shown} first={Math.min(first, shown.length - 1)} onGo={goTo} />
+      <main
+        ref={pagesPlace}
+        className={`pages pages-${look}`}
+        aria-label={words.pagesLabel}
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: a scrolling area must be reachable by keyboard (WCAG 2.1.1)
+        tabIndex={0}
+        onScroll={({ currentTarget }) => setFirst(firstSeen(currentTarget))}
+      >
         <fieldset className="pages-look chips" aria-label={words.look}>
-          <button type="button" aria-pressed={!wide} onClick={() => setWide(false)}>
-            {words.wholePages}
-          </button>
-          <button type="button" aria-pressed={wide} onClick={() => setWide(true)}>
-            {words.fullWidth}
-          </button>
+          {LOOKS.map(([name, title]) => (
+            <button key={name} type="button" aria-pressed={look === name} onClick={() => setLook(name)}>
+              {title}
+            </button>
+          ))}
         </fieldset>
         {refusal !== null && <p className="pages-note">{words.refused(refusal.message)}</p>}
         {fault !== null && (
@@ -81,11 +121,7 @@ export function SheetsDesk({ document, planning, loadSheets, ...options }: Sheet
           <p className="pages-note">{pageChoice.pages.length === 0 ? words.noneChosen : words.making}</p>
         )}
         {shown.map((page, index) => (
-          <figure
-            key={page.id}
-            style={{ aspectRatio: `${page.widthMm} / ${page.heightMm}` }}
-            className={plan === null ? "out-of-date" : ""}
-          >
+          <figure key={page.id} tabIndex={-1} style={sizeOf(page, look)} className={plan === null ? "out-of-date" : ""}>
             <SvgPage svg={page.svg} label={words.pageLabel(index + 1, page.name, page.widthMm, page.heightMm)} />
             <figcaption>{words.pageOf(index + 1, shown.length, page.name)}</figcaption>
           </figure>

@@ -97,7 +97,7 @@ export function Shell(props: ShellProps) {
       <KeysCard window={window} act={props.act} />
       {!startPage && desk !== "sheets" && props.closer}
       <SettingsCard window={window} settings={settings} onSettings={props.onSettings} />
-      <Messages window={window} />
+      <Messages host={host} window={window} />
       {fault !== null && <FaultCard host={host} title={words.fault.field} message={fault} onAgain={planning.retry} />}
     </div>
   );

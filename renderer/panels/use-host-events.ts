@@ -82,17 +82,7 @@ export function useFaultMessages(host: Host, window: WindowStore): void {
       const message = reasonOf(reason);
       host.log({ level: "error", message: (reason instanceof Error ? `${message}\n${reason.stack ?? ""}` : message).slice(0, 8000) });
       const { fault } = texts.window;
-      window.tell({
-        tone: "problem",
-        title: fault.window,
-        lines: [message, fault.windowLine],
-        choices: [
-          {
-            label: fault.copy,
-            choose: () => void host.details().then((details) => host.copyText(`${fault.window}\n${message}\n${details}`)),
-          },
-        ],
-      });
+      window.tell({ tone: "problem", title: fault.window, lines: [message, fault.windowLine], choices: [] });
     };
     const onError = (event: ErrorEvent): void => tell(event.error ?? event.message);
     const onRejection = (event: PromiseRejectionEvent): void => tell(event.reason);

@@ -22,10 +22,11 @@ export interface ViewBarProps {
   readonly zoom: Zoom;
   readonly tapeOut: boolean;
   readonly onTape: () => void;
+  readonly onSavePicture: () => void;
 }
 
 /** What the tray shows, how it is looked at, and the measuring tape: along the tray's lower edge on every desk. */
-export function ViewBar({ document, window, zoom, tapeOut, onTape }: ViewBarProps) {
+export function ViewBar({ document, window, zoom, tapeOut, onTape, onSavePicture }: ViewBarProps) {
   const closerShown = useStore(window, (state) => state.closerShown);
   const shown = useStore(window, (state) => state.shown);
   const snapping = useStore(document, (state) => state.snapping);
@@ -58,6 +59,7 @@ export function ViewBar({ document, window, zoom, tapeOut, onTape }: ViewBarProp
           onPress={() => window.set({ closerShown: !closerShown, settingsShown: false, keysShown: false })}
         />
         <IconButton icon="tape" name={words.tape} pressed={tapeOut} onPress={onTape} />
+        <IconButton icon="save-picture" name={words.savePicture} onPress={onSavePicture} />
         <IconButton icon="further" name={words.zoomOut} onPress={zoom.zoomOut} />
         <IconButton icon="whole" name={words.zoomToTray} onPress={zoom.fit} />
         <IconButton icon="closer" name={words.zoomIn} onPress={zoom.zoomIn} />

@@ -58,9 +58,7 @@ function voltRows({ supply, water }: Setup, [low, high]: Plan["spanV"]): NumberR
 
 function gasRows({ session }: Setup, gas: Plan["bench"]["gas"]): NumberRow[] {
   if (gas === null)
-    return [
-      { quantity: "Gas", here: "AC: little or none", limit: "no odour, no steady bubbles", source: "see the findings (an estimate)" },
-    ];
+    return [{ quantity: "Gas", here: "AC: little or none", limit: "no odour, no steady bubbles", source: "common practice, no source" }];
   return [
     {
       quantity: "Hydrogen, at most",

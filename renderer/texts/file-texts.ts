@@ -47,5 +47,4 @@ export const fileTexts = {
   hereUnchanged: "What is open here is unchanged.",
   readAgain: "Read it again",
   draftFails: "Your work cannot be kept against a crash",
-  copyDetails: "Copy details",
 } as const;

@@ -47,6 +47,7 @@ export const windowTexts = {
     snap: "Snap",
     snapLong: "Snap to whole millimetres and to neighbours",
     tape: "Measuring tape (M)",
+    savePicture: "Save what is shown here as a picture (PNG)",
     closer: "Closer look: pictures, pins, section",
     zoomOut: "Further away (−)",
     zoomToTray: "Whole tray (0)",

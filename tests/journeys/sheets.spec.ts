@@ -28,6 +28,63 @@ test("a pack is chosen by who works from it, a page by its name", async ({ page 
   await expect(page.getByRole("button", { name: "Safety", exact: true })).toHaveAttribute("aria-pressed", "false");
 });
 
+test("the pages can be seen as large as on paper, and gone to one by one from the strip", async ({ page }) => {
+  await page.getByRole("button", { name: "Everything", exact: true }).click();
+  await expect.poll(async () => (await pageTitles(page)).some((title) => title.includes("Printer calibration"))).toBe(true);
+  await page.getByRole("button", { name: "100 %", exact: true }).click();
+  const box = await page.locator(".page-picture").first().boundingBox();
+  // A CSS millimetre is 96/25.4 pixels (CSS Values and Units, section 6.2).
+  expect(box?.width).toBeCloseTo((210 * 96) / 25.4, 0);
+  expect(box?.height).toBeCloseTo((297 * 96) / 25.4, 0);
+  const strip = page.getByRole("navigation", { name: "Go to a page" });
+  await expect(strip.getByRole("button")).toHaveCount(await page.locator("figure").count());
+  await strip.getByRole("button", { name: /Low-voltage checklist, 1/ }).click();
+  const checklist = page.locator("figure").filter({ hasText: "Low-voltage checklist, 1" });
+  await expect(checklist).toBeFocused();
+  await expect(checklist).toBeInViewport();
+  await expect(strip.getByRole("button", { name: /Low-voltage checklist, 1/ })).toHaveAttribute("aria-current", "page");
+});
+
+test("mirroring, grid, ink, wall and edge change the page that is shown", async ({ page }) => {
+  const picture = page.locator(".page-picture").first();
+  const millimetres = picture.locator('path[stroke-width="0.05"]');
+  const grounds = picture.locator('path[fill="rgb(217 217 217)"]');
+  await expect(picture.locator("text", { hasText: "thick outline: inside of the wall" })).toHaveCount(1);
+  await expect(millimetres).not.toHaveCount(0);
+  await expect(grounds).not.toHaveCount(0);
+  await page.getByLabel("Template mirrored, to read from below").check();
+  const title = picture.locator("text", { hasText: "Tray template 1:1, mirrored, tile A1" });
+  await expect(title).toHaveAttribute("x", "5");
+  await page.getByLabel("Grid").selectOption({ label: "5 mm" });
+  await expect(millimetres).toHaveCount(0);
+  await page.getByLabel("Save ink").check();
+  await expect(grounds).toHaveCount(0);
+  await page.getByLabel("Wall drawn").fill("4");
+  await page.getByLabel("Wall drawn").press("Enter");
+  await expect(picture.locator("text", { hasText: "thin: its outside" })).toHaveCount(1);
+  await page.getByLabel("Blank edge").fill("12");
+  await page.getByLabel("Blank edge").press("Enter");
+  await expect(title).toHaveAttribute("x", "12");
+  await page.getByLabel("Blank edge").fill("3");
+  await page.getByLabel("Blank edge").press("Enter");
+  await expect(page.getByRole("alert").filter({ hasText: "Blank edge: 4 to 20 mm" })).toBeVisible();
+});
+
+test("what the canvas shows is saved as a picture", async ({ page }) => {
+  await goTo(page, "Lay out");
+  await expect(page.locator(".tray-surface canvas").first()).toBeVisible();
+  const path = await savedFile(page, () => page.getByRole("button", { name: /as a picture/ }).click());
+  const png = readFileSync(path);
+  expect(png.subarray(1, 4).toString("latin1")).toBe("PNG");
+  const shown = await page
+    .locator(".tray-surface canvas")
+    .first()
+    .evaluate((canvas: HTMLCanvasElement) => [canvas.width, canvas.height]);
+  expect([png.readUInt32BE(16), png.readUInt32BE(20)]).toEqual(shown);
+  // The potential's colours are in it: a blank picture of this size takes a few thousand bytes.
+  expect(png.byteLength).toBeGreaterThan(20_000);
+});
+
 test("on larger paper the template comes in one piece", async ({ page }) => {
   await expect.poll(async () => (await pageTitles(page)).filter((title) => title.includes("tile")).length).toBeGreaterThan(1);
   await page.getByLabel("Paper").selectOption("a3");

@@ -46,6 +46,7 @@ async function deskWith(pages: number, pageMs: number) {
     () => choice,
     async () => source as SheetSource,
     () => "",
+    { png: async () => new Uint8Array([137, 80, 78, 71]), title: () => "Two bars" },
   );
   const working = () => window.getState().messages.find(({ tone }) => tone === "working");
   return { handOver, window, exported, working };
