@@ -19,11 +19,12 @@ function canonical(value: unknown): string {
 }
 
 /**
- * A short name for exactly this content: the first 40 bits of SHA-256 over the setup with its keys sorted, groups and locks left out.
+ * A short name for exactly this content: the first 40 bits of SHA-256 over the setup with its keys sorted, groups, locks and readings
+ * left out: what was measured belongs to the layout and does not make another of it.
  * @returns eight digits with a dash, such as `K7Q2-9F3A`; equal for equal setups whatever the order of their keys.
  */
 export function setupId(setup: Setup): string {
-  const hash = sha256(utf8ToBytes(canonical(setup)));
+  const hash = sha256(utf8ToBytes(canonical({ ...setup, readings: undefined })));
   let bits = 0n;
   for (const byte of hash.subarray(0, 5)) bits = (bits << 8n) | BigInt(byte);
   let text = "";

@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { polygonFault } from "./polygon-fault";
+import { readingsSchema } from "./readings";
 
 /**
  * The setup file, version 1: everything that is known about a tray before water is poured.
@@ -166,6 +167,8 @@ export const setupSchema = z
     parts: z.array(partSchema).max(64),
     probing: probingSchema.prefault({}),
     session: sessionSchema.prefault({}),
+    /** What was measured; absent until something is. Leaves the setup's id as it is. */
+    readings: readingsSchema.optional(),
   })
   .superRefine((setup, context) => {
     const seen = new Set<string>();

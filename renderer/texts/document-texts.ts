@@ -54,6 +54,17 @@ export const documentTexts = {
     title: "change title",
     notes: "change notes",
     remedy: "apply remedy",
+    readings: {
+      addRun: (name: string): string => `add run ${name}`,
+      removeRun: (name: string): string => `remove run ${name}`,
+      renameRun: (name: string): string => `rename run ${name}`,
+      describeRun: "change who and when",
+      enter: (n: number): string => `enter reading ${n}`,
+      clear: (n: number): string => `clear reading ${n}`,
+      take: (count: number): string => `take ${count} reading${count === 1 ? "" : "s"}`,
+      removeFound: "remove found place",
+      clearRun: (name: string): string => `clear run ${name}`,
+    },
   },
   clipping: {
     damaged: "the copied parts are damaged",
