@@ -127,6 +127,13 @@ function featuresOf(solid: Solid, smallestReachMm: number): Feature[] {
   return solid.loops.flatMap(cornerFeatures);
 }
 
+/** The two corners of a strip's end, each by itself: for an end with a wall or another part at its back. */
+function cornersOfEnd(solid: Solid, { core }: Feature): Feature[] {
+  const isAt = (x: number, y: number): boolean =>
+    Math.min(Math.hypot(x - core.x0, y - core.y0), Math.hypot(x - core.x1, y - core.y1)) < 1e-6;
+  return solid.loops.flatMap(cornerFeatures).filter(({ core: corner }) => isAt(corner.x0, corner.y0));
+}
+
 function distanceToCore(core: Edge, x: number, y: number): number {
   return core.x0 === core.x1 && core.y0 === core.y1 ? Math.hypot(x - core.x0, y - core.y0) : distanceToPiece(core, x, y);
 }
@@ -171,12 +178,16 @@ export function localFieldOf(
   clearanceMm: (x: number, y: number) => number,
 ): LocalField {
   const wallMm = (x: number, y: number): number => Math.max(0, depthFromWallMm(setup.tray, x, y));
-  const all = featuresOf(solid, smallestReachMm).map((feature) => {
+  const limited = (feature: Feature): Feature => {
     const { x0, y0, x1, y1 } = feature.core;
     const roomMm = Math.min(wallMm(x0, y0), wallMm(x1, y1), clearanceMm(x0, y0), clearanceMm(x1, y1));
     return { ...feature, reachMm: Math.min(feature.reachMm, 0.6 * roomMm, MOST_REACH_IN_LEAST * smallestReachMm) };
+  };
+  const isWide = ({ reachMm }: Feature): boolean => reachMm >= smallestReachMm;
+  const features = featuresOf(solid, smallestReachMm).flatMap((feature) => {
+    const whole = limited(feature);
+    return isWide(whole) ? [whole] : cornersOfEnd(solid, feature).map(limited).filter(isWide);
   });
-  const features = all.filter((feature) => feature.reachMm >= smallestReachMm);
   const pieces = solid.loops.flat().map((piece) => ({ piece, potential: piecePotential(piece) }));
 
   function featureAt(x: number, y: number): Feature | null {
