@@ -152,6 +152,19 @@ const sessionSchema = z.strictObject({
   hoodLitres: between(0.1, 1_000_000).default(100),
   roomCubicMetres: between(1, 1_000_000).default(100),
 });
+/**
+ * What the builder of the tray promises to keep, each ± half a width (probe placement stands with the probing). Absent as a whole:
+ * the defaults hold, and the setup's id is what it was before there were any.
+ */
+const tolerancesSchema = z.strictObject({
+  supplyPercent: between(0, 50).default(1),
+  partPlacementMm: between(0, 50).default(0.5),
+  partTurnDeg: between(0, 45).default(0.5),
+  depthMm: between(0, 50).default(0.5),
+  tiltDeg: between(0, 10).default(0.2),
+  conductivityPercent: between(0, 100).default(5),
+  temperatureK: between(0, 50).default(1),
+});
 
 export const setupSchema = z
   .strictObject({
@@ -167,6 +180,7 @@ export const setupSchema = z
     parts: z.array(partSchema).max(64),
     probing: probingSchema.prefault({}),
     session: sessionSchema.prefault({}),
+    tolerances: tolerancesSchema.optional(),
     /** What was measured; absent until something is. Leaves the setup's id as it is. */
     readings: readingsSchema.optional(),
   })
@@ -206,6 +220,10 @@ export type Shape = Part["shape"];
 export type ShapeKind = Shape["kind"];
 export type Probing = Setup["probing"];
 export type Session = Setup["session"];
+export type Tolerances = DeepReadonly<z.output<typeof tolerancesSchema>>;
+
+/** What holds where a setup states no tolerances. */
+export const DEFAULT_TOLERANCES: Tolerances = tolerancesSchema.parse({});
 
 /** A shape and where it lies: what parts and slabs have in common. */
 export interface PlacedShape {

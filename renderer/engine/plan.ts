@@ -27,6 +27,7 @@ import { equipotentialsOf } from "./lines/equipotentials";
 import { fieldLinesOf } from "./lines/field-lines";
 import { evenLevels } from "./probing/levels";
 import { planProbes } from "./probing/plan-probes";
+import { type SensitivityField, solveSensitivities } from "./tolerance/sensitivity-field";
 
 /** How a caller watches a plan being made and stops it. */
 export interface PlanOptions extends Pace {
@@ -38,6 +39,11 @@ export interface Planner {
   readonly plan: (setup: Setup, quality: Quality, options?: PlanOptions) => Promise<PlanOutcome>;
   /** Readings from the best field solved for this setup's geometry; null when there is none. */
   readonly sample: (setup: Setup, placesMm: readonly (readonly [number, number])[]) => readonly FieldReading[] | null;
+  /**
+   * How the field of this setup's geometry changes with everything that can move it: solved anew or, for one of the newest
+   * geometries, remembered. The setup must be one that `plan` does not refuse. Rejects when `signal` is aborted.
+   */
+  readonly sensitivities: (setup: Setup, options?: PlanOptions) => Promise<SensitivityField>;
 }
 
 /** Findings that leave no field to speak of. */
@@ -48,6 +54,8 @@ const FIELD_LINES = 24;
 const SERVING: Readonly<Record<Quality, readonly Quality[]>> = { live: ["print", "live"], print: ["print"], reference: ["reference"] };
 /** Solved geometries kept: enough for undo and redo to be instant. */
 const KEPT_SOLUTIONS = 4;
+/** Sensitivities kept: of the present geometry and the one before. */
+const KEPT_SENSITIVITIES = 2;
 
 function refusalOf(findings: readonly Finding[]): PlanRefusal | null {
   const blocking = findings.find(({ code }) => REFUSING_CODES.has(code));
@@ -142,6 +150,7 @@ const electrodeCount = (setup: Setup): number => setup.parts.filter(({ role }) =
 export function createPlanner(): Planner {
   const kept = new Map<string, Solved>();
   const memory = createSolverMemory();
+  const sensitive = new Map<string, SensitivityField>();
 
   function keep(key: string, solved: Solved): void {
     kept.delete(key);
@@ -185,7 +194,20 @@ export function createPlanner(): Planner {
     return readingsWithInterface(setup, readings, field.spanV, lossesOf(setup, factsOf(setup, field, conductivitySPerM)));
   }
 
-  return { plan, sample };
+  async function sensitivities(setup: Setup, options: PlanOptions = {}): Promise<SensitivityField> {
+    // An even depth leaves the potentials alone but not what a tilt does to them.
+    const key = `${geometryKey(setup)} ${setup.water.depthMm}`;
+    const field = sensitive.get(key) ?? (await drive(solveSensitivities(setup, options.onProgress), options));
+    sensitive.delete(key);
+    sensitive.set(key, field);
+    for (const oldest of sensitive.keys()) {
+      if (sensitive.size <= KEPT_SENSITIVITIES) break;
+      sensitive.delete(oldest);
+    }
+    return field;
+  }
+
+  return { plan, sample, sensitivities };
 }
 
 /**
