@@ -19,6 +19,7 @@ import { createDocument } from "./document/document";
 import { createPlanning } from "./document/planning";
 import { probeTableCsv } from "./engine/probing/probe-table-csv";
 import { EXAMPLES } from "./examples/all-examples";
+import { saltmarshStock } from "./examples/saltmarsh-stock";
 import { CloserCard } from "./panels/closer-look/closer-card";
 import { compareWithFile } from "./panels/closer-look/compare";
 import { commandsOf } from "./panels/commands";
@@ -30,6 +31,8 @@ import { FIRST_CHOICE, type SheetSource, sheetChoiceOf } from "./panels/sheet-ch
 import { SheetsDesk } from "./panels/sheets-desk";
 import { Shell } from "./panels/shell";
 import { StartPage } from "./panels/start-page";
+import { StockCard } from "./panels/stock/stock-card";
+import { exportStock, importStock, useStock } from "./panels/stock/use-stock";
 import { useDrafts, useFaultMessages, useHostEvents, useWindowTitle } from "./panels/use-host-events";
 import { useRecentPictures, useSettings } from "./panels/use-settings";
 import { THEMES, useTheme } from "./panels/use-theme";
@@ -73,6 +76,7 @@ function made(host: Host) {
 export function App({ host }: { readonly host: Host }) {
   const { client, document, window, planning, closerLook, files, trayView } = useMemo(() => made(host), [host]);
   const [settings, changeSettings] = useSettings(host);
+  const keeper = useStock(settings, changeSettings);
   const [choice, setChoice] = useState(FIRST_CHOICE);
   const toPrint = useRef(sheetChoiceOf(choice, settings));
   toPrint.current = sheetChoiceOf(choice, settings);
@@ -153,6 +157,17 @@ export function App({ host }: { readonly host: Host }) {
               onTape={() => trayView.setTool(tool === "tape" ? "hand" : "tape")}
             />
           </>
+        }
+        keeper={keeper}
+        stockCard={
+          <StockCard
+            document={document}
+            window={window}
+            keeper={keeper}
+            example={saltmarshStock}
+            onImport={() => void importStock(host, window, keeper.keep)}
+            onExport={() => void exportStock(host, window, keeper.stock)}
+          />
         }
         closer={
           <CloserCard

@@ -127,3 +127,7 @@ export function parseSetupText(text: string): Result<Setup> {
 export function setupText(setup: Setup): string {
   return `${JSON.stringify(setup, null, 2)}\n`;
 }
+
+/** @returns what is wrong with data of ours, in the words of a refused setup. */
+export const parseProblems = (error: z.ZodError, data: unknown): readonly Problem[] =>
+  error.issues.flatMap((issue) => problemsOf(issue, data));

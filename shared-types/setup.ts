@@ -41,7 +41,7 @@ const frameSchema = z.strictObject({
 });
 const polygonSchema = z.strictObject({ kind: z.literal("polygon"), pointsMm: z.array(pairMm).min(3).max(500) });
 
-const shapeSchema = z
+export const shapeSchema = z
   .discriminatedUnion("kind", [barSchema, discSchema, ringSchema, arcSchema, frameSchema, polygonSchema])
   .superRefine((shape, context) => {
     if ((shape.kind === "ring" || shape.kind === "arc") && shape.innerMm >= shape.outerMm) {
@@ -92,7 +92,7 @@ const trayCommon = {
   baseMm: lengthMm(0, 100).default(3),
   baseMaterial: openWord.default("acrylic"),
 };
-const traySchema = z.discriminatedUnion("shape", [
+export const traySchema = z.discriminatedUnion("shape", [
   z.strictObject({ shape: z.literal("rectangle"), lengthMm: lengthMm(20, 2000), widthMm: lengthMm(20, 2000), ...trayCommon }),
   z.strictObject({ shape: z.literal("circle"), diameterMm: lengthMm(20, 2000), ...trayCommon }),
 ]);

@@ -1,10 +1,12 @@
-import { memo } from "react";
+import { memo, useMemo } from "react";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
+import type { Stock } from "../../shared-types/stock";
 import { applyRemedy } from "../document/commands/bench";
 import type { Document } from "../document/document";
 import { fixed, trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
+import { stockFindings } from "../document/stock-findings";
 import { texts } from "../texts/texts";
 import { FindingsList, SeveritySign } from "./bench/findings-list";
 import { showFinding } from "./bench/show-finding";
@@ -94,13 +96,16 @@ function FindingsCard({
 }
 
 /** The bottom line: what the present plan says, how sure it is, and what the rules found. */
-export function Ledger({ document, planning, window }: LedgerProps) {
+export function Ledger({ document, planning, window, stock }: LedgerProps & { readonly stock: Stock }) {
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
   const busy = useStore(planning, (state) => state.busy);
   const percent = useStore(planning, (state) => PERCENT_STEP * Math.round((100 / PERCENT_STEP) * state.progress));
   const findingsShown = useStore(window, (state) => state.findingsShown);
-  const findings = refusal?.findings ?? plan?.findings ?? NO_FINDINGS;
+  const setup = useStore(document, (state) => state.setup);
+  const lacking = useMemo(() => stockFindings(setup, stock), [setup, stock]);
+  const planned = refusal?.findings ?? plan?.findings ?? NO_FINDINGS;
+  const findings = lacking.length === 0 ? planned : [...planned, ...lacking];
   const counts = (["stop", "caution", "note"] as const).map(
     (severity) => [severity, findings.filter((one) => one.severity === severity).length] as const,
   );

@@ -17,7 +17,7 @@ const FIRST_SLAB: Shape = { kind: "bar", lengthMm: 80, widthMm: 120 };
 const FIRST_THICKNESS_MM = 4;
 
 /** The middle of free water for a new shape. */
-function freePlace(setup: Setup, shape: Shape): readonly [number, number] {
+export function freePlace(setup: Setup, shape: Shape): readonly [number, number] {
   const [lengthMm, widthMm] = traySizeMm(setup.tray);
   return freePlaceMm(setup, shape, boxOf, [0, 0, lengthMm, widthMm]);
 }

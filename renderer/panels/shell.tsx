@@ -16,6 +16,8 @@ import { PartsInTray } from "./parts-in-tray";
 import { ProbePanel, ProbeSettings } from "./probe-panel";
 import { SettingsCard } from "./settings-card";
 import { Shelf } from "./shelf";
+import { StockShelf } from "./stock/stock-shelf";
+import type { StockKeeper } from "./stock/use-stock";
 import { Rail, TopBar } from "./top-bar";
 import { SupplyCard, TrayCard, WaterCard } from "./tray-card";
 import type { WindowStore } from "./window-state";
@@ -40,6 +42,9 @@ export interface ShellProps {
   readonly startPage: ReactNode;
   /** The card of the closer look, shown over the desk's cards. */
   readonly closer: ReactNode;
+  readonly keeper: StockKeeper;
+  /** The card of the stock list. */
+  readonly stockCard: ReactNode;
 }
 
 /** The cards of laying out: those of the selected parts, else those of the tray. */
@@ -65,6 +70,13 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
         {desk === "lay-out" && <Shelf document={document} />}
         {desk === "probe-plan" && <ProbeSettings document={document} />}
         <PartsInTray document={document} none={desk === "lay-out" ? partWords.none : partWords.noneElsewhere} />
+        {desk === "lay-out" && (
+          <StockShelf
+            document={document}
+            keeper={props.keeper}
+            onEdit={() => window.set({ stockShown: true, closerShown: false, settingsShown: false, keysShown: false })}
+          />
+        )}
       </aside>
       <main className="tray-place" aria-label={words.tray}>
         {props.tray}
@@ -93,9 +105,10 @@ export function Shell(props: ShellProps) {
       {startPage && props.startPage}
       {!startPage && desk === "sheets" && <FaultGuard host={host}>{props.sheets}</FaultGuard>}
       {!startPage && desk !== "sheets" && <TrayDesk {...props} desk={desk} />}
-      <Ledger document={document} planning={planning} window={window} />
+      <Ledger document={document} planning={planning} window={window} stock={props.keeper.stock} />
       <KeysCard window={window} act={props.act} />
       {!startPage && desk !== "sheets" && props.closer}
+      {!startPage && desk === "lay-out" && props.stockCard}
       <SettingsCard window={window} settings={settings} onSettings={props.onSettings} />
       <Messages host={host} window={window} />
       {fault !== null && <FaultCard host={host} title={words.fault.field} message={fault} onAgain={planning.retry} />}

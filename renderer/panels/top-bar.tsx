@@ -48,13 +48,17 @@ export function TopBar({ document, window, files, theme, onTheme, onPrint }: Top
           icon="settings"
           name={words.top.window}
           pressed={settingsShown}
-          onPress={() => window.set({ settingsShown: !settingsShown, keysShown: false, findingsShown: false, closerShown: false })}
+          onPress={() =>
+            window.set({ settingsShown: !settingsShown, keysShown: false, findingsShown: false, closerShown: false, stockShown: false })
+          }
         />
         <IconButton
           icon="keys"
           name={words.top.keys}
           pressed={keysShown}
-          onPress={() => window.set({ keysShown: !keysShown, settingsShown: false, findingsShown: false, closerShown: false })}
+          onPress={() =>
+            window.set({ keysShown: !keysShown, settingsShown: false, findingsShown: false, closerShown: false, stockShown: false })
+          }
         />
       </div>
     </header>

@@ -56,7 +56,7 @@ export function ViewBar({ document, window, zoom, tapeOut, onTape, onSavePicture
           icon="closer-look"
           name={words.closer}
           pressed={closerShown}
-          onPress={() => window.set({ closerShown: !closerShown, settingsShown: false, keysShown: false })}
+          onPress={() => window.set({ closerShown: !closerShown, settingsShown: false, keysShown: false, stockShown: false })}
         />
         <IconButton icon="tape" name={words.tape} pressed={tapeOut} onPress={onTape} />
         <IconButton icon="save-picture" name={words.savePicture} onPress={onSavePicture} />

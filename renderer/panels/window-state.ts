@@ -39,6 +39,7 @@ export interface WindowState {
   readonly keysShown: boolean;
   readonly settingsShown: boolean;
   readonly closerShown: boolean;
+  readonly stockShown: boolean;
   readonly findingsShown: boolean;
   readonly shown: Shown;
   readonly readout: PointerReadout | null;
@@ -65,6 +66,7 @@ export function createWindowStore(): WindowStore {
     keysShown: false,
     settingsShown: false,
     closerShown: false,
+    stockShown: false,
     findingsShown: false,
     shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
     readout: null,

@@ -6,6 +6,7 @@ import { fileTexts } from "./file-texts";
 import { layOutTexts } from "./lay-out-texts";
 import { probeTexts, sheetTexts } from "./paper-texts";
 import { readoutTexts } from "./readout-texts";
+import { stockTexts } from "./stock-texts";
 import { windowTexts } from "./window-texts";
 
 /** Every text of the window, in English. Another language is another object of this type. */
@@ -20,5 +21,6 @@ export const texts = {
   readouts: readoutTexts,
   probe: probeTexts,
   sheets: sheetTexts,
+  stock: stockTexts,
 } as const;
 export type Texts = typeof texts;

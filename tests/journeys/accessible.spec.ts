@@ -32,6 +32,14 @@ const SCENES: readonly (readonly [scene: string, go: (page: Page) => Promise<unk
       await card.getByText("Values", { exact: true }).click();
     },
   ],
+  [
+    "the stock list",
+    async (page) => {
+      await page.getByRole("button", { name: "Close the closer look" }).click();
+      await page.getByRole("button", { name: "Stock list…" }).click();
+      await page.getByRole("region", { name: "Stock", exact: true }).getByRole("button", { name: "Example list" }).click();
+    },
+  ],
   ["the Bench desk", (page) => goTo(page, "Bench")],
   ["the Probe plan desk", (page) => goTo(page, "Probe plan")],
   [

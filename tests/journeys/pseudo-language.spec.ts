@@ -105,6 +105,9 @@ for (const [width, height] of [
     await page.locator(".view-bar .view-group").last().getByRole("button").nth(1).click();
     for (const button of await page.locator(".closer-card .choices button:last-child").all()) await button.click();
     expect.soft(await cutOff(page), "the closer look").toEqual([]);
+    await page.locator(".stock-edit").click();
+    await page.locator(".stock-card .choices button").last().click();
+    expect.soft(await cutOff(page), "the stock list").toEqual([]);
   });
 }
 

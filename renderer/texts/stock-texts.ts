@@ -1,0 +1,65 @@
+import type { ShapeKind } from "../../shared-types/setup";
+
+const kinds: Readonly<Record<ShapeKind, string>> = {
+  bar: "bar",
+  disc: "disc",
+  ring: "ring",
+  arc: "arc",
+  frame: "frame",
+  polygon: "polygon",
+};
+
+/** What the stock list says: the shelf of own parts, the card that keeps the list, and what a plan lacks. */
+export const stockTexts = {
+  title: "Stock",
+  edit: "Stock list…",
+  close: "Close the stock list",
+  shelf: "Own parts",
+  shelfHint: "Drag onto the tray, or press Enter",
+  left: (left: number, count: number): string => (left < 0 ? `${-left} too few` : `${left} of ${count} left`),
+  card: {
+    owner: "Belongs to",
+    empty: "Nothing listed yet. Add what lies in the tray, or import a list.",
+    trays: "Trays",
+    parts: "Parts",
+    supplies: "Supplies",
+    name: "Name",
+    count: "Count",
+    what: "What",
+    nameOf: (name: string): string => `Name of ${name}`,
+    countOf: (name: string): string => `Count of ${name}`,
+    drop: (name: string): string => `Strike ${name} off the list`,
+    use: (name: string): string => `Use ${name}`,
+    useTray: "Use as the tray",
+    useSupply: "Use as the supply",
+    addTray: "Add this tray",
+    addParts: "Add the selected parts",
+    addSupply: "Add this supply",
+    import: "Import…",
+    export: "Export…",
+    example: "Example list",
+    part: (size: string, material: string, height: string): string => `${size}, ${material}, ${height} mm high`,
+    tray: (size: string, base: string): string => `${size}, ${base}`,
+    supply: (waveform: "ac" | "dc", volts: string, amperes: string): string => `${waveform.toUpperCase()} to ${volts} V, ${amperes} A`,
+    supplyName: (waveform: "ac" | "dc", volts: string): string => `${waveform.toUpperCase()} supply ${volts} V`,
+    trayName: (size: string): string => `Tray ${size}`,
+  },
+  files: {
+    fileName: "stock.fieldtray-stock.json",
+    notRead: (name: string): string => `${name} is no stock list`,
+    notSaved: "The stock list was not saved",
+    saved: (name: string): string => `Saved ${name}`,
+  },
+  findings: {
+    none: (thing: string): string => `The stock list has no ${thing}.`,
+    few: (thing: string, needed: number, stock: number): string => `${needed} × ${thing} needed, ${stock} in stock.`,
+    needed: (needed: number, trays: number): string => `${needed} needed for ${trays} ${trays === 1 ? "tray" : "trays"}`,
+    held: (stock: number): string => `${stock} in stock`,
+    source: "the stock list",
+    remedy: "Use sizes that the stock holds, run fewer trays, or correct the stock list.",
+    part: (kind: ShapeKind, size: string, material: string, height: string): string =>
+      `${material} ${kinds[kind]} ${size}, ${height} mm high`,
+    tray: (size: string, base: string): string => `tray ${size} with ${base} base`,
+    supply: (waveform: "ac" | "dc", volts: string): string => `${waveform.toUpperCase()} supply for ${volts} V`,
+  },
+} as const;
