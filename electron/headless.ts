@@ -23,6 +23,13 @@ function planned(outcome: PlanOutcome): Plan {
 
 const printPlan = async (setup: Setup): Promise<PlanOutcome> => createPlanner().plan(setup, "print", clock);
 
+/** The print plan with the whole tolerance of its points. */
+async function bandedPlan(setup: Setup): Promise<Plan> {
+  const planner = createPlanner();
+  const plan = planned(await planner.plan(setup, "print", clock));
+  return { ...plan, probing: await planner.bands(setup, plan) };
+}
+
 const print = (report: object): void => {
   process.stdout.write(`${jsonText(report)}\n`);
 };
@@ -41,7 +48,7 @@ async function solve({ file, options }: Request): Promise<void> {
 }
 
 async function probes({ file }: Request): Promise<void> {
-  print(probesReport(planned(await printPlan(await readSetup(file)))));
+  print(probesReport(await bandedPlan(await readSetup(file))));
 }
 
 /** A setup that cannot be planned still has its findings: they say why. */
@@ -57,7 +64,7 @@ async function check({ file }: Request): Promise<void> {
 async function sheets({ file, options }: Request): Promise<void> {
   const order = await sheetOrder(options, new Date());
   const setup = await readSetup(file);
-  const plan = planned(await printPlan(setup));
+  const plan = await bandedPlan(setup);
   const pages = await writeSheets(setup, plan, order);
   const { out, paper, sheets: names, printerScale, date } = order;
   print({ setupId: plan.setupId, out, pages, paper, sheets: names, printerScale, date });

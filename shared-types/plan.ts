@@ -1,5 +1,6 @@
 import type { BenchNumbers } from "./bench";
 import type { PartRole } from "./setup";
+import type { ToleranceResult } from "./tolerance";
 
 /** How carefully a field is solved: while dragging, on release and for paper, and for checking the program itself. */
 export type Quality = "live" | "print" | "reference";
@@ -102,6 +103,8 @@ export interface ProbePlan {
   readonly levels: readonly ProbeLevel[];
   /** Points that check floating conductors: on the metal and in the water they enclose. */
   readonly checks: readonly ProbePoint[];
+  /** The causes behind every band: points of the levels in order, then the checks. Absent: the bands hold meter and placement alone. */
+  readonly tolerance?: ToleranceResult;
 }
 
 export type Severity = "stop" | "caution" | "note";

@@ -1,4 +1,4 @@
-import type { FieldReading, PlanOutcome, Quality } from "./plan";
+import type { FieldReading, Plan, PlanOutcome, ProbePlan, Quality } from "./plan";
 import type { Setup } from "./setup";
 
 /** What the window asks of the field worker. A newer `plan` request makes the older ones void. */
@@ -10,7 +10,9 @@ export type WorkerRequest =
       readonly requestId: number;
       readonly setup: Setup;
       readonly placesMm: readonly (readonly [number, number])[];
-    };
+    }
+  /** The probe plan with the whole tolerance of its points. Void as soon as another plan is asked for. */
+  | { readonly kind: "bands"; readonly requestId: number; readonly setup: Setup; readonly plan: Pick<Plan, "probing" | "bench"> };
 
 /** What the field worker answers. */
 export type WorkerAnswer =
@@ -19,5 +21,6 @@ export type WorkerAnswer =
   | { readonly kind: "abandoned"; readonly requestId: number }
   | { readonly kind: "progress"; readonly requestId: number; readonly fraction: number }
   | { readonly kind: "sampled"; readonly requestId: number; readonly readings: readonly FieldReading[] | null }
+  | { readonly kind: "banded"; readonly requestId: number; readonly probing: ProbePlan }
   /** A fault of ours; the window restarts the worker when it repeats. */
   | { readonly kind: "fault"; readonly requestId: number; readonly message: string };

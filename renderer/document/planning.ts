@@ -1,5 +1,5 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
-import type { Plan, PlanOutcome, PlanRefusal, Quality } from "../../shared-types/plan";
+import type { Plan, PlanOutcome, PlanRefusal, ProbePlan, Quality } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import { type Later, onTheClock } from "./autosave";
 import type { Document } from "./document";
@@ -7,6 +7,8 @@ import type { Document } from "./document";
 /** Whoever makes plans: the field worker's client. A newer request makes the older one's answer null. */
 export interface PlanSource {
   readonly plan: (setup: Setup, quality: Quality, onProgress?: (fraction: number) => void) => Promise<PlanOutcome | null>;
+  /** The plan's points with the whole of their tolerance; null when overtaken. Absent: bands hold meter and placement alone. */
+  readonly bands?: (setup: Setup, plan: Plan) => Promise<ProbePlan | null>;
 }
 
 export interface PlanningState {
@@ -18,6 +20,8 @@ export interface PlanningState {
   readonly refusal: PlanRefusal | null;
   /** Whether an answer is outstanding. */
   readonly pending: boolean;
+  /** Whether the plan's bands still hold meter and placement alone, and the rest of their causes is on its way. */
+  readonly bandsPending: boolean;
   /** Whether the user has waited long enough to be told. */
   readonly busy: boolean;
   /** Share of the present solve that is done, 0 to 1. */
@@ -50,6 +54,7 @@ export function createPlanning(document: Document, source: PlanSource, later: La
     plannedSetup: null,
     refusal: null,
     pending: false,
+    bandsPending: false,
     busy: false,
     progress: 0,
     fault: null,
@@ -93,8 +98,22 @@ export function createPlanning(document: Document, source: PlanSource, later: La
 
   function take(request: { readonly setup: Setup; readonly quality: Quality }, outcome: PlanOutcome): void {
     answered = request;
-    if (outcome.ok) setState({ plan: outcome.plan, plannedSetup: request.setup, refusal: null, fault: null });
-    else setState({ refusal: outcome.refusal, fault: null });
+    if (!outcome.ok) {
+      setState({ refusal: outcome.refusal, fault: null, bandsPending: false });
+      return;
+    }
+    const { plan } = outcome;
+    const bandsPending = source.bands !== undefined && request.quality === "print" && plan.probing.tolerance === undefined;
+    setState({ plan, plannedSetup: request.setup, refusal: null, fault: null, bandsPending });
+    if (bandsPending) void completeBands(request.setup, plan);
+  }
+
+  /** Replaces the quick bands of a plan, unless another plan has come meanwhile. A fault leaves the quick ones, which say what they hold. */
+  async function completeBands(setup: Setup, plan: Plan): Promise<void> {
+    const probing = await source.bands?.(setup, plan).catch(() => null);
+    if (stopped || getState().plan !== plan) return;
+    if (probing) setState({ plan: { ...plan, probing }, bandsPending: false });
+    else setState({ bandsPending: false });
   }
 
   /** Asks for whatever is still missing for the document's present state. */

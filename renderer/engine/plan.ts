@@ -7,6 +7,7 @@ import type {
   Plan,
   PlanOutcome,
   PlanRefusal,
+  ProbePlan,
   Quality,
 } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
@@ -28,6 +29,7 @@ import { fieldLinesOf } from "./lines/field-lines";
 import { evenLevels } from "./probing/levels";
 import { planProbes } from "./probing/plan-probes";
 import { type SensitivityField, solveSensitivities } from "./tolerance/sensitivity-field";
+import { withBands } from "./tolerance/with-bands";
 
 /** How a caller watches a plan being made and stops it. */
 export interface PlanOptions extends Pace {
@@ -39,6 +41,8 @@ export interface Planner {
   readonly plan: (setup: Setup, quality: Quality, options?: PlanOptions) => Promise<PlanOutcome>;
   /** Readings from the best field solved for this setup's geometry; null when there is none. */
   readonly sample: (setup: Setup, placesMm: readonly (readonly [number, number])[]) => readonly FieldReading[] | null;
+  /** The plan's points with the whole of their tolerance. Solves the sensitivities where they are not at hand. */
+  readonly bands: (setup: Setup, plan: Pick<Plan, "probing" | "bench">, options?: PlanOptions) => Promise<ProbePlan>;
   /**
    * How the field of this setup's geometry changes with everything that can move it: solved anew or, for one of the newest
    * geometries, remembered. The setup must be one that `plan` does not refuse. Rejects when `signal` is aborted.
@@ -146,6 +150,9 @@ function planOf(setup: Setup, solved: Solved, quality: Quality, elapsedMs: numbe
 
 const electrodeCount = (setup: Setup): number => setup.parts.filter(({ role }) => role === "electrode").length;
 
+/** An even depth leaves the potentials alone but not what a tilt does to them. */
+const sensitivityKey = (setup: Setup): string => `${geometryKey(setup)} ${setup.water.depthMm}`;
+
 /** @returns a planner with an empty memory. */
 export function createPlanner(): Planner {
   const kept = new Map<string, Solved>();
@@ -178,7 +185,9 @@ export function createPlanner(): Planner {
       const { code, message, partIds } = found;
       return { ok: false, refusal: { code, message, partIds, findings: [found, ...geometryFindings(setup)] } };
     }
-    return { ok: true, plan: planOf(setup, solved, serving, (options.now?.() ?? 0) - started) };
+    const plan = planOf(setup, solved, serving, (options.now?.() ?? 0) - started);
+    const known = sensitive.get(sensitivityKey(setup));
+    return { ok: true, plan: known === undefined ? plan : { ...plan, probing: withBands(setup, plan, known) } };
   }
 
   function sample(setup: Setup, placesMm: readonly (readonly [number, number])[]): readonly FieldReading[] | null {
@@ -195,8 +204,7 @@ export function createPlanner(): Planner {
   }
 
   async function sensitivities(setup: Setup, options: PlanOptions = {}): Promise<SensitivityField> {
-    // An even depth leaves the potentials alone but not what a tilt does to them.
-    const key = `${geometryKey(setup)} ${setup.water.depthMm}`;
+    const key = sensitivityKey(setup);
     const field = sensitive.get(key) ?? (await drive(solveSensitivities(setup, options.onProgress), options));
     sensitive.delete(key);
     sensitive.set(key, field);
@@ -207,7 +215,12 @@ export function createPlanner(): Planner {
     return field;
   }
 
-  return { plan, sample, sensitivities };
+  return {
+    plan,
+    sample,
+    sensitivities,
+    bands: async (setup, planned, options) => withBands(setup, planned, await sensitivities(setup, options)),
+  };
 }
 
 /**

@@ -20,7 +20,7 @@ export function printPlanOf(document: Document, planning: Planning): Promise<Pri
       const { setup } = document.getState();
       const state = planning.getState();
       if (state.fault !== null) return state.fault;
-      if (state.pending) return null;
+      if (state.pending || state.bandsPending) return null;
       if (state.refusal !== null) return state.refusal.message;
       return state.plan !== null && isCurrent(state, setup) && state.plan.quality !== "live" ? { setup, plan: state.plan } : null;
     };

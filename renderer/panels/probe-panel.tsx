@@ -9,6 +9,7 @@ import type { Planning } from "../document/planning";
 import { texts } from "../texts/texts";
 import { tried } from "./field-surroundings";
 import { NumberField } from "./number-field";
+import { CausesCard } from "./tolerance/causes-card";
 import type { WindowStore } from "./window-state";
 
 const words = texts.probe;
@@ -83,13 +84,14 @@ function moveAmongPoints(event: KeyboardEvent<HTMLTableElement>): void {
 }
 
 export interface ProbePanelProps {
+  readonly document: Document;
   readonly planning: Planning;
   readonly window: WindowStore;
   readonly onSaveTable: () => void;
 }
 
 /** The points of the probe plan by level, with what the meter should read at each. */
-export function ProbePanel({ planning, window, onSaveTable }: ProbePanelProps) {
+export function ProbePanel({ document, planning, window, onSaveTable }: ProbePanelProps) {
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
   const [stopAt, setStopAt] = useState(1);
@@ -116,39 +118,42 @@ export function ProbePanel({ planning, window, onSaveTable }: ProbePanelProps) {
   const all = groups.flatMap(({ points }) => points);
   const stop = all.some(({ n }) => n === stopAt) ? stopAt : all[0]?.n;
   return (
-    <section className="card points" aria-label={words.points}>
-      <header className="card-head">
-        <h2>
-          {words.points} <span className="count">{words.count(all.length, plan.probing.levels.length)}</span>
-        </h2>
-        <button type="button" onClick={onSaveTable} disabled={all.length === 0}>
-          {words.saveTable}
-        </button>
-      </header>
-      <table onKeyDown={moveAmongPoints}>
-        <thead>
-          <tr>
-            {words.columns.map((column, index) => (
-              <th key={column} scope="col" title={words.columnsLong[index]}>
-                {column}
-              </th>
-            ))}
-          </tr>
-        </thead>
-        {groups.map(({ title, note, points }) => (
-          <tbody key={title}>
-            <tr className="level">
-              <th colSpan={6} scope="rowgroup">
-                <h3>{title}</h3>
-                {note !== null && <p className="hint">{note}</p>}
-              </th>
+    <>
+      <CausesCard document={document} planning={planning} point={stop} decimals={decimals} />
+      <section className="card points" aria-label={words.points}>
+        <header className="card-head">
+          <h2>
+            {words.points} <span className="count">{words.count(all.length, plan.probing.levels.length)}</span>
+          </h2>
+          <button type="button" onClick={onSaveTable} disabled={all.length === 0}>
+            {words.saveTable}
+          </button>
+        </header>
+        <table onKeyDown={moveAmongPoints}>
+          <thead>
+            <tr>
+              {words.columns.map((column, index) => (
+                <th key={column} scope="col" title={words.columnsLong[index]}>
+                  {column}
+                </th>
+              ))}
             </tr>
-            {points.map((point) => (
-              <PointRow key={point.n} point={point} decimals={decimals} stop={point.n === stop} onMark={mark} />
-            ))}
-          </tbody>
-        ))}
-      </table>
-    </section>
+          </thead>
+          {groups.map(({ title, note, points }) => (
+            <tbody key={title}>
+              <tr className="level">
+                <th colSpan={6} scope="rowgroup">
+                  <h3>{title}</h3>
+                  {note !== null && <p className="hint">{note}</p>}
+                </th>
+              </tr>
+              {points.map((point) => (
+                <PointRow key={point.n} point={point} decimals={decimals} stop={point.n === stop} onMark={mark} />
+              ))}
+            </tbody>
+          ))}
+        </table>
+      </section>
+    </>
   );
 }

@@ -85,7 +85,7 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
         <FaultGuard key={desk} host={host}>
           {desk === "lay-out" && <LayOutCards document={document} planning={planning} />}
           {desk === "bench" && <BenchDesk document={document} planning={planning} />}
-          {desk === "probe-plan" && <ProbePanel planning={planning} window={window} onSaveTable={props.onSaveTable} />}
+          {desk === "probe-plan" && <ProbePanel document={document} planning={planning} window={window} onSaveTable={props.onSaveTable} />}
         </FaultGuard>
       </aside>
     </>

@@ -21,6 +21,9 @@ const CLASS: readonly Column[] = [
   { head: "read V", widthMm: 40, align: "middle" },
 ];
 
+/** What the printed band takes into account. */
+const bandHolds = ({ probing }: Plan): string => (probing.tolerance === undefined ? "meter and placement" : "all stated tolerances");
+
 /**
  * The probe table: for staff with what the meter should read and its tolerance band (k = 2), for the class with blanks.
  * @returns one entry a page.
@@ -55,7 +58,7 @@ export function probeTable(setup: Setup, plan: Plan, forClass: boolean, page: Sh
     ? [range, "Hold the probe upright, its tip just touching the water at the numbered point, and write down what the meter reads."]
     : [
         range,
-        "‘reads’ is what the meter should show exactly at the point; a reading within ± is as predicted (k = 2, meter and placement).",
+        `‘reads’ is what the meter should show exactly at the point; a reading within ± is as predicted (k = 2, ${bandHolds(plan)}).`,
       ];
   return tablePages(forClass ? CLASS : STAFF, rows, page, fonts, intro);
 }

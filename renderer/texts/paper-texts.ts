@@ -26,6 +26,31 @@ export const probeTexts = {
     "Change of the reading for 1 mm of misplacement",
   ],
   saveTable: "Save as CSV…",
+  tolerance: {
+    title: "What the bands are made of",
+    coming: "Being worked out: until then the bands hold meter and placement alone.",
+    failed: "Could not be worked out for this tray: the bands hold meter and placement alone.",
+    wholeTray: "Whole tray",
+    point: (n: number, band: string): string => `Point ${n}, ± ${band} V`,
+    /** Such as '0.5 mm of probe placement: 61 %'. */
+    row: (amount: string, what: string, percent: string): string => `${amount} of ${what}: ${percent} %`,
+    rest: (percent: string): string => `All others together: ${percent} %`,
+    units: { V: "V", mm: "mm", deg: "°", percent: "%", K: "K" },
+    causes: {
+      supply: () => "supply setting",
+      meter: () => "meter error",
+      probe: () => "probe placement",
+      "part-place": (part: string) => `place of ${part}`,
+      "part-turn": (part: string) => `turn of ${part}`,
+      depth: () => "depth",
+      tilt: () => "tilt",
+      conductivity: () => "conductivity",
+      temperature: () => "temperature",
+      interface: () => "loss at the electrodes",
+      loading: () => "meter loading",
+      engine: () => "the program's own error",
+    },
+  },
 } as const;
 
 export const sheetTexts = {

@@ -1,4 +1,4 @@
-import type { FieldReading, PlanOutcome, Quality } from "../../shared-types/plan";
+import type { FieldReading, Plan, PlanOutcome, ProbePlan, Quality } from "../../shared-types/plan";
 import type { Setup } from "../../shared-types/setup";
 import type { WorkerAnswer, WorkerRequest } from "../../shared-types/worker-messages";
 
@@ -8,6 +8,8 @@ export interface FieldClient {
   readonly plan: (setup: Setup, quality: Quality, onProgress?: (fraction: number) => void) => Promise<PlanOutcome | null>;
   /** @returns readings at places (mm) from the newest field planned for this geometry, or null when there is none. */
   readonly sample: (setup: Setup, placesMm: readonly (readonly [number, number])[]) => Promise<readonly FieldReading[] | null>;
+  /** @returns the plan's points with the whole of their tolerance, or null when another plan was asked for meanwhile. */
+  readonly bands: (setup: Setup, plan: Plan) => Promise<ProbePlan | null>;
   readonly close: () => void;
 }
 
@@ -81,6 +83,10 @@ export function createFieldClient(startWorker: () => Worker): FieldClient {
     sample: async (setup, placesMm) => {
       const answer = await ask({ kind: "sample", requestId: nextId++, setup, placesMm });
       return answer.kind === "sampled" ? answer.readings : null;
+    },
+    bands: async (setup, { probing, bench }) => {
+      const answer = await ask({ kind: "bands", requestId: nextId++, setup, plan: { probing, bench } });
+      return answer.kind === "banded" ? answer.probing : null;
     },
     close: () => {
       worker.terminate();

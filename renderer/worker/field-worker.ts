@@ -16,19 +16,28 @@ const breathe = (): Promise<void> =>
     doorbell.port2.postMessage(null);
   });
 
-async function plan(request: Extract<WorkerRequest, { kind: "plan" }>): Promise<void> {
+type Planning = Extract<WorkerRequest, { kind: "plan" | "bands" }>;
+
+async function answered(request: Planning, signal: AbortSignal): Promise<WorkerAnswer> {
+  const { requestId, setup } = request;
+  const options = {
+    signal,
+    breathe,
+    now: () => performance.now(),
+    onProgress: (fraction: number) => answer({ kind: "progress", requestId, fraction }),
+  };
+  if (request.kind === "plan") return { kind: "planned", requestId, outcome: await planner.plan(setup, request.quality, options) };
+  return { kind: "banded", requestId, probing: await planner.bands(setup, request.plan, options) };
+}
+
+/** Does this and gives up what was being done; the bands of an older plan never hold up a newer one. */
+async function take(request: Planning): Promise<void> {
   const { requestId } = request;
   running?.abort();
   const mine = new AbortController();
   running = mine;
   try {
-    const outcome = await planner.plan(request.setup, request.quality, {
-      signal: mine.signal,
-      breathe,
-      now: () => performance.now(),
-      onProgress: (fraction) => answer({ kind: "progress", requestId, fraction }),
-    });
-    answer({ kind: "planned", requestId, outcome });
+    answer(await answered(request, mine.signal));
   } catch (error) {
     if (mine.signal.aborted) answer({ kind: "abandoned", requestId });
     else answer({ kind: "fault", requestId, message: error instanceof Error ? error.message : String(error) });
@@ -37,6 +46,7 @@ async function plan(request: Extract<WorkerRequest, { kind: "plan" }>): Promise<
 
 self.onmessage = (event: MessageEvent<WorkerRequest>) => {
   const request = event.data;
-  if (request.kind === "plan") void plan(request);
-  else answer({ kind: "sampled", requestId: request.requestId, readings: planner.sample(request.setup, request.placesMm) });
+  if (request.kind === "sample")
+    answer({ kind: "sampled", requestId: request.requestId, readings: planner.sample(request.setup, request.placesMm) });
+  else void take(request);
 };

@@ -62,3 +62,15 @@ test("the table saved for a spreadsheet holds the very numbers of the list", asy
   expect(Number(saved[column("y_mm")])).toBe(Number(shown[1]));
   expect(Number(saved[column("expected_V")])).toBe(Number(shown[2]));
 });
+
+test("the bands take in every stated tolerance, and bars say which causes matter most, for the tray and for a point", async ({ page }) => {
+  await openWindow(page);
+  await page.getByRole("button", { name: "Probe plan" }).click();
+  const card = page.getByRole("region", { name: "What the bands are made of" });
+  await expect(card.getByText(/^\d.* of .*: \d+ %$/).first()).toBeVisible({ timeout: 60_000 });
+  const shares = (await card.locator("ul").first().locator("li").allTextContents()).map((text) => Number(/([\d.]+) %$/.exec(text)?.[1]));
+  expect(shares.reduce((sum, share) => sum + share, 0)).toBeGreaterThan(97);
+  expect(shares.reduce((sum, share) => sum + share, 0)).toBeLessThan(103);
+  await page.locator(rows).nth(9).getByRole("button").focus();
+  await expect(card.getByRole("heading", { name: /^Point 10, ± [\d.]+ V$/ })).toBeVisible();
+});

@@ -3,9 +3,10 @@ import { DRAFT_AFTER_MS, keepDraft } from "../../../renderer/document/autosave";
 import { setTitle } from "../../../renderer/document/commands/bench";
 import { moveThings } from "../../../renderer/document/commands/placing";
 import { BUSY_AFTER_MS, createPlanning, isCurrent, type PlanSource } from "../../../renderer/document/planning";
+import { printPlanOf } from "../../../renderer/panels/print-plan";
 import type { Draft } from "../../../shared-types/host";
 import { parseSetupText } from "../../../shared-types/parse-setup";
-import type { Plan, PlanOutcome, Quality } from "../../../shared-types/plan";
+import type { Plan, PlanOutcome, ProbePlan, Quality } from "../../../shared-types/plan";
 import type { Setup } from "../../../shared-types/setup";
 import { handClock, looseRing, openDocument } from "./fixtures";
 
@@ -102,6 +103,37 @@ describe("the plan on screen", () => {
     asked[3]?.answer(planFor("print 5"));
     await settled();
     expect(isCurrent(planning.getState(), document.getState().setup)).toBe(true);
+    planning.stop();
+  });
+
+  it("gets its whole bands after the print plan, and those of an older plan are let go", async () => {
+    const document = openDocument();
+    const { asked, source, settled } = handSource();
+    const probing: ProbePlan = { spanV: [0, 6], levels: [], checks: [] };
+    const planWith = (setupId: string) => ({ ok: true, plan: { setupId, quality: "print", probing } as unknown as Plan }) as const;
+    const told: ((whole: ProbePlan | null) => void)[] = [];
+    const planning = createPlanning(document, { ...source, bands: () => new Promise((tell) => told.push(tell)) }, handClock().later);
+    asked[0]?.answer(planWith("first"));
+    await settled();
+    expect(planning.getState().bandsPending).toBe(true);
+    const printed = printPlanOf(document, planning);
+    told[0]?.({ ...probing, tolerance: { points: [], ranking: [] } });
+    await settled();
+    expect(planning.getState()).toMatchObject({ bandsPending: false, plan: { probing: { tolerance: { points: [] } } } });
+    expect(await printed).toMatchObject({ plan: { probing: { tolerance: { points: [] } } } });
+    document.run(moveThings(looseRing, ["A"], 1, 0));
+    asked[1]?.answer(planWith("second"));
+    await settled();
+    document.run(moveThings(document.getState().setup, ["A"], 1, 0));
+    asked[2]?.answer(planWith("third"));
+    await settled();
+    told[1]?.({ ...probing, tolerance: { points: [], ranking: [] } });
+    await settled();
+    expect(planning.getState()).toMatchObject({ bandsPending: true, plan: { setupId: "third" } });
+    expect(planning.getState().plan?.probing.tolerance).toBeUndefined();
+    told[2]?.(null);
+    await settled();
+    expect(planning.getState().bandsPending).toBe(false);
     planning.stop();
   });
 
