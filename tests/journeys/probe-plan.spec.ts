@@ -64,8 +64,6 @@ test("the table saved for a spreadsheet holds the very numbers of the list", asy
 });
 
 test("the bands take in every stated tolerance, and bars say which causes matter most, for the tray and for a point", async ({ page }) => {
-  await openWindow(page);
-  await page.getByRole("button", { name: "Probe plan" }).click();
   const card = page.getByRole("region", { name: "What the bands are made of" });
   await expect(card.getByText(/^\d.* of .*: \d+ %$/).first()).toBeVisible({ timeout: 60_000 });
   const shares = (await card.locator("ul").first().locator("li").allTextContents()).map((text) => Number(/([\d.]+) %$/.exec(text)?.[1]));
