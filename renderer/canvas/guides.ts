@@ -10,14 +10,25 @@ export interface Guide {
   readonly toMm: number;
 }
 
+/** One of two or more equal gaps in a row: from edge to edge along `axis`, drawn at `atMm` across it. */
+export interface EqualGap {
+  readonly axis: "x" | "y";
+  readonly fromMm: number;
+  readonly toMm: number;
+  readonly atMm: number;
+}
+
 /** Where a moved box comes to lie, and the lines that it then meets. */
 export interface Snapped {
   readonly byXMm: number;
   readonly byYMm: number;
   readonly guides: readonly Guide[];
+  readonly equalGaps: readonly EqualGap[];
 }
 
 const SAME_MM = 1e-6;
+/** Places are kept to 0.01 mm: gaps that differ by less are equal. */
+const EQUAL_MM = 0.015;
 
 /** Low edge, middle and high edge of a box along an axis. */
 const linesOf = (box: BoxMm, axis: "x" | "y"): readonly [number, number, number] => {
@@ -44,6 +55,33 @@ function equalGapShifts(moved: BoxMm, others: readonly BoxMm[], axis: "x" | "y")
   if (left !== undefined && leftOfIt !== undefined) shifts.push(left[1] + (left[0] - leftOfIt[1]) - low);
   if (right !== undefined && rightOfIt !== undefined) shifts.push(right[0] - (rightOfIt[0] - right[1]) - high);
   return shifts;
+}
+
+/** The gap between two boxes that lie beside each other, drawn through the middle of the stretch that both share. */
+function gapOf(before: BoxMm, after: BoxMm, axis: "x" | "y"): EqualGap {
+  const [fromMm, toMm] = [along(before, axis)[1], along(after, axis)[0]];
+  const low = Math.max(across(before, axis)[0], across(after, axis)[0]);
+  const high = Math.min(across(before, axis)[1], across(after, axis)[1]);
+  return { axis, fromMm, toMm, atMm: (low + high) / 2 };
+}
+
+/** The gaps of a row, next to a box, that are equal: those to both neighbours, or that to one and the gap behind it. */
+function equalGapsOf(box: BoxMm, others: readonly BoxMm[], axis: "x" | "y"): readonly EqualGap[] {
+  const row = others.filter((other) => beside(box, other, axis));
+  const [low, high] = along(box, axis);
+  const before = row.filter((other) => along(other, axis)[1] <= low + SAME_MM).sort((a, b) => along(b, axis)[1] - along(a, axis)[1]);
+  const after = row.filter((other) => along(other, axis)[0] >= high - SAME_MM).sort((a, b) => along(a, axis)[0] - along(b, axis)[0]);
+  const [left, leftOfIt, right, rightOfIt] = [before[0], before[1], after[0], after[1]];
+  const pairs: (readonly [EqualGap, EqualGap])[] = [];
+  if (left !== undefined && right !== undefined) pairs.push([gapOf(left, box, axis), gapOf(box, right, axis)]);
+  if (left !== undefined && leftOfIt !== undefined) pairs.push([gapOf(leftOfIt, left, axis), gapOf(left, box, axis)]);
+  if (right !== undefined && rightOfIt !== undefined) pairs.push([gapOf(box, right, axis), gapOf(right, rightOfIt, axis)]);
+  const equal = pairs.filter(([a, b]) => {
+    const [first, second] = [a.toMm - a.fromMm, b.toMm - b.fromMm];
+    return first > EQUAL_MM && Math.abs(first - second) <= EQUAL_MM;
+  });
+  const seen = new Map(equal.flat().map((gap) => [`${gap.fromMm} ${gap.toMm}`, gap]));
+  return [...seen.values()];
 }
 
 function nearestShift(moved: BoxMm, others: readonly BoxMm[], tray: BoxMm, axis: "x" | "y", reachMm: number): number | null {
@@ -101,5 +139,6 @@ export function snappedMove(
   };
   const [byXMm, byYMm] = [onAxis("x"), onAxis("y")];
   const box: BoxMm = [start[0] + byXMm, start[1] + byYMm, start[2] + byXMm, start[3] + byYMm];
-  return { byXMm, byYMm, guides: [...guidesOf(box, [...others, tray], "x"), ...guidesOf(box, [...others, tray], "y")] };
+  const equalGaps = reachMm < 0 ? [] : (["x", "y"] as const).flatMap((axis) => equalGapsOf(box, others, axis));
+  return { byXMm, byYMm, equalGaps, guides: [...guidesOf(box, [...others, tray], "x"), ...guidesOf(box, [...others, tray], "y")] };
 }

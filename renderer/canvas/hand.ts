@@ -7,7 +7,7 @@ import { sizeText, trimmed } from "../document/number-text";
 import { traySizeMm } from "../engine/geometry/tray-outline";
 import { texts } from "../texts/texts";
 import { type Gap, gapsAround } from "./gaps";
-import { type Guide, snappedMove } from "./guides";
+import { type EqualGap, type Guide, snappedMove } from "./guides";
 import { draggedHandle, type Handle, handlesOf, type Placed } from "./handles";
 import { boxOfThing, handleAt, thingAt, thingsWithin } from "./hit";
 import { type Place, toTray, type View } from "./view";
@@ -50,6 +50,8 @@ export interface HandLook {
   readonly activeHandle: Handle["kind"] | null;
   /** Lines that a moved part has snapped to. */
   readonly guides: readonly Guide[];
+  /** Gaps of a row that are equal now. */
+  readonly equalGaps: readonly EqualGap[];
   /** Clear gaps round a moved part. */
   readonly gaps: readonly Gap[];
   /** The number that changes under the hand, such as "45°". */
@@ -65,7 +67,16 @@ export interface Hand {
   readonly leave: () => void;
 }
 
-export const IDLE: HandLook = { hovered: null, cursor: "default", frame: null, activeHandle: null, guides: [], gaps: [], live: null };
+export const IDLE: HandLook = {
+  hovered: null,
+  cursor: "default",
+  frame: null,
+  activeHandle: null,
+  guides: [],
+  equalGaps: [],
+  gaps: [],
+  live: null,
+};
 
 /** A press that strays less is a click, px. */
 const CLICK_PX = 3;
@@ -184,10 +195,14 @@ export function createHand(world: () => HandWorld, show: (look: HandLook) => voi
       return;
     }
     const alone = ids.length === 1 && moved.ok ? thingById(moved.value, lead.id) : undefined;
-    const gaps = alone === undefined || !isPart(alone) ? [] : gapsAround(alone, before);
+    const { equalGaps } = snapped;
+    const gaps = (alone === undefined || !isPart(alone) ? [] : gapsAround(alone, before)).filter(
+      // An equal gap says its millimetres itself.
+      ({ gapMm }) => !equalGaps.some(({ fromMm, toMm }) => Math.abs(toMm - fromMm - gapMm) < 0.02),
+    );
     const live =
       ids.length === 1 ? words.place(trimmed(lead.xMm + byX, 2), trimmed(lead.yMm + byY, 2)) : words.by(trimmed(byX, 2), trimmed(byY, 2));
-    show({ ...IDLE, cursor: "move", live, guides: reach < 0 ? [] : snapped.guides, gaps });
+    show({ ...IDLE, cursor: "move", live, guides: reach < 0 ? [] : snapped.guides, equalGaps, gaps });
   }
 
   function handleOn(at: Place, { handle, thing, off, before }: Extract<Doing, { kind: "handling" }>, modifiers: Modifiers): void {

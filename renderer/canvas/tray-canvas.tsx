@@ -8,7 +8,7 @@ import { texts } from "../texts/texts";
 import { type CanvasActions, shownHandles } from "./hand";
 import { actOnKey, useClipboard, useDrop } from "./input";
 import { paintPins, paintSection } from "./paint/closer-look";
-import { paintGaps, paintGuides, paintLength } from "./paint/guides";
+import { paintEqualGaps, paintGaps, paintGuides, paintLength } from "./paint/guides";
 import { paintFrame, paintHandles } from "./paint/hand";
 import type { Pen } from "./paint/pen";
 import { PaintedLayer } from "./painted-layer";
@@ -91,11 +91,12 @@ export function TrayCanvas(props: TrayCanvasProps) {
       paintPins(pen, pins, pinReadings, view, theme);
       paintHandles(pen, handles, view, theme, look.activeHandle);
       paintGuides(pen, look.guides, view, theme);
+      paintEqualGaps(pen, look.equalGaps, view, theme);
       paintGaps(pen, look.gaps, view, theme);
       if (tape !== null) paintLength(pen, toScreen(view, ...tape.from), toScreen(view, ...tape.to), tapeText(tape), theme);
       if (look.frame !== null) paintFrame(pen, look.frame[0], look.frame[1], theme);
     },
-    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.gaps, tape, section, pins, pinReadings],
+    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.equalGaps, look.gaps, tape, section, pins, pinReadings],
   );
   const attended = useMemo(() => new Set([...selection, ...(look.hovered === null ? [] : [look.hovered])]), [selection, look.hovered]);
   const count = setup.parts.length;

@@ -129,3 +129,23 @@ test("an opened setup never shows the lines of the one before it", async ({ page
   const seen = await page.evaluate(() => [...new Set(Reflect.get(window, "seenFields") as string[])]);
   expect(seen).not.toContain("pale");
 });
+
+test("while a part is dragged its clear gaps stand on the tray in mm, and equal ones say that they are equal", async ({ page }) => {
+  // What the canvas writes is caught at the pen, since a picture has no words.
+  await page.evaluate(() => {
+    const written: string[] = [];
+    Reflect.set(window, "written", written);
+    const write = CanvasRenderingContext2D.prototype.fillText;
+    CanvasRenderingContext2D.prototype.fillText = function (text, ...rest) {
+      written.push(text);
+      return write.call(this, text, ...rest);
+    };
+  });
+  const written = () => page.evaluate(() => (Reflect.get(window, "written") as string[]).splice(0));
+  const on = await trayOnPage(page);
+  await drag(page, on(178.5, 100), on(168.5, 100));
+  await expect.poll(written).toContain("40 mm");
+  await page.mouse.move(...on(178.6, 100), { steps: 4 });
+  await expect.poll(written).toContain("= 50 mm");
+  await page.mouse.up();
+});

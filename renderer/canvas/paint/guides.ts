@@ -1,7 +1,7 @@
 import { trimmed } from "../../document/number-text";
 import { texts } from "../../texts/texts";
 import type { Gap } from "../gaps";
-import type { Guide } from "../guides";
+import type { EqualGap, Guide } from "../guides";
 import type { CanvasTheme } from "../theme";
 import { toScreen, type View } from "../view";
 import { type Pen, traceBox } from "./pen";
@@ -70,6 +70,17 @@ export function paintLength(
   pen.fillStyle = theme.halo;
   pen.fillText(text, x, y + 0.5);
   pen.restore();
+}
+
+/** Equal gaps of a row, each with the sign and its millimetres. */
+export function paintEqualGaps(pen: Pen, gaps: readonly EqualGap[], view: View, theme: CanvasTheme): void {
+  for (const { axis, fromMm, toMm, atMm } of gaps) {
+    const [from, to] =
+      axis === "x"
+        ? [toScreen(view, fromMm, atMm), toScreen(view, toMm, atMm)]
+        : [toScreen(view, atMm, fromMm), toScreen(view, atMm, toMm)];
+    paintLength(pen, from, to, texts.canvas.hand.equalGap(trimmed(toMm - fromMm, 2)), theme);
+  }
 }
 
 /** Clear gaps to neighbours and wall while a part moves. */

@@ -6,6 +6,7 @@ import { boxOfThing } from "../../../renderer/canvas/hit";
 import { moveToGap } from "../../../renderer/document/commands/gap";
 import { moveThings } from "../../../renderer/document/commands/placing";
 import { createDocument } from "../../../renderer/document/document";
+import type { BoxMm } from "../../../renderer/document/edit";
 import { FIRST_SHAPES } from "../../../renderer/document/shelf-part";
 import { outlineOf } from "../../../renderer/engine/geometry/outline";
 import { distanceToOutline } from "../../../renderer/engine/geometry/signed-distance";
@@ -98,5 +99,31 @@ describe("the clear gap", () => {
     document.run(moveToGap(over, "C", "B", 12, gapBetween));
     expect(gapBetween(part(document, "C"), part(document, "B"))).toBeCloseTo(12, 1);
     expect(part(document, "C").xMm).toBeLessThan(235);
+  });
+});
+
+describe("equal gaps in a row", () => {
+  const bar = (left: number): BoxMm => [left, 80, left + 10, 120];
+  const tray: BoxMm = [0, 0, 300, 200];
+  const moved = (to: number, others: readonly BoxMm[]) => snappedMove(bar(0), [5, 100], [to, 0], others, tray, 1, 0.9);
+
+  it("are drawn on both sides of a part between two others, once it has snapped to the middle", () => {
+    const { byXMm, equalGaps } = moved(94.6, [bar(40), bar(149)]);
+    expect(byXMm).toBeCloseTo(94.5, 6);
+    expect(equalGaps.map(({ fromMm, toMm, atMm }) => [fromMm, toMm, atMm])).toEqual([
+      [50, 94.5, 100],
+      [104.5, 149, 100],
+    ]);
+  });
+
+  it("repeat the gap between two neighbours beyond them", () => {
+    const { byXMm, equalGaps } = moved(100.3, [bar(40), bar(70)]);
+    expect(byXMm).toBeCloseTo(100, 6);
+    expect(equalGaps.map(({ fromMm, toMm }) => toMm - fromMm)).toEqual([20, 20]);
+  });
+
+  it("are not told where gaps differ, nor of parts that are not in the row", () => {
+    expect(moved(97, [bar(40), bar(149)]).equalGaps).toEqual([]);
+    expect(moved(94.6, [bar(40), [149, 150, 159, 190]]).equalGaps).toEqual([]);
   });
 });
