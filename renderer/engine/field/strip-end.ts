@@ -4,33 +4,62 @@
  * corners at once); the potential is Im ζ.
  */
 
-type Complex = readonly [number, number];
+const MOST_STEPS = 30;
+/** Within this distance (in t/π) of the corner the map is z ∝ (ζ − 1)^(3/2) to leading order, and its inverse a good first guess. */
+const NEAR_CORNER = 1.5;
 
-const times = ([a, b]: Complex, [c, d]: Complex): Complex => [a * c - b * d, a * d + b * c];
-const over = ([a, b]: Complex, [c, d]: Complex): Complex => {
-  const square = c * c + d * d;
-  return [(a * c + b * d) / square, (b * c - a * d) / square];
-};
-/** Square root in the closed upper half plane's right part (real part ≥ 0). */
-const root = ([a, b]: Complex): Complex => {
-  const size = Math.hypot(a, b);
-  const re = Math.sqrt(Math.max(0, (size + a) / 2));
-  const im = Math.sqrt(Math.max(0, (size - a) / 2));
-  return [re, b < 0 ? -im : im];
-};
-const power = ([a, b]: Complex, exponent: number, angle: number): Complex => {
-  const size = Math.hypot(a, b) ** exponent;
-  return [size * Math.cos(exponent * angle), size * Math.sin(exponent * angle)];
-};
-
-/** π·z/t for a ζ in the first quadrant, and dz/dζ·π/t. */
-function mapped(zeta: Complex): { value: Complex; slope: Complex } {
-  const square = times(zeta, zeta);
-  const below = root([square[0] - 1, square[1]]);
-  const product = times(zeta, below);
-  const sum: Complex = [zeta[0] + below[0], zeta[1] + below[1]];
-  const log: Complex = [Math.log(Math.hypot(sum[0], sum[1])), Math.atan2(sum[1], sum[0])];
-  return { value: [product[0] - log[0], product[1] - log[1]], slope: [2 * below[0], 2 * below[1]] };
+/**
+ * Finds ζ for a z in the quadrant beside and before the near corner by Newton's method. Real and imaginary parts are carried as plain
+ * numbers: this runs for every node round every strip's end while a part is dragged, and pairs of numbers would cost three times as much.
+ * @returns Im ζ
+ */
+function imaginaryZeta(x: number, y: number): number {
+  const size = Math.sqrt(x * x + y * y);
+  let re: number;
+  let im: number;
+  if (size < NEAR_CORNER) {
+    let angle = Math.atan2(y, x);
+    if (angle < -1e-12) angle += 2 * Math.PI;
+    const length = ((3 * size) / (4 * Math.SQRT2)) ** (2 / 3);
+    re = 1 + length * Math.cos((2 / 3) * angle);
+    im = length * Math.sin((2 / 3) * angle);
+  } else {
+    // Far from the end z is nearly ζ² - ln(2ζ) - 1/2.
+    const away = Math.sqrt(x * x + (y + Math.PI / 2) ** 2);
+    const guessRe = Math.sqrt(Math.max(0, (away + x) / 2));
+    const guessIm = Math.sqrt(Math.max(0, (away - x) / 2));
+    const farX = x + 0.5 + Math.log(2 * Math.sqrt(guessRe * guessRe + guessIm * guessIm));
+    const farY = Math.max(0, y + Math.atan2(guessIm, guessRe));
+    const far = Math.sqrt(farX * farX + farY * farY);
+    re = Math.sqrt(Math.max(0, (far + farX) / 2));
+    im = Math.sqrt(Math.max(0, (far - farX) / 2));
+  }
+  for (let step = 0; step < MOST_STEPS; step++) {
+    re = Math.max(0, re);
+    im = Math.max(0, im);
+    // √(ζ² - 1), in the closed right upper quadrant.
+    const squareRe = re * re - im * im - 1;
+    const squareIm = 2 * re * im;
+    const squareSize = Math.sqrt(squareRe * squareRe + squareIm * squareIm);
+    const rootRe = Math.sqrt(Math.max(0, (squareSize + squareRe) / 2));
+    const rootIm = Math.sqrt(Math.max(0, (squareSize - squareRe) / 2));
+    const slopeSquare = 4 * (rootRe * rootRe + rootIm * rootIm);
+    if (slopeSquare < 1e-24) break;
+    const sumRe = re + rootRe;
+    const sumIm = im + rootIm;
+    const errorRe = re * rootRe - im * rootIm - Math.log(sumRe * sumRe + sumIm * sumIm) / 2 - x;
+    const errorIm = re * rootIm + im * rootRe - Math.atan2(sumIm, sumRe) - y;
+    const moveRe = (2 * (errorRe * rootRe + errorIm * rootIm)) / slopeSquare;
+    const moveIm = (2 * (errorIm * rootRe - errorRe * rootIm)) / slopeSquare;
+    const length = Math.sqrt(moveRe * moveRe + moveIm * moveIm);
+    // Near the corner the slope vanishes and a full step would overshoot.
+    const fromCorner = Math.sqrt((re - 1) * (re - 1) + im * im);
+    const damp = Math.min(1, (0.5 * Math.max(1e-3, fromCorner)) / Math.max(1e-300, length));
+    re -= damp * moveRe;
+    im -= damp * moveIm;
+    if (length < 1e-13 * (1 + Math.sqrt(re * re + im * im))) break;
+  }
+  return Math.max(0, im);
 }
 
 /**
@@ -45,31 +74,5 @@ export function stripEndPotential(ahead: number, aside: number, thickness: numbe
   if (ahead <= 0 && off <= thickness / 2) return 0;
   const scale = Math.PI / thickness;
   // Corner of the near side at the origin, strip to the right: the upper half of the mirror-symmetric picture.
-  const z: Complex = [-ahead * scale, (off - thickness / 2) * scale];
-  const size = Math.hypot(z[0], z[1]);
-  let zeta: Complex;
-  if (size < 1.5) {
-    let angle = Math.atan2(z[1], z[0]);
-    if (angle < -1e-12) angle += 2 * Math.PI;
-    const [re, im] = power([(3 * z[0]) / (4 * Math.SQRT2), (3 * z[1]) / (4 * Math.SQRT2)], 2 / 3, angle);
-    zeta = [1 + re, im];
-  } else {
-    const from: Complex = [z[0], z[1] + Math.PI / 2];
-    zeta = root(from);
-    const log: Complex = [Math.log(2 * Math.hypot(zeta[0], zeta[1])), Math.atan2(zeta[1], zeta[0])];
-    zeta = root([z[0] + 0.5 + log[0], Math.max(0, z[1] + log[1])]);
-  }
-  for (let step = 0; step < 30; step++) {
-    zeta = [Math.max(0, zeta[0]), Math.max(0, zeta[1])];
-    const { value, slope } = mapped(zeta);
-    const error: Complex = [value[0] - z[0], value[1] - z[1]];
-    if (Math.hypot(slope[0], slope[1]) < 1e-12) break;
-    const move = over(error, slope);
-    const length = Math.hypot(move[0], move[1]);
-    // Near the corner the slope vanishes and a full step would overshoot.
-    const damp = Math.min(1, (0.5 * Math.max(1e-3, Math.hypot(zeta[0] - 1, zeta[1]))) / Math.max(1e-300, length));
-    zeta = [zeta[0] - damp * move[0], zeta[1] - damp * move[1]];
-    if (length < 1e-13 * (1 + Math.hypot(zeta[0], zeta[1]))) break;
-  }
-  return Math.max(0, zeta[1]);
+  return imaginaryZeta(-ahead * scale, (off - thickness / 2) * scale);
 }
