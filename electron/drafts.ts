@@ -4,6 +4,7 @@ import { z } from "zod";
 import { type Draft, draftSchema, type KeptDraft, keptDraftSchema } from "../shared-types/host";
 import type { KnownFiles } from "./known-files";
 import { saveWhole } from "./save-whole";
+import { readText } from "./text-on-disk";
 
 /** What lies on the disk for one window: its draft, when it was written, and the file that it belongs to as that looked then. */
 const storedSchema = z.strictObject({
@@ -34,7 +35,15 @@ export function drafts(folder: string, files: KnownFiles, now: () => number, onD
   async function readOne(id: string): Promise<KeptDraft | null> {
     try {
       const { path, seen, ...draft } = storedSchema.parse(JSON.parse(await readFile(at(id), "utf8")));
-      return keptDraftSchema.parse({ ...draft, id, file: path === null ? null : files.recall(path, seen) });
+      // Read without being seen: a change since the draft was written must still be noticed when it is saved.
+      const saved =
+        path === null
+          ? null
+          : await readText(path).then(
+              ({ text }) => text,
+              () => null,
+            );
+      return keptDraftSchema.parse({ ...draft, id, file: path === null ? null : files.recall(path, seen), saved });
     } catch (error) {
       onDamaged(`the draft ${id} cannot be read: ${error instanceof Error ? error.message.slice(0, 300) : String(error)}`);
       return null;

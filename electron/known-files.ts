@@ -1,4 +1,4 @@
-import { randomUUID } from "node:crypto";
+import { createHash } from "node:crypto";
 import { basename, dirname, resolve } from "node:path";
 import type { FileHandle, OpenOutcome, SaveOutcome } from "../shared-types/host";
 import { saveWhole } from "./save-whole";
@@ -9,7 +9,7 @@ import { comparedWith, inPlainWords, lookAt, readText, type Sighting } from "./t
  * seen, so that a change by another program is noticed before anything is overwritten.
  */
 export interface KnownFiles {
-  /** @returns the handle of a path that the user chose; the same path always has the same handle. */
+  /** @returns the handle of a path that the user chose; the same path always has the same handle, also in the next session. */
   readonly handleOf: (path: string) => FileHandle;
   /** @returns the path behind a handle, or null for a handle that was never given out. */
   readonly pathOf: (handle: string) => string | null;
@@ -39,7 +39,8 @@ export function knownFiles(write: (path: string, text: string) => Promise<void> 
     const whole = resolve(path);
     let handle = handles.get(whole);
     if (handle === undefined) {
-      handle = randomUUID();
+      // The same in every session, so that what is kept by handle is found again. It opens nothing before the file was picked here.
+      handle = createHash("sha256").update(whole).digest("base64url");
       handles.set(whole, handle);
       byHandle.set(handle, { path: whole, seen: null });
     }

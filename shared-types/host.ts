@@ -97,6 +97,8 @@ export const keptDraftSchema = z.strictObject({
   keptAtMs: z.number().nonnegative(),
   file: fileHandleSchema.nullable(),
   text: fileTextSchema,
+  /** What the file holds now, to be shown beside the draft; null where it has none, is gone, or may not be read without a question. */
+  saved: fileTextSchema.nullable(),
 });
 export type KeptDraft = Readonly<z.infer<typeof keptDraftSchema>>;
 

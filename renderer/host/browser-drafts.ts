@@ -54,7 +54,7 @@ export function browserDrafts(
       if (!stored.success) continue;
       const { title, text, keptAtMs, handle, lastSeenMs } = stored.data;
       const file = handle === null || lastSeenMs === null ? null : await setups.recall(handle, lastSeenMs);
-      found.push({ id: key, title, keptAtMs, file, text });
+      found.push({ id: key, title, keptAtMs, file, text, saved: file === null ? null : await setups.glimpse(file.handle) });
     }
     return found.sort((a, b) => b.keptAtMs - a.keptAtMs).slice(0, 50);
   }

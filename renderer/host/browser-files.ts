@@ -104,6 +104,12 @@ export async function pickTarget(page: Window, suggestedName: string, type: File
   }
 }
 
+/** @returns whether this page may use a file as it is, without a question. */
+export async function isAllowed(fileHandle: FileSystemFileHandle, mode: "read" | "readwrite"): Promise<boolean> {
+  const { queryPermission } = fileHandle as FileSystemFileHandle & PermissionHandle;
+  return queryPermission === undefined || (await queryPermission.call(fileHandle, { mode })) === "granted";
+}
+
 /** Asks the user, where the browser wants it, whether this page may use a file that was picked in an earlier session. */
 export async function mayUse(fileHandle: FileSystemFileHandle, mode: "read" | "readwrite"): Promise<boolean> {
   const { queryPermission, requestPermission } = fileHandle as FileSystemFileHandle & PermissionHandle;

@@ -3,6 +3,7 @@ import {
   canOverwriteFiles,
   download,
   inPlainWords,
+  isAllowed,
   mayUse,
   pickFile,
   pickTarget,
@@ -36,6 +37,8 @@ export interface BrowserSetups {
   readonly lastSeen: (handle: string) => number | null;
   /** Makes a handle of an earlier session known again, as it was last seen. @returns null when nothing is kept of it. */
   readonly recall: (handle: string, lastModified: number) => Promise<FileHandle | null>;
+  /** @returns what a known file holds now, if the browser lets it be read without a question; it does not count as seen. */
+  readonly glimpse: (handle: string) => Promise<string | null>;
   /** @returns whether another program changed the file since it was last seen, or took it away; null when it did neither. */
   readonly changedOnDisk: (handle: string) => Promise<{ readonly file: FileHandle; readonly gone: boolean } | null>;
 }
@@ -110,6 +113,15 @@ export function browserSetups(page: Window, recentStore: KeyStore, now: () => nu
     }
   }
 
+  async function glimpse(handle: string): Promise<string | null> {
+    const fileHandle = known.get(handle)?.fileHandle ?? null;
+    if (fileHandle === null || !(await isAllowed(fileHandle, "read"))) return null;
+    return fileHandle
+      .getFile()
+      .then(textOf)
+      .catch(() => null);
+  }
+
   async function saveTo(handle: string, file: SeenFile, content: Blob): Promise<SaveOutcome> {
     if (file.fileHandle === null) {
       download(page, file.name, content);
@@ -157,6 +169,7 @@ export function browserSetups(page: Window, recentStore: KeyStore, now: () => nu
       known.set(handle, { name: entry.name, fileHandle: entry.fileHandle, lastModified });
       return shown(handle, entry);
     },
+    glimpse,
     changedOnDisk,
   };
 }

@@ -3,6 +3,7 @@ import { parseSetup, parseSetupText, setupText } from "../../shared-types/parse-
 import type { Setup } from "../../shared-types/setup";
 import type { Document } from "../document/document";
 import { texts } from "../texts/texts";
+import { picturedOf } from "./tray-picture";
 import type { Message, WindowStore } from "./window-state";
 
 const words = texts.files;
@@ -115,8 +116,13 @@ export function filesOf(host: Host, document: Document, window: WindowStore): Fi
 
   function offerKept(draft: KeptDraft, count: number): Omit<Message, "id"> {
     const at = new Date(draft.keptAtMs).toLocaleString(undefined, { dateStyle: "medium", timeStyle: "short" });
+    const pictureOf = (text: string | null, caption: string) => {
+      const parsed = text === null ? null : parseSetupText(text);
+      return parsed?.ok ? [{ caption, pictured: picturedOf(parsed.value) }] : [];
+    };
     return {
       tone: "question",
+      pictures: [...pictureOf(draft.text, words.offer.kept(at)), ...pictureOf(draft.saved, words.offer.saved(draft.file?.name ?? ""))],
       title: words.offer.title(draft.title === "" ? words.offer.untitled : draft.title),
       lines: [words.offer.line(at, draft.file?.name ?? null, count - 1)],
       choices: [

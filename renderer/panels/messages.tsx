@@ -3,6 +3,7 @@ import { useStore } from "zustand";
 import type { Host } from "../../shared-types/host";
 import { texts } from "../texts/texts";
 import { Icon } from "./icons";
+import { TrayPicture } from "./tray-picture";
 import type { Message, WindowStore } from "./window-state";
 
 /** Puts what was told on the clipboard, with what a report of it should carry. */
@@ -30,7 +31,7 @@ export function Messages({ host, window }: { readonly host: Host; readonly windo
 }
 
 function MessageCard({ host, window, message }: { readonly host: Host; readonly window: WindowStore; readonly message: Message }) {
-  const { id, tone, title, lines, choices, progress } = message;
+  const { id, tone, title, lines, choices, pictures, progress } = message;
   return (
     <section
       className={`message message-${tone}`}
@@ -46,6 +47,16 @@ function MessageCard({ host, window, message }: { readonly host: Host; readonly 
       {lines.map((line) => (
         <p key={line}>{line}</p>
       ))}
+      {pictures !== undefined && (
+        <div className="message-pictures">
+          {pictures.map(({ caption, pictured }) => (
+            <figure key={caption}>
+              <TrayPicture {...pictured} />
+              <figcaption>{caption}</figcaption>
+            </figure>
+          ))}
+        </div>
+      )}
       {progress !== undefined && <progress value={progress} aria-label={title} />}
       {(choices.length > 0 || tone === "problem") && (
         <div className="choices">

@@ -1,4 +1,5 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
+import type { Pictured } from "./tray-picture";
 
 /** What the tray shows of the plan. */
 export interface Shown {
@@ -29,6 +30,8 @@ export interface Message {
   readonly title: string;
   readonly lines: readonly string[];
   readonly choices: readonly { readonly label: string; readonly choose: () => void }[];
+  /** Small pictures of trays, side by side, each with what it is. */
+  readonly pictures?: readonly { readonly caption: string; readonly pictured: Pictured }[];
   /** Share of the work that is done, 0 to 1. */
   readonly progress?: number;
 }

@@ -11,10 +11,11 @@ export interface FontFiles {
 const FAMILY = "SheetSans";
 const POINTS_PER_MM = 72 / 25.4;
 
-function base64(bytes: Uint8Array): string {
-  let binary = "";
-  for (let start = 0; start < bytes.length; start += 0x8000) binary += String.fromCharCode(...bytes.subarray(start, start + 0x8000));
-  return btoa(binary);
+/** Bytes as a text of their values, which jsPDF takes for a font as it is; in base64 it would only decode it again. */
+function binaryText(bytes: Uint8Array): string {
+  let text = "";
+  for (let start = 0; start < bytes.length; start += 0x8000) text += String.fromCharCode(...bytes.subarray(start, start + 0x8000));
+  return text;
 }
 
 const rgb = (ink: Ink): readonly [number, number, number] => {
@@ -160,9 +161,9 @@ export function* packPdfSteps(pack: Pack, fonts: FontFiles, createdOn: string): 
     compress: true,
     putOnlyUsedFonts: true,
   });
-  document.addFileToVFS("regular.ttf", base64(fonts.regular));
+  document.addFileToVFS("regular.ttf", binaryText(fonts.regular));
   document.addFont("regular.ttf", FAMILY, "normal");
-  document.addFileToVFS("bold.ttf", base64(fonts.bold));
+  document.addFileToVFS("bold.ttf", binaryText(fonts.bold));
   document.addFont("bold.ttf", FAMILY, "bold");
   document.setCreationDate(new Date(`${createdOn}T12:00:00Z`));
   document.setFileId(fileIdOf(pack));

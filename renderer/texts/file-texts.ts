@@ -24,6 +24,8 @@ export const fileTexts = {
     line: (when: string, file: string | null, more: number): string =>
       `Kept ${when}${file === null ? ", never saved" : `, from ${file}`}.${more > 0 ? ` ${more} more on the start page.` : ""}`,
     bringBack: "Bring it back",
+    kept: (when: string): string => `Kept ${when}`,
+    saved: (file: string): string => `Saved in ${file}`,
   },
   steps: {
     fresh: "new tray",

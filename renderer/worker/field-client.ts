@@ -22,6 +22,12 @@ interface Waiting {
 }
 
 /**
+ * A worker that is waited for and says nothing for so long, ms, is taken for dead: one that runs out of memory may end without a word.
+ * While it computes it tells of its progress every few milliseconds.
+ */
+const SILENCE_MS = 20_000;
+
+/**
  * Starts a field worker and speaks with it. A worker that dies or faults is started again and asked once more;
  * a second fault of the same request rejects its promise.
  * @param startWorker makes a fresh worker.
@@ -30,10 +36,21 @@ export function createFieldClient(startWorker: () => Worker): FieldClient {
   const waiting = new Map<number, Waiting>();
   let nextId = 1;
   let worker = open();
+  let silence: ReturnType<typeof setTimeout> | undefined;
+
+  /** Waits anew for a word of the worker, as long as one is owed. */
+  function listen(): void {
+    clearTimeout(silence);
+    if (waiting.size > 0) silence = setTimeout(() => restart("the field worker went silent"), SILENCE_MS);
+  }
 
   function open(): Worker {
     const fresh = startWorker();
-    fresh.onmessage = (event: MessageEvent<WorkerAnswer>) => take(event.data);
+    fresh.onmessage = (event: MessageEvent<WorkerAnswer>) => {
+      take(event.data);
+      listen();
+    };
+    fresh.onmessageerror = () => restart("the field worker's answer could not be read");
     fresh.onerror = (event) => {
       event.preventDefault();
       restart(event.message || "the field worker stopped");
@@ -66,12 +83,14 @@ export function createFieldClient(startWorker: () => Worker): FieldClient {
         worker.postMessage(entry.request);
       }
     }
+    listen();
   }
 
   function ask(request: WorkerRequest, onProgress?: (fraction: number) => void): Promise<WorkerAnswer> {
     return new Promise((settle, refuse) => {
       waiting.set(request.requestId, { request, settle, refuse, onProgress, repeated: false });
       worker.postMessage(request);
+      listen();
     });
   }
 
@@ -90,6 +109,7 @@ export function createFieldClient(startWorker: () => Worker): FieldClient {
     },
     close: () => {
       worker.terminate();
+      clearTimeout(silence);
       for (const entry of waiting.values()) entry.refuse(new Error("the field worker was closed"));
       waiting.clear();
     },

@@ -137,7 +137,7 @@ for (const kind of hosts) {
       expect(await on.page().evaluate(() => window.host.keptDrafts())).toEqual([]);
       await on.crashAndReturn();
       const kept = await on.page().evaluate(() => window.host.keptDrafts());
-      expect(kept).toMatchObject([{ title: "Second", text: "newer", file: { name: "tray.json" } }]);
+      expect(kept).toMatchObject([{ title: "Second", text: "newer", file: { name: "tray.json" }, saved: "saved" }]);
       const handle = kept[0].file?.handle ?? "";
       const saved = await on
         .page()

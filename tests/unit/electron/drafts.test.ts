@@ -42,6 +42,8 @@ describe("drafts", () => {
     const after = knownFiles();
     const [kept] = await drafts(own, after, at(2), () => {}).kept(NOBODY);
     expect(kept?.file?.name).toBe("tray.fieldtray.json");
+    expect(kept?.saved).toBe("changed after the crash");
+    expect(kept?.file?.handle).toBe(opened.file.handle);
     expect(await after.save(path, "draft", false)).toMatchObject({ kind: "changed" });
   });
 

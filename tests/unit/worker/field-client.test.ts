@@ -1,4 +1,4 @@
-import { expect, it } from "vitest";
+import { expect, it, vi } from "vitest";
 import { createFieldClient } from "../../../renderer/worker/field-client";
 import type { WorkerAnswer, WorkerRequest } from "../../../shared-types/worker-messages";
 import { trayWith } from "../../reference/solved";
@@ -71,6 +71,32 @@ it("a request that faults twice is refused with the reason, and the next one goe
   const next = client.plan(setup, "print");
   workers[2].answer({ ...refusal, requestId: 2 });
   expect((await next)?.ok).toBe(false);
+});
+
+it("a worker that ends without a word is replaced, asked once more, and then given up with the reason", async () => {
+  vi.useFakeTimers();
+  try {
+    const { client, workers } = startedClient();
+    const outcome = client.plan(setup, "print").catch((reason: Error) => reason.message);
+    await vi.advanceTimersByTimeAsync(15_000);
+    workers[0].answer({ kind: "progress", requestId: 1, fraction: 0.2 });
+    await vi.advanceTimersByTimeAsync(15_000);
+    expect(workers).toHaveLength(1);
+    await vi.advanceTimersByTimeAsync(6_000);
+    expect(workers).toHaveLength(2);
+    expect(workers[0].ended).toBe(true);
+    expect(workers[1].asked).toEqual([{ kind: "plan", requestId: 1, setup, quality: "print" }]);
+    await vi.advanceTimersByTimeAsync(21_000);
+    expect(await outcome).toBe("the field worker went silent");
+    // Nothing is owed any more: silence is no fault.
+    await vi.advanceTimersByTimeAsync(60_000);
+    expect(workers).toHaveLength(3);
+    const next = client.plan(setup, "live");
+    workers[2].answer({ ...refusal, requestId: 2 });
+    expect(await next).toMatchObject({ ok: false });
+  } finally {
+    vi.useRealTimers();
+  }
 });
 
 it("tells progress of the request that it belongs to", async () => {
