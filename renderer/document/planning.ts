@@ -46,7 +46,7 @@ export const isCurrent = (state: PlanningState, setup: Setup): boolean => state.
  * Keeps a plan of the document's setup: `live` while a drag goes on, `print` once the hand lets go.
  * While a live solve runs, newer previews wait for it and only the newest of them is asked for, so that the picture moves on
  * even where a solve takes longer than a frame. A `print` solve is overtaken at once by any newer setup; a setup that
- * overtakes one (a held arrow key) is shown `live` first.
+ * overtakes one (a held arrow key) is shown `live` first, and so is the very first one.
  */
 export function createPlanning(document: Document, source: PlanSource, later: Later = onTheClock): Planning {
   const store = createStore<PlanningState>(() => ({
@@ -134,7 +134,9 @@ export function createPlanning(document: Document, source: PlanSource, later: La
     if (asked?.setup === setup && asked.quality === "print") return;
     const hurried = asked !== null && asked.setup !== setup && answered?.setup !== setup;
     if (hurried && asked?.quality === "live") return;
-    void ask(setup, hurried ? "live" : "print");
+    // A window that has just opened shows something as soon as it can, and the careful solution after it.
+    const first = answered === null && asked === null;
+    void ask(setup, hurried || first ? "live" : "print");
   }
 
   const unsubscribe = document.subscribe((state, before) => {

@@ -110,7 +110,7 @@ export function Ledger({ document, planning, window, stock }: LedgerProps & { re
     (severity) => [severity, findings.filter((one) => one.severity === severity).length] as const,
   );
   return (
-    <footer className="ledger">
+    <footer className="ledger" data-quality={refusal === null ? plan?.quality : undefined}>
       <Numbers plan={refusal === null ? plan : null} />
       <UnderPointer window={window} />
       <p className="ledger-busy" role="status">

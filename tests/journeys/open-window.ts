@@ -52,6 +52,8 @@ export const test = base.extend<{ page: Page; faults: string[] }, { address: str
     page.on("console", (line) => line.type() === "error" && faults.push(line.text()));
     await page.goto(address);
     await expect(ledger(page, "Resistance")).toContainText("Ω");
+    // The quick solution comes first; journeys begin with the careful one, whose figures stay.
+    await expect(page.locator(".ledger")).toHaveAttribute("data-quality", "print");
     await use(page);
     expect(faults).toEqual([]);
   },

@@ -81,11 +81,23 @@ function handSource() {
   return { asked, source, settled, planFor };
 }
 
+type Asked = ReturnType<typeof handSource>;
+
+/** A window that has just opened is shown the quick solution first; what is asked for from then on is left to the test. */
+async function firstLook(asked: Asked["asked"], settled: Asked["settled"], planFor: Asked["planFor"]): Promise<void> {
+  expect(asked.map(({ quality }) => quality)).toEqual(["live"]);
+  asked[0]?.answer(planFor("first look"));
+  await settled();
+  asked.shift();
+  expect(asked.map(({ quality }) => quality)).toEqual(["print"]);
+}
+
 describe("the plan on screen", () => {
   it("is asked for live during a drag, one at a time and always the newest, and for print on release", async () => {
     const document = openDocument();
     const { asked, source, settled, planFor } = handSource();
     const planning = createPlanning(document, source, handClock().later);
+    await firstLook(asked, settled, planFor);
     asked[0]?.answer(planFor("start"));
     await settled();
     document.startDrag("move Left bar");
@@ -141,6 +153,7 @@ describe("the plan on screen", () => {
     const document = openDocument();
     const { asked, source, settled, planFor } = handSource();
     const planning = createPlanning(document, source, handClock().later);
+    await firstLook(asked, settled, planFor);
     asked[0]?.answer(planFor("start"));
     await settled();
     document.run(moveThings(looseRing, ["A"], 85, 0));
@@ -161,6 +174,7 @@ describe("the plan on screen", () => {
     const clock = handClock();
     const { asked, source, settled, planFor } = handSource();
     const planning = createPlanning(document, source, clock.later);
+    await firstLook(asked, settled, planFor);
     clock.pass(BUSY_AFTER_MS - 1);
     expect(planning.getState().busy).toBe(false);
     clock.pass(1);
@@ -177,6 +191,7 @@ describe("the plan on screen", () => {
     const document = openDocument();
     const { asked, source, settled, planFor } = handSource();
     const planning = createPlanning(document, source, handClock().later);
+    await firstLook(asked, settled, planFor);
     const nudge = () => document.run(moveThings(document.getState().setup, ["A"], 1, 0, "nudge"));
     nudge();
     nudge();
@@ -193,6 +208,7 @@ describe("the plan on screen", () => {
     const document = openDocument();
     const { asked, source, settled, planFor } = handSource();
     const planning = createPlanning(document, source, handClock().later);
+    await firstLook(asked, settled, planFor);
     asked[0]?.fail(new Error("the field worker stopped"));
     await settled();
     expect(planning.getState()).toMatchObject({ fault: "the field worker stopped", pending: false });
