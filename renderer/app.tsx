@@ -22,6 +22,7 @@ import { EXAMPLES } from "./examples/all-examples";
 import { saltmarshStock } from "./examples/saltmarsh-stock";
 import { CloserCard } from "./panels/closer-look/closer-card";
 import { compareWithFile } from "./panels/closer-look/compare";
+import { useKeptColours } from "./panels/closer-look/use-kept-colours";
 import { commandsOf } from "./panels/commands";
 import { FieldContext } from "./panels/field-surroundings";
 import { emptyTray, filesOf } from "./panels/files";
@@ -76,6 +77,7 @@ function made(host: Host) {
 export function App({ host }: { readonly host: Host }) {
   const { client, document, window, planning, closerLook, files, trayView } = useMemo(() => made(host), [host]);
   const [settings, changeSettings] = useSettings(host);
+  useKeptColours(closerLook, settings, changeSettings);
   const keeper = useStock(settings, changeSettings);
   const [choice, setChoice] = useState(FIRST_CHOICE);
   const toPrint = useRef(sheetChoiceOf(choice, settings));

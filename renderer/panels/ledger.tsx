@@ -1,4 +1,4 @@
-import { memo, useMemo } from "react";
+import { memo, useDeferredValue, useMemo } from "react";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
 import type { Stock } from "../../shared-types/stock";
@@ -102,7 +102,7 @@ export function Ledger({ document, planning, window, stock }: LedgerProps & { re
   const busy = useStore(planning, (state) => state.busy);
   const percent = useStore(planning, (state) => PERCENT_STEP * Math.round((100 / PERCENT_STEP) * state.progress));
   const findingsShown = useStore(window, (state) => state.findingsShown);
-  const setup = useStore(document, (state) => state.setup);
+  const setup = useDeferredValue(useStore(document, (state) => state.setup));
   const lacking = useMemo(() => stockFindings(setup, stock), [setup, stock]);
   const planned = refusal?.findings ?? plan?.findings ?? NO_FINDINGS;
   const findings = lacking.length === 0 ? planned : [...planned, ...lacking];

@@ -35,7 +35,7 @@ export const layOutTexts = {
     setupTitle: "Title",
     notes: "Notes",
     shape: "Shape",
-    rectangle: "Rectangular",
+    rectangle: "Rectangle",
     circle: "Round",
     lengthMm: "Length (x)",
     widthMm: "Width (y)",

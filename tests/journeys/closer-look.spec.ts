@@ -38,6 +38,8 @@ test("in steps the picture has as many colours as there are bands between the li
   await open(page);
   await card(page).getByLabel("In steps").check();
   await expect(page.locator(".volt-scale-bar")).toHaveAttribute("style", / 12\.5%, .* 25%/);
+  await page.reload();
+  await expect(page.locator(".volt-scale-bar")).toHaveAttribute("style", / 12\.5%, .* 25%/);
 });
 
 test("a pin reads volts with their bound, field and direction, and follows the tray", async ({ page }) => {

@@ -62,10 +62,13 @@ function Compare({ closerLook, onCompare }: Pick<CloserCardProps, "closerLook" |
 }
 
 /** Reading the field more closely: which picture, pinned probes, a section, another setup beside this one. */
-export function CloserCard({ document, window, closerLook, tool, onTool, onCompare }: CloserCardProps) {
-  const shown = useStore(window, (state) => state.closerShown);
+export function CloserCard(props: CloserCardProps) {
+  const shown = useStore(props.window, (state) => state.closerShown);
+  return shown ? <OpenCloserCard {...props} /> : null;
+}
+
+function OpenCloserCard({ document, window, closerLook, tool, onTool, onCompare }: CloserCardProps) {
   const setup = useStore(document, (state) => state.setup);
-  if (!shown) return null;
   const close = (): void => window.set({ closerShown: false });
   return (
     <section className="float-card closer-card" aria-label={words.title} onKeyDown={(event) => event.key === "Escape" && close()}>

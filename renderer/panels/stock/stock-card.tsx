@@ -93,11 +93,14 @@ export interface StockCardProps {
 }
 
 /** The stock list: what the prep room owns, counted; filled from what lies in the tray or from a file, and handed on as one. */
-export function StockCard({ document, window, keeper, example, onImport, onExport }: StockCardProps) {
-  const shown = useStore(window, (state) => state.stockShown);
+export function StockCard(props: StockCardProps) {
+  const shown = useStore(props.window, (state) => state.stockShown);
+  return shown ? <OpenStockCard {...props} /> : null;
+}
+
+function OpenStockCard({ document, window, keeper, example, onImport, onExport }: StockCardProps) {
   const setup = useStore(document, (state) => state.setup);
   const selection = useStore(document, (state) => state.selection);
-  if (!shown) return null;
   const { stock, keep } = keeper;
   const rows = rowsOf(stock, document);
   const empty = rows.trays.length + rows.parts.length + rows.supplies.length === 0;

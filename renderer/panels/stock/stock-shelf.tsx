@@ -1,4 +1,4 @@
-import type { DragEvent } from "react";
+import { type DragEvent, useDeferredValue } from "react";
 import { useStore } from "zustand";
 import type { StockPart } from "../../../shared-types/stock";
 import { addPart } from "../../document/commands/parts";
@@ -22,10 +22,12 @@ const shelfPart = ({ shape, material, heightMm, insulates }: StockPart): ShelfPa
 /** Parts that the prep room owns, with how many are left beside those in this setup's trays; placed as the shelf's shapes are. */
 export function StockShelf(props: { readonly document: Document; readonly keeper: StockKeeper; readonly onEdit: () => void }) {
   const { document, keeper, onEdit } = props;
-  const setup = useStore(document, (state) => state.setup);
+  // What is left changes with the parts, not with the hand that drags one.
+  const setup = useDeferredValue(useStore(document, (state) => state.setup));
   const { parts } = keeper.stock;
   function place(entry: StockPart): void {
-    document.run(addPart(setup, shelfPart(entry), ...freePlace(setup, entry.shape)));
+    const now = document.getState().setup;
+    document.run(addPart(now, shelfPart(entry), ...freePlace(now, entry.shape)));
   }
   function lift(event: DragEvent, entry: StockPart): void {
     event.dataTransfer.setData(SHELF_PART_TYPE, shelfPartText(shelfPart(entry)));
