@@ -39,6 +39,7 @@ import { useRecentPictures, useSettings } from "./panels/use-settings";
 import { THEMES, useTheme } from "./panels/use-theme";
 import { ViewBar } from "./panels/view-bar";
 import { createWindowStore } from "./panels/window-state";
+import { createDrawsClient } from "./worker/draws-client";
 import { createFieldClient } from "./worker/field-client";
 
 /** The composition of the window: who is made, and who is handed to whom. */
@@ -58,6 +59,8 @@ async function planAside(setup: Setup): Promise<PlanOutcome | null> {
 /** The sheets and jsPDF are loaded when they are first asked for. */
 const loadSheets = async (): Promise<SheetSource> => (await import("./sheet-source")).createSheetSource();
 
+const startDrawWorker = (): Worker => new Worker(new URL("./worker/draw-worker.ts", import.meta.url), { type: "module" });
+
 function made(host: Host) {
   const client = createFieldClient(startWorker);
   const document = createDocument(EXAMPLES[1]?.setup ?? emptyTray());
@@ -68,6 +71,7 @@ function made(host: Host) {
     document,
     window,
     planning,
+    draws: createDrawsClient(startDrawWorker, navigator.hardwareConcurrency || 1, () => performance.now()),
     closerLook: createCloserLook(planning, client),
     files: filesOf(host, document, window),
     trayView: createTrayView(document.getState().setup.tray),
@@ -75,7 +79,7 @@ function made(host: Host) {
 }
 
 export function App({ host }: { readonly host: Host }) {
-  const { client, document, window, planning, closerLook, files, trayView } = useMemo(() => made(host), [host]);
+  const { client, document, window, planning, draws, closerLook, files, trayView } = useMemo(() => made(host), [host]);
   const [settings, changeSettings] = useSettings(host);
   useKeptColours(closerLook, settings, changeSettings);
   const keeper = useStock(settings, changeSettings);
@@ -129,6 +133,7 @@ export function App({ host }: { readonly host: Host }) {
         host={host}
         document={document}
         planning={planning}
+        draws={draws}
         window={window}
         files={files}
         settings={settings}

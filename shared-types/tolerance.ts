@@ -105,3 +105,27 @@ export interface ToleranceResult {
   readonly points: readonly PointBand[];
   readonly ranking: readonly RankedCause[];
 }
+
+/** What many trays built within the stated tolerances would read at one point (JCGM 101:2008). */
+export interface DrawnPoint {
+  readonly meanVolts: number;
+  readonly standardVolts: number;
+  /** The probabilistically symmetric 95 % interval, V. */
+  readonly lowVolts: number;
+  readonly highVolts: number;
+  /** How far twice the drawn standard uncertainty lies from the linear band, as a share of the band. */
+  readonly departure: number;
+  /** Why it departs by more than a tenth: too few draws to tell, or a reading that does not follow its causes in a straight line. */
+  readonly reason: "few-draws" | "curved" | null;
+}
+
+export interface DrawnBands {
+  readonly draws: number;
+  readonly seed: number;
+  readonly elapsedMs: number;
+  /** In the order of the points that were handed in. */
+  readonly points: readonly DrawnPoint[];
+}
+
+/** Fewest and most draws that are offered. */
+export const DRAW_COUNTS = [200, 5000] as const;

@@ -7,9 +7,11 @@ import type { Document } from "../document/document";
 import { fixed, trimmed } from "../document/number-text";
 import type { Planning } from "../document/planning";
 import { texts } from "../texts/texts";
+import type { DrawsClient } from "../worker/draws-client";
 import { tried } from "./field-surroundings";
 import { NumberField } from "./number-field";
 import { CausesCard } from "./tolerance/causes-card";
+import { DrawsCard } from "./tolerance/draws-card";
 import type { WindowStore } from "./window-state";
 
 const words = texts.probe;
@@ -85,13 +87,14 @@ function moveAmongPoints(event: KeyboardEvent<HTMLTableElement>): void {
 
 export interface ProbePanelProps {
   readonly document: Document;
+  readonly draws: DrawsClient;
   readonly planning: Planning;
   readonly window: WindowStore;
   readonly onSaveTable: () => void;
 }
 
 /** The points of the probe plan by level, with what the meter should read at each. */
-export function ProbePanel({ document, planning, window, onSaveTable }: ProbePanelProps) {
+export function ProbePanel({ document, draws, planning, window, onSaveTable }: ProbePanelProps) {
   const plan = useStore(planning, (state) => state.plan);
   const refusal = useStore(planning, (state) => state.refusal);
   const [stopAt, setStopAt] = useState(1);
@@ -154,6 +157,7 @@ export function ProbePanel({ document, planning, window, onSaveTable }: ProbePan
           ))}
         </table>
       </section>
+      <DrawsCard document={document} planning={planning} draws={draws} decimals={decimals} />
     </>
   );
 }

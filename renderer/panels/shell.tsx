@@ -4,6 +4,7 @@ import type { Host, Settings } from "../../shared-types/host";
 import type { Document } from "../document/document";
 import type { Planning } from "../document/planning";
 import { texts } from "../texts/texts";
+import type { DrawsClient } from "../worker/draws-client";
 import { BenchDesk } from "./bench/bench-desk";
 import type { Act } from "./commands";
 import { FaultCard, FaultGuard } from "./fault-card";
@@ -28,6 +29,7 @@ export interface ShellProps {
   readonly host: Host;
   readonly document: Document;
   readonly planning: Planning;
+  readonly draws: DrawsClient;
   readonly window: WindowStore;
   readonly files: Files;
   readonly settings: Settings;
@@ -85,7 +87,9 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
         <FaultGuard key={desk} host={host}>
           {desk === "lay-out" && <LayOutCards document={document} planning={planning} />}
           {desk === "bench" && <BenchDesk document={document} planning={planning} />}
-          {desk === "probe-plan" && <ProbePanel document={document} planning={planning} window={window} onSaveTable={props.onSaveTable} />}
+          {desk === "probe-plan" && (
+            <ProbePanel document={document} draws={props.draws} planning={planning} window={window} onSaveTable={props.onSaveTable} />
+          )}
         </FaultGuard>
       </aside>
     </>

@@ -26,6 +26,24 @@ export const probeTexts = {
     "Change of the reading for 1 mm of misplacement",
   ],
   saveTable: "Save as CSV…",
+  draws: {
+    title: "Check of the bands",
+    purpose:
+      "Trays are drawn at random within the stated tolerances and each is solved whole. Dashed frame: the band. Bar: where 95 of 100 drawn readings lie; its tick is their mean.",
+    count: "Trays to draw",
+    range: (least: number, most: number): string => `a whole number from ${least} to ${most}`,
+    start: "Draw trays",
+    cancel: "Stop drawing",
+    progress: (done: number, count: number): string => `${done} of ${count} trays drawn`,
+    fault: (message: string): string => `The draws failed: ${message}`,
+    result: (agreeing: number, points: number, draws: number, seconds: string): string =>
+      `${agreeing} of ${points} points agree within 10 % with ${draws} drawn trays (${seconds} s).`,
+    point: (band: string, drawn: string, percent: string): string => `± ${band} V, drawn ± ${drawn} V (${percent} %)`,
+    reasons: {
+      "few-draws": "Too few draws to tell them apart.",
+      curved: "The reading does not follow its causes in a straight line here.",
+    },
+  },
   tolerance: {
     title: "What the bands are made of",
     coming: "Being worked out: until then the bands hold meter and placement alone.",

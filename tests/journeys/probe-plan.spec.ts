@@ -72,3 +72,24 @@ test("the bands take in every stated tolerance, and bars say which causes matter
   await page.locator(rows).nth(9).getByRole("button").focus();
   await expect(card.getByRole("heading", { name: /^Point 10, ± [\d.]+ V$/ })).toBeVisible();
 });
+
+test("drawn trays check the bands point by point, and drawing can be stopped", async ({ page }) => {
+  const card = page.getByRole("region", { name: "Check of the bands" });
+  const start = card.getByRole("button", { name: "Draw trays" });
+  await expect(start).toBeEnabled({ timeout: 60_000 });
+  await card.getByLabel("Trays to draw").fill("100");
+  await card.getByLabel("Trays to draw").press("Enter");
+  await expect(card.getByText("a whole number from 200 to 5000")).toBeVisible();
+  await card.getByLabel("Trays to draw").fill("5000");
+  await card.getByLabel("Trays to draw").press("Enter");
+  await start.click();
+  await expect(card.getByRole("progressbar")).toBeVisible();
+  await card.getByRole("button", { name: "Stop drawing" }).click();
+  await expect(card.getByRole("progressbar")).toBeHidden();
+  await card.getByLabel("Trays to draw").fill("200");
+  await card.getByLabel("Trays to draw").press("Enter");
+  await start.click();
+  await expect(card.getByText(/of 51 points agree within 10 % with 200 drawn trays/)).toBeVisible({ timeout: 100_000 });
+  await expect(card.getByRole("listitem")).toHaveCount(51);
+  await expect(card.getByRole("listitem").first()).toContainText(/± [\d.]+ V, drawn ± [\d.]+ V/);
+});
