@@ -4,6 +4,7 @@ import "./styles/fields.css";
 import "./styles/desks.css";
 import "./styles/page-strip.css";
 import "./styles/closer-look.css";
+import "./styles/readings.css";
 import "./canvas/canvas.css";
 import { useEffect, useMemo, useRef, useState } from "react";
 import { useStore } from "zustand";
@@ -18,6 +19,9 @@ import { createCloserLook } from "./document/closer-look";
 import { createDocument } from "./document/document";
 import { createPlanning } from "./document/planning";
 import { probeTableCsv } from "./engine/probing/probe-table-csv";
+import { judgeRun, pointsOf } from "./engine/readings/judge";
+import { readTable } from "./engine/readings/read-table";
+import { foundPlacesCsv, readingsCsv } from "./engine/readings/write-table";
 import { EXAMPLES } from "./examples/all-examples";
 import { saltmarshStock } from "./examples/saltmarsh-stock";
 import { CloserCard } from "./panels/closer-look/closer-card";
@@ -28,6 +32,9 @@ import { FieldContext } from "./panels/field-surroundings";
 import { emptyTray, filesOf } from "./panels/files";
 import { handOverOf } from "./panels/hand-over";
 import { printPlanOf } from "./panels/print-plan";
+import type { ReadingsCheck } from "./panels/readings/readings-check";
+import { ReadingsDesk } from "./panels/readings/readings-desk";
+import { RunsCard } from "./panels/readings/runs-card";
 import { FIRST_CHOICE, type SheetSource, sheetChoiceOf } from "./panels/sheet-choice";
 import { SheetsDesk } from "./panels/sheets-desk";
 import { Shell } from "./panels/shell";
@@ -55,6 +62,9 @@ async function planAside(setup: Setup): Promise<PlanOutcome | null> {
     aside.close();
   }
 }
+
+/** What the Readings desk knows of the engine. */
+const READINGS_CHECK: ReadingsCheck = { pointsOf, judge: judgeRun, readTable, readingsCsv, foundPlacesCsv };
 
 /** The sheets and jsPDF are loaded when they are first asked for. */
 const loadSheets = async (): Promise<SheetSource> => (await import("./sheet-source")).createSheetSource();
@@ -88,6 +98,7 @@ export function App({ host }: { readonly host: Host }) {
   toPrint.current = sheetChoiceOf(choice, settings);
   const shown = useStore(window, (state) => state.shown);
   const markedPoints = useStore(window, (state) => state.markedPoints);
+  const judged = useStore(window, (state) => state.judged);
   const tool = useStore(trayView, (state) => state.tool);
   const dark = useTheme(settings);
   const theme = useMemo(() => {
@@ -153,6 +164,7 @@ export function App({ host }: { readonly host: Host }) {
               shown={shown}
               closerLook={closerLook}
               markedPoints={markedPoints}
+              judged={judged}
               onReadout={(readout) => window.set({ readout })}
             />
             <ViewBar
@@ -186,6 +198,10 @@ export function App({ host }: { readonly host: Host }) {
             onCompare={() => void compareWithFile(host, window, closerLook, planAside)}
           />
         }
+        readings={{
+          runs: <RunsCard document={document} planning={planning} window={window} />,
+          table: <ReadingsDesk host={host} document={document} planning={planning} window={window} check={READINGS_CHECK} />,
+        }}
         startPage={
           <StartPage host={host} files={files} examples={EXAMPLES} settings={settings} onBack={() => window.set({ startPage: false })} />
         }

@@ -146,3 +146,50 @@ export interface ReadTable {
   /** Rows with an empty reading: nothing was read there. */
   readonly blank: number;
 }
+
+/** What can have gone wrong with a tray: the explanations that a diagnosis compares. */
+export type FaultKind = "none" | "scale" | "electrode" | "tilt-x" | "tilt-y" | "displaced" | "wrong-reading" | "swapped-points" | "drift";
+
+/** A fitted size of a fault with its standard uncertainty, in the same unit. */
+export interface FittedValue {
+  readonly value: number;
+  readonly uncertainty: number;
+}
+
+/** One explanation of a run's residuals, fitted. */
+export interface Explanation {
+  readonly kind: FaultKind;
+  /** Of `electrode` and `displaced`. */
+  readonly partId: string | null;
+  /** Numbers of the points of `wrong-reading` and `swapped-points`. */
+  readonly points: readonly number[];
+  /**
+   * `scale`: share of every reading; `electrode`: V by which its potential in the water is off; `tilt-…`: further degrees; `displaced`:
+   * mm along x and y; `wrong-reading`: V; `drift`: V lost at both electrodes together from the first reading to the last.
+   */
+  readonly values: readonly FittedValue[];
+  /** What the reading would be with two neighbouring digits changed over, V, where that explains it. */
+  readonly swappedDigitsVolts: number | null;
+  /** χ² of what the explanation leaves. */
+  readonly chiSquared: number;
+  /** The penalised likelihood: smaller is better. */
+  readonly criterion: number;
+}
+
+/** How clearly two explanations differ. */
+export type Clearness = "hardly" | "fairly" | "clearly" | "very-clearly";
+
+export interface Diagnosis {
+  /** Readings that were used. */
+  readonly used: number;
+  /** Null where there are too few readings to tell anything. */
+  readonly best: Explanation | null;
+  readonly runnerUp: Explanation | null;
+  /** Explanations that would leave the very same residuals as the best: no reading at these points can tell them apart. */
+  readonly inseparable: readonly Explanation[];
+  readonly clearness: Clearness;
+  /** Whether what the best leaves is no more than chance. */
+  readonly leavesChance: boolean;
+  /** Explanations that could not be tried, since the tray with that fault has no field. */
+  readonly untried: readonly { readonly kind: FaultKind; readonly partId: string | null }[];
+}

@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useState } from "react";
 import { useStore } from "zustand";
 import type { Finding } from "../../shared-types/plan";
+import type { JudgedRun } from "../../shared-types/readings";
 import type { Setup } from "../../shared-types/setup";
 import type { CloserLook } from "../document/closer-look";
 import type { Document } from "../document/document";
@@ -33,6 +34,7 @@ export function DocumentTray(props: {
   readonly shown: Shown;
   readonly closerLook: CloserLook;
   readonly markedPoints?: ReadonlySet<number>;
+  readonly judged?: JudgedRun | null;
   readonly editable?: boolean;
   readonly onReadout: (readout: PointerReadout | null) => void;
 }) {
@@ -75,6 +77,7 @@ export function DocumentTray(props: {
         closer={closer}
         closerActions={props.closerLook}
         markedPoints={props.markedPoints ?? NO_POINTS}
+        judged={props.judged ?? null}
         editable={props.editable ?? true}
         actions={document}
         onPointer={setPointer}

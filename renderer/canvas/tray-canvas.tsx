@@ -2,6 +2,7 @@ import { type KeyboardEvent, useCallback, useEffect, useMemo, useRef } from "rea
 import { Stage } from "react-konva";
 import { useStore } from "zustand";
 import type { Finding, Plan } from "../../shared-types/plan";
+import type { JudgedRun } from "../../shared-types/readings";
 import type { Setup } from "../../shared-types/setup";
 import type { CloserLook, CloserLookState } from "../document/closer-look";
 import { texts } from "../texts/texts";
@@ -11,6 +12,7 @@ import { paintPins, paintSection } from "./paint/closer-look";
 import { paintEqualGaps, paintGaps, paintGuides, paintLength } from "./paint/guides";
 import { paintFrame, paintHandles } from "./paint/hand";
 import type { Pen } from "./paint/pen";
+import { paintResiduals } from "./paint/residuals";
 import { PaintedLayer } from "./painted-layer";
 import { PartNotes } from "./part-notes";
 import { PartsList } from "./parts-list";
@@ -37,6 +39,8 @@ export interface TrayCanvasProps {
   readonly closerActions: Pick<CloserLook, "addPin" | "laySection">;
   /** Numbers of probe points to bring out, because a list has them selected. */
   readonly markedPoints: ReadonlySet<number>;
+  /** The run whose residuals are drawn at their points; null for none. */
+  readonly judged: JudgedRun | null;
   /** Whether parts may be moved and changed here. */
   readonly editable: boolean;
   readonly actions: CanvasActions;
@@ -51,7 +55,7 @@ const planForTags = (field: PlannedField | null): Plan | null => (field === null
 
 /** The tray on its bench, drawn to scale, with everything that hands and keys can do to it. Takes data and callbacks only. */
 export function TrayCanvas(props: TrayCanvasProps) {
-  const { setup, selection, field, findings, trayView, shown, closer, editable, actions } = props;
+  const { setup, selection, field, findings, trayView, shown, closer, editable, actions, judged } = props;
   const theme = useLoadedTheme(props.theme);
   const viewState = useStore(trayView);
   const view = useMemo(() => viewOf(viewState), [viewState]);
@@ -87,6 +91,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
   const { section, pins, pinReadings } = closer;
   const handPaint = useCallback(
     (pen: Pen) => {
+      if (judged !== null) paintResiduals(pen, judged, view, theme);
       if (section !== null) paintSection(pen, section, view, theme);
       paintPins(pen, pins, pinReadings, view, theme);
       paintHandles(pen, handles, view, theme, look.activeHandle);
@@ -96,7 +101,7 @@ export function TrayCanvas(props: TrayCanvasProps) {
       if (tape !== null) paintLength(pen, toScreen(view, ...tape.from), toScreen(view, ...tape.to), tapeText(tape), theme);
       if (look.frame !== null) paintFrame(pen, look.frame[0], look.frame[1], theme);
     },
-    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.equalGaps, look.gaps, tape, section, pins, pinReadings],
+    [handles, view, theme, look.activeHandle, look.frame, look.guides, look.equalGaps, look.gaps, tape, section, pins, pinReadings, judged],
   );
   const attended = useMemo(() => new Set([...selection, ...(look.hovered === null ? [] : [look.hovered])]), [selection, look.hovered]);
   const count = setup.parts.length;

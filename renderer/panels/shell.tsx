@@ -41,6 +41,8 @@ export interface ShellProps {
   /** The tray with its view bar; it stays mounted, and where it is, while desks change beside it. */
   readonly tray: ReactNode;
   readonly sheets: ReactNode;
+  /** What the Readings desk shows left and right of the tray. */
+  readonly readings: { readonly runs: ReactNode; readonly table: ReactNode };
   readonly startPage: ReactNode;
   /** The card of the closer look, shown over the desk's cards. */
   readonly closer: ReactNode;
@@ -63,7 +65,7 @@ function LayOutCards({ document, planning }: Pick<ShellProps, "document" | "plan
 }
 
 /** What stands left and right of the tray on the desks that show it. */
-function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "probe-plan" }) {
+function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "probe-plan" | "readings" }) {
   const { host, document, planning, window, desk } = props;
   const partWords = texts.layOut.parts;
   return (
@@ -71,6 +73,7 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
       <aside className="left" aria-label={texts.layOut.parts.title}>
         {desk === "lay-out" && <Shelf document={document} />}
         {desk === "probe-plan" && <ProbeSettings document={document} />}
+        {desk === "readings" && props.readings.runs}
         <PartsInTray document={document} none={desk === "lay-out" ? partWords.none : partWords.noneElsewhere} />
         {desk === "lay-out" && (
           <StockShelf
@@ -90,6 +93,7 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
           {desk === "probe-plan" && (
             <ProbePanel document={document} draws={props.draws} planning={planning} window={window} onSaveTable={props.onSaveTable} />
           )}
+          {desk === "readings" && props.readings.table}
         </FaultGuard>
       </aside>
     </>

@@ -1,4 +1,5 @@
 import { createStore, type StoreApi } from "zustand/vanilla";
+import type { JudgedRun } from "../../shared-types/readings";
 import type { Pictured } from "./tray-picture";
 
 /** What the tray shows of the plan. */
@@ -19,9 +20,12 @@ export interface PointerReadout {
 }
 
 /** The places of work round the tray. */
-export type Desk = "lay-out" | "bench" | "probe-plan" | "sheets";
+export type Desk = "lay-out" | "bench" | "probe-plan" | "sheets" | "readings";
 
-export const DESKS: readonly Desk[] = ["lay-out", "bench", "probe-plan", "sheets"];
+export const DESKS: readonly Desk[] = ["lay-out", "bench", "probe-plan", "sheets", "readings"];
+
+/** Desks that are about the points. */
+const WITH_POINTS: ReadonlySet<Desk> = new Set(["probe-plan", "readings"]);
 
 /** Something to tell the user that stays until it is dismissed or answered. */
 export interface Message {
@@ -47,6 +51,10 @@ export interface WindowState {
   readonly shown: Shown;
   readonly readout: PointerReadout | null;
   readonly markedPoints: ReadonlySet<number>;
+  /** Id of the run of readings on show; null for the newest. */
+  readonly run: string | null;
+  /** The run whose residuals the tray shows, while its desk is open. */
+  readonly judged: JudgedRun | null;
   readonly messages: readonly Message[];
 }
 
@@ -74,6 +82,8 @@ export function createWindowStore(): WindowStore {
     shown: { picture: true, equipotentials: true, fieldLines: false, points: false, tags: true },
     readout: null,
     markedPoints: new Set(),
+    run: null,
+    judged: null,
     messages: [],
   }));
   const { getState, setState } = store;
@@ -94,7 +104,7 @@ export function createWindowStore(): WindowStore {
         desk,
         startPage: false,
         // The points come and go with their desk, unless the user has them shown elsewhere too.
-        shown: { ...shown, points: desk === "probe-plan" || (shown.points && from !== "probe-plan") },
+        shown: { ...shown, points: WITH_POINTS.has(desk) || (shown.points && !WITH_POINTS.has(from)) },
       })),
     tell: (message) => {
       const id = show(message);

@@ -5,6 +5,7 @@ import { documentTexts } from "./document-texts";
 import { fileTexts } from "./file-texts";
 import { layOutTexts } from "./lay-out-texts";
 import { probeTexts, sheetTexts } from "./paper-texts";
+import { readingsTexts } from "./readings-texts";
 import { readoutTexts } from "./readout-texts";
 import { stockTexts } from "./stock-texts";
 import { windowTexts } from "./window-texts";
@@ -19,6 +20,7 @@ export const texts = {
   files: fileTexts,
   bench: benchTexts,
   readouts: readoutTexts,
+  readings: readingsTexts,
   probe: probeTexts,
   sheets: sheetTexts,
   stock: stockTexts,

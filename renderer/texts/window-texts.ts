@@ -2,8 +2,8 @@ import type { Severity } from "../../shared-types/plan";
 
 /** What the window says round every desk: rail, top bar, bottom line, findings, keys, faults. */
 export const windowTexts = {
-  desks: { label: "Desks", "lay-out": "Lay out", bench: "Bench", "probe-plan": "Probe plan", sheets: "Sheets" },
-  sides: { "lay-out": "Part and tray", bench: "Bench", "probe-plan": "Probe plan", sheets: "Sheets" },
+  desks: { label: "Desks", "lay-out": "Lay out", bench: "Bench", "probe-plan": "Probe plan", sheets: "Sheets", readings: "Readings" },
+  sides: { "lay-out": "Part and tray", bench: "Bench", "probe-plan": "Probe plan", sheets: "Sheets", readings: "Readings" },
   tray: "Tray",
   startPage: "Start",
   startPageLong: "Start page: examples and recent setups",

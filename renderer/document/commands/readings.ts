@@ -75,18 +75,26 @@ function withReading(run: ReadingRun, reading: Reading): ReadingRun {
   return { ...run, readings };
 }
 
+const holds = (setup: Setup, id: string, reading: Reading): boolean =>
+  runsOf(setup)
+    .find((run) => run.id === id)
+    ?.readings.some((one) => samePlace(one, reading) && one.volts === reading.volts && one.n === reading.n) ?? false;
+
 /** @returns one reading entered, or entered anew. */
 export const enterReading = (id: string, reading: Reading): Edit => ({
   name: "readings-enter",
   label: words.enter(reading.n),
-  apply: (setup) => changed(setup, id, (run) => withReading(run, reading)),
+  apply: (setup) => (holds(setup, id, reading) ? setup : changed(setup, id, (run) => withReading(run, reading))),
 });
 
 /** @returns the reading at a place taken back. */
 export const clearReading = (id: string, place: Pick<Reading, "n" | "xMm" | "yMm">): Edit => ({
   name: "readings-clear",
   label: words.clear(place.n),
-  apply: (setup) => changed(setup, id, (run) => ({ ...run, readings: run.readings.filter((one) => !samePlace(one, place)) })),
+  apply: (setup) =>
+    runsOf(setup).some((run) => run.id === id && run.readings.some((one) => samePlace(one, place)))
+      ? changed(setup, id, (run) => ({ ...run, readings: run.readings.filter((one) => !samePlace(one, place)) }))
+      : setup,
 });
 
 /** @returns readings and found places of a table taken over, as one step. */

@@ -85,10 +85,10 @@ function rowOutcome(row: TextRow, columns: ReadonlyMap<Column, number>, points: 
 }
 
 /**
- * @param points the plan's points in the order of their numbers.
+ * @param points the plan's points in the order of their numbers. @param from the index of the point that a table of volts alone begins at.
  * @returns what could be read, and each row that could not with its line and the reason; never throws.
  */
-export function readTable(text: string, points: readonly ProbePoint[]): ReadTable {
+export function readTable(text: string, points: readonly ProbePoint[], from = 0): ReadTable {
   const delimiter = delimiterOf(text.replace(/^\uFEFF/, ""));
   const rows = rowsOf(text.replace(/^\uFEFF/, ""), delimiter);
   const readings: Reading[] = [];
@@ -110,7 +110,7 @@ export function readTable(text: string, points: readonly ProbePoint[]): ReadTabl
     const columns = headed ?? (plain === undefined ? null : new Map(plain.map((column, index): [Column, number] => [column, index])));
     // More cells than the header has: a decimal comma between commas, most often.
     const tooMany = headed !== null && row.cells.slice(rows[0].cells.length).some((cell) => cell.trim() !== "");
-    const outcome = columns === null || tooMany ? { fault: "columns" as const } : rowOutcome(row, columns, points, turn);
+    const outcome = columns === null || tooMany ? { fault: "columns" as const } : rowOutcome(row, columns, points, from + turn);
     if (outcome === "blank") blank++;
     else if ("fault" in outcome) wrongRow(row, outcome.fault);
     else if ("found" in outcome) found.push(outcome.found);

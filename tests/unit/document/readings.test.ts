@@ -43,6 +43,15 @@ it("readings keep the order in which they were taken, also when one is entered a
   expect(runsOf(document.getState().setup)[0].readings.map(({ n }) => n)).toEqual([5, 2, 9]);
 });
 
+it("the same reading entered twice is one step", () => {
+  const document = withRun();
+  document.run(enterReading("run-1", reading(3, 1.2)));
+  const steps = document.getState().past.length;
+  document.run(enterReading("run-1", reading(3, 1.2)));
+  document.run(clearReading("run-1", reading(4, 0)));
+  expect(document.getState().past.length).toBe(steps);
+});
+
 it("a table is taken as one step, found places behind those that are there", () => {
   const document = withRun();
   document.run(takeReadings("run-1", [reading(1, 1), reading(2, 2)], [{ volts: 3, xMm: 1, yMm: 2 }]));
