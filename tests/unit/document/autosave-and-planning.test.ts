@@ -120,11 +120,12 @@ describe("the plan on screen", () => {
 
   it("gets its whole bands after the print plan, and those of an older plan are let go", async () => {
     const document = openDocument();
-    const { asked, source, settled } = handSource();
+    const { asked, source, settled, planFor } = handSource();
     const probing: ProbePlan = { spanV: [0, 6], levels: [], checks: [] };
     const planWith = (setupId: string) => ({ ok: true, plan: { setupId, quality: "print", probing } as unknown as Plan }) as const;
     const told: ((whole: ProbePlan | null) => void)[] = [];
     const planning = createPlanning(document, { ...source, bands: () => new Promise((tell) => told.push(tell)) }, handClock().later);
+    await firstLook(asked, settled, planFor);
     asked[0]?.answer(planWith("first"));
     await settled();
     expect(planning.getState().bandsPending).toBe(true);
