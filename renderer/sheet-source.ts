@@ -68,6 +68,8 @@ export async function createSheetSource(): Promise<SheetSource> {
     },
     pdf: async (setup, plan, choice, { onPage, signal }) => {
       const made = pack(setup, plan, choice);
+      await windowsTurn();
+      if (signal.aborted) return null;
       const steps = packPdfSteps(made, { regular, bold }, today().iso);
       let turnBegan = performance.now();
       for (;;) {

@@ -90,6 +90,7 @@ for (let run = 0; run < RUNS; run++) {
   await page.getByRole("button", { name: "Everything", exact: true }).click();
   await page.locator("figcaption").last().waitFor();
   await page.keyboard.press("Control+1");
+  await page.locator(".tray-surface canvas").first().waitFor();
   for (const kind of ["example", "large"]) {
     writeFileSync(files.example, JSON.stringify({ ...example, title: `Example ${run}` }));
     results[kind].push(await pack(page, files[kind]));
