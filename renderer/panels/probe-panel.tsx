@@ -12,6 +12,7 @@ import { tried } from "./field-surroundings";
 import { NumberField } from "./number-field";
 import { CausesCard } from "./tolerance/causes-card";
 import { DrawsCard } from "./tolerance/draws-card";
+import { isFlat } from "./tolerance/flat-place";
 import type { WindowStore } from "./window-state";
 
 const words = texts.probe;
@@ -52,11 +53,13 @@ const decimalsOf = (digitVolts: number): number => Math.max(0, Math.ceil(-Math.l
 const PointRow = memo(function PointRow(props: {
   readonly point: ProbePoint;
   readonly decimals: number;
+  /** A misplaced probe goes unseen here. */
+  readonly flat: boolean;
   /** The one stop of the Tab key in the list. */
   readonly stop: boolean;
   readonly onMark: (n: number | null) => void;
 }) {
-  const { point, decimals, stop, onMark } = props;
+  const { point, decimals, flat, stop, onMark } = props;
   const { n } = point;
   return (
     <tr onPointerEnter={() => onMark(n)} onPointerLeave={() => onMark(null)}>
@@ -69,7 +72,14 @@ const PointRow = memo(function PointRow(props: {
       <td>{trimmed(point.yMm, 1)}</td>
       <td>{fixed(point.volts, decimals)}</td>
       <td>{fixed(point.bandV, decimals)}</td>
-      <td>{fixed(point.voltsPerMm * 1000, 0)}</td>
+      <td>
+        {flat && (
+          <span className="flat" title={words.flatLong}>
+            {words.flat}
+          </span>
+        )}{" "}
+        {fixed(point.voltsPerMm * 1000, 0)}
+      </td>
     </tr>
   );
 });
@@ -151,7 +161,14 @@ export function ProbePanel({ document, draws, planning, window, onSaveTable }: P
                 </th>
               </tr>
               {points.map((point) => (
-                <PointRow key={point.n} point={point} decimals={decimals} stop={point.n === stop} onMark={mark} />
+                <PointRow
+                  key={point.n}
+                  point={point}
+                  decimals={decimals}
+                  flat={isFlat(point, plan.bench.meter.digitVolts)}
+                  stop={point.n === stop}
+                  onMark={mark}
+                />
               ))}
             </tbody>
           ))}

@@ -26,6 +26,8 @@ export const probeTexts = {
     "Change of the reading for 1 mm of misplacement",
   ],
   saveTable: "Save as CSV…",
+  flat: "flat",
+  flatLong: "A probe 1 mm off does not change the last digit here: the point checks a potential, not a place",
   draws: {
     title: "Check of the bands",
     purpose:

@@ -93,3 +93,9 @@ test("drawn trays check the bands point by point, and drawing can be stopped", a
   await expect(card.getByRole("listitem")).toHaveCount(51);
   await expect(card.getByRole("listitem").first()).toContainText(/± [\d.]+ V, drawn ± [\d.]+ V/);
 });
+
+test("points at which a misplaced probe goes unseen are told as flat: those on and in the loose ring, no others", async ({ page }) => {
+  await expect(page.locator(rows).first()).toBeVisible();
+  await expect(page.locator(`${rows}:has(.flat)`)).toHaveCount(2);
+  await expect(page.locator(rows).last().locator(".flat")).toHaveText("flat");
+});
