@@ -1,5 +1,5 @@
 import { mkdtempSync, rmSync } from "node:fs";
-import { tmpdir } from "node:os";
+import { availableParallelism, loadavg, tmpdir } from "node:os";
 import { join } from "node:path";
 import { chromium } from "playwright";
 import { findBrowser, inRoot } from "../../build-resources/steps.mjs";
@@ -81,6 +81,8 @@ function dragInPage({ x, y, frames }) {
   });
 }
 
+/** How many processes wanted to run before the measure began: beyond the number of cores the frames wait for others. */
+const loadBefore = tenths(loadavg()[0]);
 const store = mkdtempSync(join(tmpdir(), "fieldtray-speed-"));
 const server = await serveWindow(process.env.WINDOW_FOLDER ?? inRoot("dist", "renderer"), store, 0);
 const browser = await chromium.launch({
@@ -156,6 +158,7 @@ const report = {
   /** Time that the window's main thread itself worked in a frame; unlike the frames it does not grow on a busy machine. */
   cpuMsPerFrame: Object.fromEntries(Object.entries(cpuAfter).map(([name, ms]) => [name, tenths((ms - cpuBefore[name]) / FRAMES)])),
   dragged: undo,
+  machine: { cores: availableParallelism(), loadBefore },
   limits: LIMITS,
 };
 console.log(JSON.stringify(report, null, 2));
