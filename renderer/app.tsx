@@ -15,6 +15,7 @@ import { canvasPicture } from "./canvas/canvas-picture";
 import { DocumentTray } from "./canvas/document-tray";
 import { canvasTheme } from "./canvas/theme";
 import { createTrayView } from "./canvas/view";
+import { diagnoseAside } from "./diagnosis-source";
 import { createCloserLook } from "./document/closer-look";
 import { createDocument } from "./document/document";
 import { createPlanning } from "./document/planning";
@@ -64,7 +65,14 @@ async function planAside(setup: Setup): Promise<PlanOutcome | null> {
 }
 
 /** What the Readings desk knows of the engine. */
-const READINGS_CHECK: ReadingsCheck = { pointsOf, judge: judgeRun, readTable, readingsCsv, foundPlacesCsv };
+const READINGS_CHECK: ReadingsCheck = {
+  pointsOf,
+  judge: judgeRun,
+  readTable,
+  readingsCsv,
+  foundPlacesCsv,
+  diagnose: (...asked) => diagnoseAside(() => createFieldClient(startWorker), ...asked),
+};
 
 /** The sheets and jsPDF are loaded when they are first asked for. */
 const loadSheets = async (): Promise<SheetSource> => (await import("./sheet-source")).createSheetSource();

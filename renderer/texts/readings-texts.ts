@@ -1,4 +1,4 @@
-import type { RowFault, Verdict, VerdictReason } from "../../shared-types/readings";
+import type { Clearness, RowFault, Verdict, VerdictReason } from "../../shared-types/readings";
 
 const points = (count: number): string => `${count} point${count === 1 ? "" : "s"}`;
 
@@ -45,6 +45,37 @@ export const readingsTexts = {
     lessThan: (number: string): string => `under ${number}`,
     worst: "Worst",
     worstOf: (n: number | null, bands: string): string => `${n === null ? "a found place" : `point ${n}`}, ${bands} bands off`,
+  },
+  diagnosis: {
+    title: "Likely cause",
+    hint: "Tries one fault at a time and compares how well each explains the readings: χ² with a price for every value fitted and every choice made (Schwarz 1978; Chen and Chen 2008).",
+    look: "Look for the cause",
+    looking: "Solving the tray with each fault",
+    stop: "Stop",
+    failed: (reason: string): string => `No cause could be looked for: ${reason}`,
+    tooFew: (used: number): string => `${used} reading${used === 1 ? " tells" : "s tell"} too little.`,
+    plusMinus: (value: string, uncertainty: string): string => `${value} ± ${uncertainty}`,
+    none: "No fault seen.",
+    scale: (percent: string): string => `All readings are off by one share, ${percent} %: is the supply set as planned?`,
+    electrode: (name: string, volts: string): string =>
+      `The water at ${name} is ${volts} V off: a dirty or polarised surface, or a poor clip?`,
+    tilt: (axis: "x" | "y", degrees: string): string => `The tray is tilted further along ${axis}, by ${degrees}°.`,
+    displaced: (name: string, dx: string, dy: string): string => `${name} lies off its place by ${dx} mm along x and ${dy} mm along y.`,
+    drift: (volts: string): string =>
+      `Readings drifted while they were taken: ${volts} V lost at the electrodes from the first to the last.`,
+    swappedPoints: (a: number, b: number): string => `Readings ${a} and ${b} stand in each other's place.`,
+    wrongReading: (n: number, volts: string): string => `Reading ${n} alone is off, by ${volts} V.`,
+    swappedDigits: (n: number, volts: string): string => `Reading ${n} alone is off: two digits changed over? ${volts} V would fit.`,
+    inseparable: (others: readonly string[]): string => `No reading at these points tells it from: ${others.join(" ")}`,
+    runnerUp: (other: string, clearness: string): string => `Next best, ${clearness}: ${other}`,
+    clearness: {
+      hardly: "hardly worse",
+      fairly: "fairly worse",
+      clearly: "clearly worse",
+      "very-clearly": "very clearly worse",
+    } satisfies Readonly<Record<Clearness, string>>,
+    leavesMore: "It leaves more than chance does: more than one thing may be wrong.",
+    untried: (count: number): string => `${count} fault${count === 1 ? "" : "s"} could not be tried, as the tray with it has no field.`,
   },
   table: {
     title: "At the points",

@@ -73,6 +73,19 @@ test("a column of volts is pasted on from where it is pasted", async ({ page }) 
   await expect(reading(page, 1)).toHaveValue("");
 });
 
+test("the likely cause of a supply that is off is found, with its size", async ({ page }) => {
+  const volts = await expectedVolts(page);
+  await paste(page, 1, volts.map((one) => (0.92 * Number(one)).toFixed(2)).join("\n"));
+  const cause = page.getByRole("region", { name: "Likely cause" });
+  await cause.getByRole("button", { name: "Look for the cause" }).click();
+  await expect(cause).toContainText(/off by one share, −[78]\.\d ±/, { timeout: 60_000 });
+  await expect(cause).toContainText("Next best");
+  if (process.env.PICTURES_FOLDER !== undefined) await page.screenshot({ path: `${process.env.PICTURES_FOLDER}/cause.png` });
+  await reading(page, 1).fill("0.8");
+  await reading(page, 1).press("Enter");
+  await expect(cause).not.toContainText("Next best");
+});
+
 test("a found place is told its distance from the predicted line", async ({ page }) => {
   const found = page.getByRole("region", { name: "Found places" });
   await found.getByLabel("Looked for").selectOption({ label: "3 V" });

@@ -1,5 +1,5 @@
 import type { Plan, ProbePlan, ProbePoint } from "../../../shared-types/plan";
-import type { JudgedRun, ReadingRun, ReadTable } from "../../../shared-types/readings";
+import type { Diagnosis, JudgedRun, ReadingRun, ReadTable } from "../../../shared-types/readings";
 import type { Setup } from "../../../shared-types/setup";
 import { runsOf } from "../../document/commands/readings";
 
@@ -11,6 +11,14 @@ export interface ReadingsCheck {
   readonly readTable: (text: string, points: readonly ProbePoint[], from?: number) => ReadTable;
   readonly readingsCsv: (run: JudgedRun) => string;
   readonly foundPlacesCsv: (run: JudgedRun) => string;
+  /** Which fault explains a run; null when it was stopped. */
+  readonly diagnose: (
+    setup: Setup,
+    plan: Plan,
+    run: JudgedRun,
+    onProgress: (share: number) => void,
+    signal: AbortSignal,
+  ) => Promise<Diagnosis | null>;
 }
 
 /** @returns the run on show: the chosen one, else the newest; null where there is none. */

@@ -8,6 +8,7 @@ import type { Document } from "../../document/document";
 import type { Planning } from "../../document/planning";
 import { texts } from "../../texts/texts";
 import type { WindowStore } from "../window-state";
+import { DiagnosisCard } from "./diagnosis-card";
 import { FoundCard } from "./found-card";
 import { ReadingRow } from "./reading-row";
 import { decimalsOf, type ReadingsCheck, shownRun } from "./readings-check";
@@ -102,6 +103,7 @@ function Readings({ host, document, window, check, plan }: ReadingsDeskProps & {
   return (
     <>
       <VerdictCard judged={judged} />
+      <DiagnosisCard key={run?.id ?? ""} setup={setup} plan={plan} judged={judged} check={check} />
       <section className="card points readings-table" aria-label={words.title}>
         <h2>{words.title}</h2>
         <div className="choices">
