@@ -84,6 +84,8 @@ for (let run = 0; run < RUNS; run++) {
     Object.assign(globalThis, { showOpenFilePicker: undefined, showSaveFilePicker: undefined });
   });
   const page = context.pages()[0] ?? (await context.newPage());
+  // From the start, or the first question for a file may come before the page's questions are caught.
+  page.on("filechooser", () => {});
   await page.goto(server.address);
   await page.waitForFunction(() => /Ω/.test(document.querySelector(".ledger")?.textContent ?? ""));
   await page.keyboard.press("Control+4");
