@@ -19,6 +19,7 @@ import { SettingsCard } from "./settings-card";
 import { Shelf } from "./shelf";
 import { StockShelf } from "./stock/stock-shelf";
 import type { StockKeeper } from "./stock/use-stock";
+import { StatedTolerances } from "./tolerance/stated-tolerances";
 import { Rail, TopBar } from "./top-bar";
 import { SupplyCard, TrayCard, WaterCard } from "./tray-card";
 import type { WindowStore } from "./window-state";
@@ -73,6 +74,7 @@ function TrayDesk(props: ShellProps & { readonly desk: "lay-out" | "bench" | "pr
       <aside className="left" aria-label={texts.layOut.parts.title}>
         {desk === "lay-out" && <Shelf document={document} />}
         {desk === "probe-plan" && <ProbeSettings document={document} />}
+        {desk === "probe-plan" && <StatedTolerances document={document} />}
         {desk === "readings" && props.readings.runs}
         <PartsInTray document={document} none={desk === "lay-out" ? partWords.none : partWords.noneElsewhere} />
         {desk === "lay-out" && (

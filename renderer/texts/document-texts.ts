@@ -50,6 +50,7 @@ export const documentTexts = {
     surfaces: "change electrode surfaces",
     meter: "change meter",
     probing: "change probe plan",
+    tolerances: "change tolerances",
     session: "change session",
     title: "change title",
     notes: "change notes",

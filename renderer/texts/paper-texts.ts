@@ -26,6 +26,18 @@ export const probeTexts = {
     "Change of the reading for 1 mm of misplacement",
   ],
   saveTable: "Save as CSV…",
+  stated: {
+    title: "Tolerances, each ±",
+    keys: {
+      supplyPercent: "Supply",
+      partPlacementMm: "Place of parts",
+      partTurnDeg: "Turn of parts",
+      depthMm: "Depth",
+      tiltDeg: "Tilt",
+      conductivityPercent: "Conductivity",
+      temperatureK: "Temperature",
+    },
+  },
   flat: "flat",
   flatLong: "A probe 1 mm off does not change the last digit here: the point checks a potential, not a place",
   draws: {

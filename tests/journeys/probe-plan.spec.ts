@@ -99,3 +99,16 @@ test("points at which a misplaced probe goes unseen are told as flat: those on a
   await expect(page.locator(`${rows}:has(.flat)`)).toHaveCount(2);
   await expect(page.locator(rows).last().locator(".flat")).toHaveText("flat");
 });
+
+test("a looser tolerance of the parts widens the bands and comes first among the causes; undo brings them back", async ({ page }) => {
+  const card = page.getByRole("region", { name: "What the bands are made of" });
+  const first = card.locator("ul").first().locator("li").first();
+  await expect(first).toBeVisible({ timeout: 60_000 });
+  const before = await first.textContent();
+  const field = page.getByLabel("Place of parts");
+  await field.fill("3");
+  await field.press("Enter");
+  await expect(first).toContainText(/^3 mm of place of /, { timeout: 60_000 });
+  await field.press("Control+z");
+  await expect(first).toHaveText(before ?? "", { timeout: 60_000 });
+});

@@ -1,5 +1,6 @@
 import type { RemedyEdit } from "../../../shared-types/plan";
 import type { Interface, Meter, Probing, Session, Setup, Shape, Slab, Supply, Tray, Water } from "../../../shared-types/setup";
+import { DEFAULT_TOLERANCES, type Tolerances } from "../../../shared-types/setup";
 import { texts } from "../../texts/texts";
 import { type Edit, tidyMm } from "../edit";
 import { freshId } from "./parts";
@@ -48,6 +49,13 @@ export const changeProbing = (change: Partial<Probing>): Edit => ({
   name: "probing",
   label: words.probing,
   apply: (setup) => ({ ...setup, probing: { ...setup.probing, ...change } }),
+});
+
+/** @returns the stated tolerances changed in these keys; a setup that states none starts from the defaults. */
+export const changeTolerances = (change: Partial<Tolerances>): Edit => ({
+  name: "tolerances",
+  label: words.tolerances,
+  apply: (setup) => ({ ...setup, tolerances: { ...(setup.tolerances ?? DEFAULT_TOLERANCES), ...change } }),
 });
 
 /** @returns the session changed in these keys. */
