@@ -3,6 +3,7 @@ import type { Setup } from "../../shared-types/setup";
 import { traySizeMm } from "../engine/geometry/tray-outline";
 import { benchList } from "./bench-list";
 import { calibrationItems } from "./calibration";
+import { certificates, certifiedRuns } from "./certificate";
 import { checklist } from "./checklist";
 import { type ContentsEntry, cover } from "./cover";
 import { fieldKeyPages } from "./field-key";
@@ -49,6 +50,12 @@ const tabled = (title: string, { paper: [widthMm, heightMm] }: SheetInput, pages
 
 const flowed = (title: string, input: SheetInput, blocks: readonly Block[]): BarePage[] =>
   tabled(title, input, flowPages(blocks, upright(input), input.fonts));
+
+/** In a pack with other sheets the certificate waits until something was read. */
+function certificatePages(input: SheetInput): BarePage[] {
+  if (input.options.sheets.length > 1 && certifiedRuns(input.setup).length === 0) return [];
+  return flowed("Tray certificate", input, certificates(input.setup, input.plan));
+}
 
 /** A 1:1 sheet of the tray, on as many tiles as it needs. */
 const tiled = (title: string, { setup, plan, fonts, paper, frame, options }: SheetInput, answers: boolean): BarePage[] => {
@@ -102,6 +109,7 @@ export const SHEETS = {
     title: "Low-voltage checklist",
     pages: (input) => flowed("Low-voltage checklist", input, checklist(input.setup, input.plan)),
   },
+  certificate: { title: "Tray certificate", pages: certificatePages },
   "bench-list": { title: "Bench list", pages: (input) => flowed("Bench list", input, benchList(input.setup, input.plan)) },
   calibration: {
     title: "Printer calibration",

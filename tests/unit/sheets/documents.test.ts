@@ -34,6 +34,52 @@ const direct = (): Setup =>
     session: { ...setup.session, minutes: 60, trays: 4 },
   });
 
+describe("the tray certificate", () => {
+  const points = () => [...plan.probing.levels.flatMap((level) => level.points), ...plan.probing.checks];
+  const withRun = (offBands: number): Setup => ({
+    ...setup,
+    readings: {
+      version: 1,
+      runs: [
+        {
+          id: "r1",
+          name: "Tray 1",
+          takenBy: "Group 4",
+          takenOn: "2026-12-01",
+          setupId: plan.setupId,
+          readings: points().map(({ n, xMm, yMm, volts, bandV }) => ({ n, xMm, yMm, volts: volts + (n === 7 ? offBands * bandV : 0) })),
+          found: [],
+        },
+      ],
+    },
+  });
+
+  it("passes a tray that reads as predicted, with every reading, who took it, and the setup that it belongs to", () => {
+    const words = flat(pagesOf(withRun(0), plan, ["certificate"]).join(" "));
+    for (const said of [
+      "Tray certificate: Tray 1",
+      "PASS: every value lies within its band",
+      "Read by Group 4 on 2026-12-01",
+      plan.setupId,
+      "Signature",
+    ])
+      expect(words).toContain(said);
+    expect(words.match(/ within /g)?.length).toBeGreaterThanOrEqual(points().length);
+  });
+
+  it("fails a tray whose point 7 is three bands off, and says which point and how far", () => {
+    const words = flat(pagesOf(withRun(3), plan, ["certificate"]).join(" "));
+    expect(words).toContain("FAIL");
+    expect(words).toContain("The farthest is point 7, 3.00 half-widths of its band off.");
+    expect(words).toMatch(/\b7 [\d.]+ [\d.]+ [\d.]+ [\d.]+ [\d.]+ \+[\d.]+ outside/);
+  });
+
+  it("stays out of a pack while nothing was read, and says so when asked for alone", () => {
+    expect(packOf(setup, plan, { sheets: ["bench-list", "certificate"] }).pages.every(({ sheet }) => sheet === "bench-list")).toBe(true);
+    expect(flat(pagesOf(setup, plan, ["certificate"]).join(" "))).toContain("No readings have been kept");
+  });
+});
+
 describe("the low-voltage checklist", () => {
   it("leaves the decision to local codes and a competent person, and belongs to its setup alone", () => {
     const words = flat(pagesOf(setup, plan, ["checklist"]).join(" "));
@@ -117,7 +163,8 @@ describe("the cover", () => {
   it("lists each sheet with the pages that carry its title", () => {
     const pack = packOf(setup, plan, { sheets: SHEET_NAMES });
     const words = flat(pagesOf(setup, plan, SHEET_NAMES)[0]);
-    for (const name of SHEET_NAMES.filter((one) => one !== "cover")) {
+    // The certificate is left out of a pack while nothing was read.
+    for (const name of SHEET_NAMES.filter((one) => one !== "cover" && one !== "certificate")) {
       const first = 1 + pack.pages.findIndex(({ sheet }) => sheet === name);
       const last = 1 + pack.pages.findLastIndex(({ sheet }) => sheet === name);
       expect(words).toContain(`${SHEETS[name].title} ${first === last ? `page ${first}` : `pages ${first} to ${last}`}`);
